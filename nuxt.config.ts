@@ -1,0 +1,57 @@
+// A build folder of one's own lets two builds run side by side (tests beside development).
+const buildDir = process.env.TILTYARD_BUILD_DIR
+
+export default defineNuxtConfig({
+  modules: ['@nuxtjs/tailwindcss', '@pinia/nuxt', 'nuxt-auth-utils', '@nuxt/icon', '@nuxt/eslint'],
+  // Folders sit at the root, as DEVELOPERS.md draws them.
+  srcDir: '.',
+  ...(buildDir ? { buildDir: `${buildDir}/nuxt` } : {}),
+  compatibilityDate: '2026-11-01',
+  devtools: { enabled: false },
+  telemetry: false,
+  ssr: true,
+  css: ['~/assets/css/main.css'],
+  components: [{ path: '~/components', pathPrefix: true }],
+  imports: { dirs: ['stores', 'composables'] },
+  app: {
+    head: {
+      htmlAttrs: { lang: 'en' },
+      title: 'Tiltyard',
+      meta: [{ name: 'viewport', content: 'width=device-width, initial-scale=1' }],
+      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/favicon.svg' }],
+    },
+  },
+  icon: {
+    // Drawn on the page from the bundle: no request ever leaves for an icon.
+    provider: 'none',
+    serverBundle: false,
+    clientBundle: { scan: true, sizeLimitKb: 64 },
+    fallbackToApi: false,
+  },
+  auth: {
+    // The sealed cookie carries only a session id; server/utils/session.ts reads the row every time.
+    loadStrategy: 'none',
+  },
+  runtimeConfig: {
+    // Each is set at run time by NUXT_…; scripts/start.mjs fills them from the settings in README.md.
+    session: { password: '', name: 'tiltyard', maxAge: 60 * 60 * 24 * 30, cookie: { sameSite: 'lax', secure: false } },
+    dataDir: '.data',
+    baseUrl: '',
+    demo: 'on',
+    mailUrl: '',
+    mailFrom: 'Tiltyard <board@tiltyard.invalid>',
+    trustProxy: 'off',
+  },
+  nitro: {
+    preset: 'node-server',
+    experimental: { websocket: true },
+    ...(buildDir ? { output: { dir: `${buildDir}/output` } } : {}),
+    externals: { external: ['sequelize', 'sqlite3'] },
+    serverAssets: [{ baseName: 'migrations', dir: './migrations' }],
+    typescript: { strict: true },
+  },
+  typescript: { strict: true, tsConfig: { include: ['../tests/**/*', '../scripts/**/*'] } },
+  tailwindcss: { cssPath: '~/assets/css/main.css', configPath: 'tailwind.config.ts', viewer: false },
+  eslint: { config: { stylistic: false } },
+  vite: { build: { target: 'es2022' } },
+})
