@@ -1,0 +1,108 @@
+import { AsyncLocalStorage } from 'node:async_hooks'
+import { mkdirSync } from 'node:fs'
+import { join } from 'node:path'
+import { Mutex } from 'async-mutex'
+import { QueryTypes, Sequelize, Transaction } from 'sequelize'
+import sqlite3 from 'sqlite3'
+
+/**
+ * The one connection to the one file. Everything that knows about sqlite3 is here, so that the pair
+ * sequelize/sqlite3 can be changed in one place.
+ */
+
+// Sequelize opens a connection per transaction and fires no hook for it on SQLite: what a connection must
+// always carry is set by the driver itself, on every open. They are per connection; WAL is kept in the file.
+const PRAGMAS = 'PRAGMA busy_timeout = 5000; PRAGMA foreign_keys = ON; PRAGMA synchronous = FULL;'
+
+type Opened = (problem: Error | null) => void
+
+class TunedDatabase extends sqlite3.Database {
+  constructor(file: string, mode: number, opened: Opened) {
+    super(file, mode, (problem) => {
+      if (problem) opened(problem)
+      else this.exec(PRAGMAS, opened)
+    })
+  }
+}
+
+// A query inside a transaction finds it here, so that none can slip outside by forgetting an option.
+const frames = new AsyncLocalStorage<Map<string, unknown>>()
+Sequelize.useCLS({
+  run: (task: (context: unknown) => unknown) => frames.run(new Map(), () => task(frames.getStore())),
+  bind: (task: unknown) => task,
+  get: (key: string) => frames.getStore()?.get(key),
+  set: (key: string, value: unknown) => frames.getStore()?.set(key, value),
+} as unknown as object)
+
+const writer = new Mutex()
+let current: Sequelize | null = null
+
+/** Opens `<dataDir>/tiltyard.sqlite`, making the folder and the file when they are missing. */
+export async function openDatabase(dataDir: string): Promise<Sequelize> {
+  mkdirSync(dataDir, { recursive: true })
+  const opened = new Sequelize({
+    dialect: 'sqlite',
+    dialectModule: { ...sqlite3, Database: TunedDatabase },
+    storage: join(dataDir, 'tiltyard.sqlite'),
+    logging: false,
+    transactionType: Transaction.TYPES.IMMEDIATE,
+    define: { timestamps: false, underscored: true },
+  })
+  await opened.query('PRAGMA journal_mode = WAL')
+  current = opened
+  return opened
+}
+
+/** The open database. @throws when nothing opened it yet: a mistake of ours, not of a person. */
+export function database(): Sequelize {
+  if (!current) throw new Error('The database is not open.')
+  return current
+}
+
+export async function closeDatabase(): Promise<void> {
+  const closing = current
+  current = null
+  await closing?.close()
+}
+
+/** True while the running call is inside `write`. */
+export function isWriting(): boolean {
+  return frames.getStore()?.get('transaction') !== undefined
+}
+
+/**
+ * Runs `task` as one transaction: all of it or none. Writers queue on one mutex in this process, so that none waits
+ * on a lock of SQLite's. A `write` within a `write` joins the outer one.
+ */
+export async function write<T>(task: () => Promise<T>): Promise<T> {
+  if (isWriting()) return task()
+  return writer.runExclusive(() => database().transaction(() => task()))
+}
+
+/** Runs `task` once the surrounding `write` is committed (at once when there is none); never after a rollback. */
+export function afterCommit(task: () => void): void {
+  const transaction = frames.getStore()?.get('transaction') as Transaction | undefined
+  if (transaction) transaction.afterCommit(() => task())
+  else task()
+}
+
+type Values = Record<string, string | number | null | readonly (string | number)[]>
+
+/** Rows of a SELECT with named parameters (`:name`). Never build SQL from what a person sent. */
+export async function rows<T extends object>(sql: string, values: Values = {}): Promise<T[]> {
+  return database().query<T>(sql, { replacements: values as Record<string, unknown>, type: QueryTypes.SELECT })
+}
+
+/** The first row of a SELECT, or null. */
+export async function row<T extends object>(sql: string, values: Values = {}): Promise<T | null> {
+  return (await rows<T>(sql, values))[0] ?? null
+}
+
+/** Runs an INSERT, UPDATE or DELETE with named parameters; answers how many rows it changed. */
+export async function run(sql: string, values: Values = {}): Promise<number> {
+  const [, changes] = await database().query(sql, {
+    replacements: values as Record<string, unknown>,
+    type: QueryTypes.UPDATE,
+  })
+  return changes
+}

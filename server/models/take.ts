@@ -1,0 +1,55 @@
+import { DataTypes, Model } from 'sequelize'
+import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
+import type { Claim } from '~/utils/contracts/production'
+import type { TakeSketch } from '~/utils/contracts/take'
+import type { CheckResult, Key } from '~/utils/motion/types'
+
+/** A numbered, immutable posting of a spacing list, with the answer that the judge gave it. */
+export class Take extends Model<InferAttributes<Take>, InferCreationAttributes<Take>> {
+  declare id: string
+  declare clientId: string
+  declare shotId: string
+  declare number: number
+  declare keys: Key[]
+  declare measure: Claim['measure']
+  declare unit: string
+  declare slop: number
+  declare tolerance: number
+  declare fps: number
+  declare claim: Claim
+  declare note: string
+  declare personId: string
+  declare createdAt: string
+  declare withdrawnAt: CreationOptional<string | null>
+  declare answer: CheckResult
+  declare verdict: CheckResult['verdict']
+  declare judgeVersion: string
+  declare sketch: TakeSketch
+}
+
+export function initTake(sequelize: Sequelize): void {
+  Take.init(
+    {
+      id: { type: DataTypes.TEXT, primaryKey: true },
+      clientId: { type: DataTypes.TEXT, allowNull: false },
+      shotId: { type: DataTypes.TEXT, allowNull: false },
+      number: { type: DataTypes.INTEGER, allowNull: false },
+      keys: { type: DataTypes.JSON, allowNull: false },
+      measure: { type: DataTypes.TEXT, allowNull: false },
+      unit: { type: DataTypes.TEXT, allowNull: false },
+      slop: { type: DataTypes.REAL, allowNull: false },
+      tolerance: { type: DataTypes.REAL, allowNull: false },
+      fps: { type: DataTypes.REAL, allowNull: false },
+      claim: { type: DataTypes.JSON, allowNull: false },
+      note: { type: DataTypes.TEXT, allowNull: false },
+      personId: { type: DataTypes.TEXT, allowNull: false },
+      createdAt: { type: DataTypes.TEXT, allowNull: false },
+      withdrawnAt: { type: DataTypes.TEXT, allowNull: true },
+      answer: { type: DataTypes.JSON, allowNull: false },
+      verdict: { type: DataTypes.TEXT, allowNull: false },
+      judgeVersion: { type: DataTypes.TEXT, allowNull: false },
+      sketch: { type: DataTypes.JSON, allowNull: false },
+    },
+    { sequelize, tableName: 'takes', modelName: 'Take' },
+  )
+}
