@@ -1,11 +1,14 @@
-// A build folder of one's own lets two builds run side by side (tests beside development).
+import { basename } from 'node:path'
+
+// A build folder of one's own lets two builds run side by side (tests beside development). The intermediate files stay
+// inside the checkout, where the packages they import are found.
 const buildDir = process.env.TILTYARD_BUILD_DIR
 
 export default defineNuxtConfig({
   modules: ['@nuxtjs/tailwindcss', '@pinia/nuxt', 'nuxt-auth-utils', '@nuxt/icon', '@nuxt/eslint'],
   // Folders sit at the root, as DEVELOPERS.md draws them.
   srcDir: '.',
-  ...(buildDir ? { buildDir: `${buildDir}/nuxt` } : {}),
+  ...(buildDir ? { buildDir: `.nuxt-${basename(buildDir)}` } : {}),
   compatibilityDate: '2026-11-01',
   devtools: { enabled: false },
   telemetry: false,
@@ -47,7 +50,7 @@ export default defineNuxtConfig({
     experimental: { websocket: true },
     ...(buildDir ? { output: { dir: `${buildDir}/output` } } : {}),
     externals: { external: ['sequelize', 'sqlite3'] },
-    serverAssets: [{ baseName: 'migrations', dir: './migrations' }],
+    serverAssets: [{ baseName: 'migrations', dir: './server/migrations' }],
     typescript: { strict: true },
   },
   typescript: { strict: true, tsConfig: { include: ['../tests/**/*', '../scripts/**/*'] } },
