@@ -1,0 +1,142 @@
+/** Which story is told, and whether the claimed law is the one to tell it under. */
+import { allowances } from './allowance'
+import { charge, pencil, plainFit, strain } from './hypotheses'
+import type { Care, Story } from './hypotheses'
+import { LAWS } from './laws/index'
+import { shiftedTimes } from './scan'
+import type { Series } from './series'
+import type { Law } from './types'
+
+/** What one drawing can cost a law at most, nats: beyond this it counts as a lone bad drawing, not as evidence against the law. */
+const MOST_PER_DRAWING = 7
+/** How much better another law must do, nats, before the claimed one is doubted (e⁸ is about three thousand to one). */
+const DOUBT = 8
+/** Misfit under which nobody would doubt the claimed law, whatever else fits. */
+const UNNOTICED = 0.5
+
+export interface Reading {
+  law: Law
+  /** Nats, free numbers charged. */
+  charge: number
+  /** Root mean square of offset over allowance on the drawings and times that the told story leaves. */
+  misfit: number
+  /** Share of the drawings that break. */
+  breaking: number
+  story: Story
+}
+
+/** True where a shift is worth telling: some drawing on its shorter side really breaks the line of the longer one. */
+export function shows(series: Series, story: Story, care: Care): boolean {
+  const { shift, fit } = story
+  if (!shift) return true
+  const early = fit.model.trace(series, fit.numbers, series.x, false).value
+  const late = fit.model.trace(series, fit.numbers, series.x.map(at => at - shift.by), false).value
+  const lateIsShort = series.n - shift.at <= shift.at
+  const allowed = allowances(lateIsShort ? early : late, care.slop, care.tolerance)
+  for (let i = lateIsShort ? shift.at : 0; i < (lateIsShort ? series.n : shift.at); i++) {
+    if (Math.abs((early[i] as number) - (late[i] as number)) > (allowed[i] as number)) return true
+  }
+  return false
+}
+
+/** The cheapest story that shows. */
+export function cheapest(series: Series, told: readonly Story[], care: Care, sigma: number): Story {
+  const ranked = [...told].sort((a, b) => charge(a, sigma, series.n) - charge(b, sigma, series.n))
+  return ranked.find(story => shows(series, story, care)) ?? (told[0] as Story)
+}
+
+function rootMean(strained: Float64Array, out: readonly number[]): number {
+  let sum = 0
+  let count = 0
+  for (let i = 0; i < strained.length; i++) {
+    if (out.includes(i)) continue
+    // Without slop a single bad drawing could be infinitely many allowances off; a thousand is bad enough for anyone.
+    sum += Math.min(1e3, strained[i] as number) ** 2
+    count++
+  }
+  return Math.sqrt(sum / Math.max(1, count))
+}
+
+function readingOf(series: Series, law: Law, story: Story, care: Care, cost: number): Reading {
+  const strained = strain(series, story.fit, care)
+  let breaking = 0
+  for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !story.out.includes(i)) breaking++
+  return {
+    law, story, charge: cost + 0.5 * LAWS[law].size * Math.log(series.n),
+    misfit: rootMean(strained, story.out), breaking: breaking / series.n,
+  }
+}
+
+export interface Choice {
+  claimed: Reading
+  others: Reading[]
+  /** The claimed law with nothing assumed. */
+  plain: Story
+  sigma: number
+}
+
+/** Fits every law that the measure can take and picks the claimed law's story. */
+export function weigh(series: Series, law: Law, laws: readonly Law[], told: readonly Story[], care: Care): Choice {
+  const others = laws.filter(other => other !== law).map((other) => {
+    const { fit } = plainFit(series, LAWS[other], care, 12)
+    return { law: other, story: { out: [], shift: null, fit, breaking: 0 } satisfies Story }
+  })
+  const sigma = pencil([...told, ...others.map(other => other.story)], series.n, care)
+  const story = cheapest(series, told, care, sigma)
+  return {
+    sigma,
+    plain: told[0] as Story,
+    claimed: readingOf(series, law, story, care, charge(story, sigma, series.n)),
+    others: others.map(other => readingOf(series, other.law, other.story, care, capped(series, other.story, sigma))),
+  }
+}
+
+function capped(series: Series, story: Story, sigma: number): number {
+  const times = shiftedTimes(series.x, story.shift)
+  let sum = 0
+  for (let i = 0; i < times.length; i++) {
+    const r = (series.y[i] as number) - (story.fit.trace.value[i] as number)
+    sum += Math.min(MOST_PER_DRAWING, r * r / (2 * sigma * sigma))
+  }
+  return sum
+}
+
+export type Opinion =
+  | { kind: 'law-holds' }
+  | { kind: 'too-short' }
+  | { kind: 'wrong-law', reads: Law | null }
+
+/** Keeps to the claimed law, doubts it, or says that the list can't tell. */
+export function opine(series: Series, choice: Choice, care: Care, range: number): Opinion {
+  const { claimed, others, sigma } = choice
+  const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
+  const limit = Math.max(2, Math.floor(series.n / 6))
+  const acceptable = claimed.story.breaking === 0 && claimed.story.out.length <= limit
+  const rivals = others.filter(fits).sort((a, b) => a.charge - b.charge)
+  const steady = others.find(other => other.law === 'steady')
+
+  // The claimed law only fits by not curving: what is there is even spacing, if the list is long enough to have shown anything else.
+  if (acceptable && steady && steady.misfit <= UNNOTICED && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
+    return range / 4 > Math.max(6 * sigma, care.slop) ? { kind: 'wrong-law', reads: 'steady' } : { kind: 'too-short' }
+  }
+  const [rival] = rivals
+  if (!acceptable) return { kind: 'wrong-law', reads: rival ? simplest(rivals, rival).law : null }
+  const spoiled = claimed.story.out.length > 0 || claimed.story.shift !== null || claimed.misfit > UNNOTICED
+  if (spoiled && rival && rival.charge + DOUBT < claimed.charge) return { kind: 'wrong-law', reads: simplest(rivals, rival).law }
+  return { kind: 'law-holds' }
+}
+
+/** Even spacing is also a fall without acceleration and a swing without curve: where it does as well, it has the name. */
+function simplest(rivals: readonly Reading[], best: Reading): Reading {
+  const steady = rivals.find(rival => rival.law === 'steady')
+  return steady && steady.misfit <= UNNOTICED && steady.charge <= best.charge + DOUBT ? steady : best
+}
+
+/** All laws, best first; even spacing first where a freer law does no better than a hair. */
+export function ranked(choice: Choice): Reading[] {
+  const all = [choice.claimed, ...choice.others].sort((a, b) => a.charge - b.charge)
+  const best = all[0]
+  if (!best) return []
+  const first = simplest(all, best)
+  return [first, ...all.filter(reading => reading !== first)]
+}

@@ -1,0 +1,77 @@
+/** Findings in words: one cause told once, the most telling first. */
+import { figure } from './bodies'
+import { LAW_WORDS } from './laws/index'
+import type { Scale } from './size'
+import type { Finding, JudgedKey, Law } from './types'
+
+/** "2.4°", "14 px". */
+export function measured(value: number, unit: string): string {
+  const places = Math.abs(value) >= 100 ? 0 : Math.abs(value) >= 1 ? 1 : 2
+  const text = Math.abs(value).toFixed(places)
+  return unit === 'deg' ? `${text}°` : `${text} ${unit}`
+}
+
+function frames(count: number): string {
+  const text = count.toFixed(1).replace(/\.0$/, '')
+  return text === '1' || count < 1 ? `${text} frame` : `${text} frames`
+}
+
+/** A lone drawing off the line. */
+export function misplacedFinding(key: JudgedKey, unit: string): Finding {
+  const offset = key.offset ?? 0
+  const worth = key.offsetFrames
+  const off = measured(offset, unit)
+  // Without a direction of travel there is no early or late, only off.
+  const text = worth === null || Math.abs(worth) < 0.05
+    ? `Frame ${key.frame} sits ${off} off the line.`
+    : `Frame ${key.frame} lands ${frames(Math.abs(worth))} ${worth > 0 ? 'early' : 'late'} (${off} ${worth > 0 ? 'past' : 'short of'} the line).`
+  return { kind: 'misplaced', frames: [key.frame], amount: offset, text }
+}
+
+export function backwardFinding(key: JudgedKey, step: number, unit: string): Finding {
+  return {
+    kind: 'backward', frames: [key.frame], amount: step,
+    text: `Frame ${key.frame} runs ${measured(step, unit)} backward, and this motion never turns.`,
+  }
+}
+
+/** `late` frames: positive for a drawing held, negative for one skipped. `before`: the drawings before it are the shorter side. */
+export function shiftFinding(key: JudgedKey, late: number, before: boolean): Finding {
+  const size = frames(Math.abs(late))
+  const held = late > 0
+  const rest = before
+    ? `against the rest, every drawing before it is ${size} ${held ? 'early' : 'late'}`
+    : `from there on every drawing is ${size} ${held ? 'late' : 'early'}`
+  return {
+    kind: held ? 'held' : 'skipped', frames: [key.frame], amount: Math.abs(late),
+    text: held ? `The drawing before frame ${key.frame} is held: ${rest}.` : `A drawing is skipped at frame ${key.frame}: ${rest}.`,
+  }
+}
+
+export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number): Finding {
+  const text = reads === null
+    ? `No law here explains this list; as ${LAW_WORDS[claimed]} it is ${figure(misfit)} times what would be noticed.`
+    : `This is not ${LAW_WORDS[claimed]}; it reads as ${LAW_WORDS[reads]}.`
+  return { kind: 'wrong-law', frames: [], amount: misfit, text }
+}
+
+export function wrongScaleFinding(scale: Scale, needed: number, used: number): Finding | null {
+  const { size, claimed } = scale
+  if (!size || claimed === null) return null
+  const interval = `${figure(size.value)} ${size.unit} (${figure(size.low)}–${figure(size.high)})`
+  const reads = size.unit === 'm' ? `Reads as ${interval}` : `Reads as gravity ${interval} at this scale`
+  return {
+    kind: 'wrong-scale', frames: [], amount: size.value / claimed,
+    text: `${reads}; ${figure(claimed)} ${size.unit} needs ${needed} frames, not ${used}.`,
+  }
+}
+
+/** What was found about the whole list comes first, then in order of how far off. */
+export function inOrder(findings: Finding[], keys: readonly JudgedKey[]): Finding[] {
+  const rank: Record<Finding['kind'], number> = { 'wrong-law': 0, 'held': 1, 'skipped': 1, 'wrong-scale': 2, 'backward': 3, 'misplaced': 4 }
+  const strain = (finding: Finding) => {
+    const key = keys.find(one => one.frame === finding.frames[0])
+    return key?.offset === null || key?.offset === undefined || !key.allowance ? 0 : Math.abs(key.offset) / key.allowance
+  }
+  return [...findings].sort((a, b) => rank[a.kind] - rank[b.kind] || strain(b) - strain(a))
+}

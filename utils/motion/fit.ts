@@ -1,0 +1,103 @@
+/** Least squares of one law to one list, with a weight per key and any shift of the keys' times. */
+import type { LawModel, Trace } from './laws/model'
+import { LEAST_LOG, MOST_LOG } from './laws/swinging'
+import type { Series } from './series'
+import { solve3 } from './solve'
+
+export interface Fit {
+  readonly model: LawModel
+  numbers: Float64Array
+  trace: Trace
+  /** Weighted sum of squared offsets. */
+  cost: number
+  /** Normal matrix JᵀWJ at the answer, `size` × `size`. */
+  normal: Float64Array
+  /** False where the search ran out of steps: the line is the best found, no more. */
+  converged: boolean
+}
+
+/** Keeps a search inside the range where the law means something; for linear laws nothing is held back. */
+function confine(model: LawModel, numbers: Float64Array): Float64Array {
+  if (!model.linear) numbers[0] = Math.min(MOST_LOG, Math.max(LEAST_LOG, numbers[0] as number))
+  return numbers
+}
+
+function costOf(trace: Trace, y: Float64Array, weights: Float64Array): number {
+  let sum = 0
+  for (let i = 0; i < y.length; i++) {
+    const r = (y[i] as number) - (trace.value[i] as number)
+    sum += (weights[i] as number) * r * r
+  }
+  return sum
+}
+
+/** JᵀWJ and JᵀWr. */
+function normalOf(trace: Trace, y: Float64Array, weights: Float64Array, size: number): { a: Float64Array, b: Float64Array } {
+  const a = new Float64Array(size * size)
+  const b = new Float64Array(size)
+  for (let p = 0; p < size; p++) {
+    const cp = trace.columns[p] as Float64Array
+    for (let i = 0; i < y.length; i++) {
+      b[p] = (b[p] as number) + (weights[i] as number) * (cp[i] as number) * ((y[i] as number) - (trace.value[i] as number))
+    }
+    for (let q = 0; q <= p; q++) {
+      const cq = trace.columns[q] as Float64Array
+      let sum = 0
+      for (let i = 0; i < y.length; i++) sum += (weights[i] as number) * (cp[i] as number) * (cq[i] as number)
+      a[size * p + q] = sum
+      a[size * q + p] = sum
+    }
+  }
+  return { a, b }
+}
+
+/**
+ * Levenberg–Marquardt from `from` (K. Levenberg, Quart. Appl. Math. 2 (1944) 164–168; D. W. Marquardt, SIAM J. 11 (1963) 431–441).
+ * `x` are the times to use (shifted ones for a list with a repeated drawing). Linear laws take one step. Never throws; always returns
+ * finite numbers when it was given finite ones.
+ */
+export function refine(
+  model: LawModel, series: Series, x: Float64Array, y: Float64Array, weights: Float64Array, from: Float64Array, steps: number,
+): Fit {
+  const size = model.size
+  let numbers = confine(model, from.slice())
+  let trace = model.trace(series, numbers, x, true)
+  let cost = costOf(trace, y, weights)
+  let { a, b } = normalOf(trace, y, weights, size)
+  let damping = model.linear ? 0 : 1e-4
+  let converged = false
+  for (let step = 0; step < steps && !converged; step++) {
+    let moved = false
+    for (let attempt = 0; attempt < 8; attempt++) {
+      const damped = a.slice()
+      for (let p = 0; p < size; p++) damped[size * p + p] = (damped[size * p + p] as number) * (1 + damping)
+      const move = solve3(damped, b, size)
+      if (!move) {
+        if (model.linear) break
+        damping = Math.max(1e-6, damping * 20)
+        continue
+      }
+      const next = confine(model, numbers.map((value, p) => value + (move[p] as number)))
+      const nextTrace = model.trace(series, next, x, true)
+      const nextCost = costOf(nextTrace, y, weights)
+      if (nextCost <= cost) {
+        converged = cost - nextCost <= 1e-9 * cost
+        numbers = next
+        trace = nextTrace
+        cost = nextCost
+        damping = damping < 1e-7 ? 0 : damping / 10
+        moved = true
+        break
+      }
+      if (nextCost - cost <= 1e-10 * cost) break
+      damping = Math.max(1e-5, damping * 8)
+    }
+    if (!moved) {
+      converged = true
+      break
+    }
+    ;({ a, b } = normalOf(trace, y, weights, size))
+    if (model.linear) converged = true
+  }
+  return { model, numbers, trace, cost, normal: a, converged }
+}

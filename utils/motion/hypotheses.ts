@@ -1,0 +1,175 @@
+/**
+ * What could have happened to a list under one law. Every story (nothing, some drawings misplaced, a drawing held or skipped) is fitted
+ * and charged for what it leaves unexplained and for what it had to assume; the cheapest one is told. Charges are in nats: a story that
+ * assumes one more thing must explain the list e^charge times better.
+ */
+import { allowances } from './allowance'
+import { refine } from './fit'
+import type { Fit } from './fit'
+import type { LawModel } from './laws/model'
+import { bestShifts, shiftedTimes, worstDrawings } from './scan'
+import type { Shift } from './scan'
+import type { Series } from './series'
+import { smoothed } from './smooth'
+
+/** Charge for saying that one particular drawing is off. */
+const MISPLACED_CHARGE = 5
+/** Charge for a held or skipped drawing, to which the choice of place among 2n is added. */
+const SHIFT_CHARGE = 3
+
+export interface Story {
+  /** Indexes of drawings set aside. */
+  out: number[]
+  shift: Shift | null
+  fit: Fit
+  /** Drawings, of those not set aside, that still break. */
+  breaking: number
+}
+
+export interface Care {
+  slop: number
+  tolerance: number
+  /** The spread that writing readings down to so many places leaves at least, reading units; above 0. */
+  least: number
+}
+
+const ALL_STEPS = 25
+
+function weightsWithout(n: number, out: readonly number[]): Float64Array {
+  const weights = new Float64Array(n).fill(1)
+  for (const i of out) weights[i] = 0
+  return weights
+}
+
+/** Offsets over allowance under a story, with the law's own gaps. */
+export function strain(series: Series, fit: Fit, care: Care): Float64Array {
+  const allowed = allowances(fit.trace.value, care.slop, care.tolerance)
+  return series.y.map((value, i) => {
+    const off = Math.abs(value - (fit.trace.value[i] as number))
+    const allowance = allowed[i] as number
+    return off === 0 ? 0 : allowance > 0 ? off / allowance : Number.MAX_VALUE
+  })
+}
+
+/** Tells a story; drawings that turn out not to break once the line is free of the others are put back. */
+function tell(series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care): Story {
+  const story = tellExactly(series, model, out, shift, from, care)
+  if (out.length < 2) return story
+  const strained = strain(series, story.fit, care)
+  const kept = out.filter(i => (strained[i] as number) > 1)
+  return kept.length === out.length ? story : tell(series, model, kept, shift, story.fit.numbers, care)
+}
+
+function tellExactly(
+  series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care,
+): Story {
+  const fit = refine(model, series, shiftedTimes(series.x, shift), series.y, weightsWithout(series.n, out), from, ALL_STEPS)
+  const strained = strain(series, fit, care)
+  let breaking = 0
+  for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !out.includes(i)) breaking++
+  return { out, shift, fit, breaking }
+}
+
+/** Sets drawings that still break aside, the worst for its leverage first, until none is left or more than `most` are out. */
+function extend(series: Series, story: Story, care: Care, most: number): Story {
+  let now = story
+  while (now.breaking > 0 && now.out.length < most) {
+    const [worst] = worstDrawings(now.fit, series.y, weightsWithout(series.n, now.out))
+    const key = worst?.[0]
+    if (key === undefined) break
+    const out = [...now.out, key].sort((a, b) => a - b)
+    now = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
+  }
+  return now
+}
+
+/** The exposures a hold or a skip could be: gap lengths that occur in the list, commonest first, at most three. */
+function exposures(series: Series): number[] {
+  const counts = new Map<number, number>()
+  for (let i = 1; i < series.n; i++) {
+    const frames = Math.round(((series.x[i] as number) - (series.x[i - 1] as number)) * series.spanFrames)
+    counts.set(frames, (counts.get(frames) ?? 0) + 1)
+  }
+  return [...counts].sort((a, b) => b[1] - a[1] || a[0] - b[0]).slice(0, 3).map(([frames]) => frames / series.spanFrames)
+}
+
+/** A plain fit of a law with lone bad drawings smoothed over at the start of the search. */
+export function plainFit(series: Series, model: LawModel, care: Care, steps: number): { fit: Fit, base: Fit } {
+  const calm = smoothed(series.x, series.y, 2 * care.slop)
+  const ones = new Float64Array(series.n).fill(1)
+  let base: Fit | null = null
+  for (const start of model.begin(series, calm)) {
+    const found = refine(model, series, series.x, calm, ones, start, steps)
+    if (!base || found.cost < base.cost) base = found
+  }
+  const kept = base as Fit
+  return { base: kept, fit: refine(model, series, series.x, series.y, ones, kept.numbers, steps) }
+}
+
+/** Every story worth hearing under one law. The first is always "nothing happened". */
+export function stories(series: Series, model: LawModel, care: Care): Story[] {
+  const { fit, base } = plainFit(series, model, care, ALL_STEPS)
+  const { n, y } = series
+  const strained = strain(series, fit, care)
+  let breaking = 0
+  let worst = 0
+  for (const value of strained) {
+    if (value > 1) breaking++
+    worst = Math.max(worst, value)
+  }
+  const told: Story[] = [{ out: [], shift: null, fit, breaking }]
+  // Nothing near the edge of notice, nothing to explain.
+  if (worst < 0.8 && fit.cost <= 0.16 * care.slop * care.slop * n) return told
+
+  const spare = n - model.size - 2
+  if (spare < 1) return told
+  const ones = new Float64Array(n).fill(1)
+  for (const set of worstDrawings(fit, y, ones)) if (set.length <= spare) told.push(tell(series, model, set, null, fit.numbers, care))
+  const off = strain(series, base, care)
+  const offBase = Array.from(off.keys()).filter(i => (off[i] as number) > 1)
+  if (offBase.length > 0 && offBase.length <= Math.min(spare, n / 4)) told.push(tell(series, model, offBase, null, base.numbers, care))
+
+  const candidates: { shift: Shift, cost: number, numbers: Float64Array }[] = []
+  for (const by of exposures(series)) {
+    for (const way of [by, -by]) {
+      candidates.push(...bestShifts(series, fit, y, ones, way, 2))
+      if (!model.linear) candidates.push(...bestShifts(series, base, y, ones, way, 2))
+    }
+  }
+  candidates.sort((a, b) => a.cost - b.cost)
+  const seen = new Set<string>()
+  for (const { shift, numbers } of candidates) {
+    const name = `${shift.at} ${shift.by}`
+    if (seen.has(name) || seen.size >= 6) continue
+    seen.add(name)
+    told.push(tell(series, model, [], shift, numbers, care))
+  }
+
+  // The likeliest few may need a lone bad drawing on top.
+  const most = Math.min(spare, Math.max(2, Math.floor(n / 6)))
+  const sigma = pencil(told, n, care)
+  const likely = [...told].sort((a, b) => charge(a, sigma, n) - charge(b, sigma, n)).slice(0, 4)
+  for (const story of likely) if (story.breaking > 0) told.push(extend(series, story, care, most))
+  return told
+}
+
+/**
+ * The pencil's spread, reading units, judged by the story that leaves least unexplained. A quarter of the slop counts as three drawings
+ * seen before the first one is (common practice: slop is what nobody means, and most drawings sit well inside it).
+ */
+export function pencil(told: readonly Story[], n: number, care: Care): number {
+  const before = (care.slop / 4) ** 2
+  let best = Infinity
+  for (const { fit, out } of told) {
+    const free = Math.max(1, n - out.length - fit.model.size)
+    best = Math.min(best, (3 * before + fit.cost) / (3 + free))
+  }
+  return Math.sqrt(Math.max(best, care.least * care.least))
+}
+
+/** What a story costs, nats, if the pencil's spread is `sigma`. */
+export function charge(story: Story, sigma: number, n: number): number {
+  return story.fit.cost / (2 * sigma * sigma)
+    + MISPLACED_CHARGE * story.out.length
+    + (story.shift ? SHIFT_CHARGE + Math.log(2 * n) : 0)
+}

@@ -1,0 +1,11 @@
+/** The judge and what the screens need around it. */
+export { judge, judgeInDepth } from './judge'
+export type { Judgement } from './judge'
+export { lawCurve } from './line'
+export type { Line } from './line'
+export { allowanceAt, allowances } from './allowance'
+export {
+  STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
+} from './bodies'
+export { LAW_WORDS, lawsFor } from './laws/index'
+export * from './types'

@@ -1,0 +1,25 @@
+/** What every law offers to the fit: a line over time, its speed, and how it bends when its free numbers move. */
+import type { Series } from '../series'
+import type { Law } from '../types'
+
+/** A law's line at some times. Arrays are as long as the times asked for. */
+export interface Trace {
+  /** Readings. */
+  value: Float64Array
+  /** Readings per span (d value / d x). */
+  rate: Float64Array
+  /** One column per free number: d value / d number. Empty unless asked for. */
+  columns: Float64Array[]
+}
+
+export interface LawModel {
+  readonly law: Law
+  /** Free numbers. */
+  readonly size: 2 | 3
+  /** True where the line is a weighted sum of fixed columns, so that one step of least squares is the answer. */
+  readonly linear: boolean
+  /** Traces the line for times x (0 to 1 is the list's span; outside it the law is carried on). */
+  trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace
+  /** Places to begin a search from, best guess first. `y` is the list with its lone bad drawings smoothed over. */
+  begin(series: Series, y: Float64Array): Float64Array[]
+}

@@ -1,0 +1,113 @@
+/**
+ * What topple and pendulum share: the exact swing carried into reading units, how it bends with its free numbers, and where a search
+ * should begin.
+ */
+import type { Series } from '../series'
+import { solve3 } from '../solve'
+import { freeSwing } from '../swing'
+import type { Trace } from './model'
+
+/** ln κ is kept in here, κ = k·span: from barely curving over the whole list to a thousand radians of swing. */
+export const LEAST_LOG = Math.log(1e-3)
+export const MOST_LOG = Math.log(1e3)
+const NUDGE = 1e-6
+
+/** Numbers: ln κ; angle at the first key, radians; turn rate there, radians per span. */
+export function traceSwing(
+  series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean, fromTop: boolean,
+): Trace {
+  const kappa = Math.exp(numbers[0] as number)
+  const start = numbers[1] as number
+  const push = (numbers[2] as number) / kappa
+  const { perRadian, zero } = series
+  const n = x.length
+  const taus = x.map(at => at * kappa)
+  const angle = new Float64Array(n)
+  const rate = new Float64Array(n)
+  freeSwing(start, push, fromTop, taus, angle, rate)
+  const value = angle.map(a => (a - zero) * perRadian)
+  const perSpan = rate.map(r => r * kappa * perRadian)
+  if (!withColumns) return { value, rate: perSpan, columns: [] }
+
+  // Moving (start, push) along the motion itself is the same as moving time, so that direction is known exactly; only the direction
+  // across it needs a second solution.
+  const turn = fromTop ? Math.sin(start) : -Math.sin(start)
+  const size = Math.hypot(push, turn)
+  const known = size > 1e-6
+  const alongStart = known ? push / size : 1
+  const alongPush = known ? turn / size : 0
+  const across = new Float64Array(n)
+  const shifted = new Float64Array(n)
+  const spare = new Float64Array(n)
+  const step = NUDGE * Math.max(1, Math.abs(push))
+  freeSwing(start - alongPush * step, push + alongStart * step, fromTop, taus, shifted, spare)
+  for (let i = 0; i < n; i++) across[i] = ((shifted[i] as number) - (angle[i] as number)) / step
+  const along = new Float64Array(n)
+  if (known) {
+    for (let i = 0; i < n; i++) along[i] = (rate[i] as number) / size
+  } else {
+    freeSwing(start + alongStart * step, push + alongPush * step, fromTop, taus, shifted, spare)
+    for (let i = 0; i < n; i++) along[i] = ((shifted[i] as number) - (angle[i] as number)) / step
+  }
+  const byLog = new Float64Array(n)
+  const byStart = new Float64Array(n)
+  const byTurn = new Float64Array(n)
+  for (let i = 0; i < n; i++) {
+    const a = along[i] as number
+    const b = across[i] as number
+    const byPush = a * alongPush + b * alongStart
+    byStart[i] = (a * alongStart - b * alongPush) * perRadian
+    byTurn[i] = byPush / kappa * perRadian
+    // At a fixed turn rate, a larger κ also means a smaller push.
+    byLog[i] = ((taus[i] as number) * (rate[i] as number) - push * byPush) * perRadian
+  }
+  return { value, rate: perSpan, columns: [byLog, byStart, byTurn] }
+}
+
+/**
+ * Beginnings for the search. Integrating θ″ = ±κ² sin θ twice along the posted readings gives θ = θ₁ + ω₁x ± κ²∬sin θ, which is
+ * linear in the three unknowns, and integration smooths the pencil instead of sharpening it.
+ */
+export function beginSwing(series: Series, y: Float64Array, fromTop: boolean): Float64Array[] {
+  const { n, x, perRadian, zero } = series
+  const angle = y.map(reading => reading / perRadian + zero)
+  const pull = angle.map(a => (fromTop ? Math.sin(a) : -Math.sin(a)))
+  const slope = new Float64Array(n)
+  for (let i = 0; i < n; i++) {
+    const left = Math.max(0, i - 1)
+    const right = Math.min(n - 1, i + 1)
+    slope[i] = ((pull[right] as number) - (pull[left] as number)) / ((x[right] as number) - (x[left] as number))
+  }
+  const twice = new Float64Array(n)
+  let once = 0
+  for (let i = 1; i < n; i++) {
+    // Cubic between keys: integrals of Hermite's form over one gap.
+    const h = (x[i] as number) - (x[i - 1] as number)
+    const p0 = pull[i - 1] as number
+    const p1 = pull[i] as number
+    const s0 = slope[i - 1] as number
+    const s1 = slope[i] as number
+    twice[i] = (twice[i - 1] as number) + once * h + h * h * (0.35 * p0 + 0.15 * p1) + h * h * h * (s0 / 20 - s1 / 30)
+    once += h / 2 * (p0 + p1) + h * h / 12 * (s0 - s1)
+  }
+  const a = new Float64Array(9)
+  const b = new Float64Array(3)
+  for (let i = 0; i < n; i++) {
+    const row = [twice[i] as number, 1, x[i] as number]
+    for (let p = 0; p < 3; p++) {
+      b[p] = (b[p] as number) + (row[p] as number) * (angle[i] as number)
+      for (let q = 0; q < 3; q++) a[3 * p + q] = (a[3 * p + q] as number) + (row[p] as number) * (row[q] as number)
+    }
+  }
+  const found = solve3(a, b, 3)
+  const starts: Float64Array[] = []
+  if (found && (found[0] as number) > 0.01) {
+    const log = Math.min(MOST_LOG, Math.max(LEAST_LOG, 0.5 * Math.log(found[0] as number)))
+    starts.push(Float64Array.from([log, found[1] as number, found[2] as number]))
+  } else {
+    const firstAngle = angle[0] as number
+    const travel = (angle[n - 1] as number) - firstAngle
+    starts.push(Float64Array.from([Math.log(0.3), firstAngle, travel]))
+  }
+  return starts
+}

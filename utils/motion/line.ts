@@ -1,0 +1,37 @@
+/** The law's fitted line, in a form that can be kept, sent and drawn at any frame. */
+import { LAWS } from './laws/index'
+import type { Trace } from './laws/model'
+import { seriesOf } from './series'
+import type { Series } from './series'
+import type { CheckRequest, Key, Law } from './types'
+
+export interface Line {
+  law: Law
+  /** The law's free numbers over the list's span (see the law's own file). */
+  numbers: number[]
+  /** Spans by which the line runs behind the numbers' own clock: not 0 where most of a list is one exposure late or early. */
+  lag: number
+}
+
+/** Readings and speeds of a line at times x, run `rate` times as fast from the same start. */
+export function traceLine(series: Series, line: Line, x: Float64Array, rate = 1): Trace {
+  return LAWS[line.law].trace(series, Float64Array.from(line.numbers), x.map(at => at * rate - line.lag), false)
+}
+
+/**
+ * The law's reading at each of `frames` (whole or not, inside the list or beyond it), reading units.
+ * `rate` > 1 runs the same motion faster; the claim's own size runs at `paceOfClaim`. Empty for fewer than two keys.
+ */
+export function lawCurve(line: Line, request: CheckRequest, frames: readonly number[], rate = 1): number[] {
+  const series = seriesOf(request)
+  const first = request.keys[0]
+  if (!first || series.spanFrames === 0) return []
+  const x = Float64Array.from(frames, frame => (frame - first.frame) / series.spanFrames)
+  return Array.from(traceLine(series, line, x, rate).value)
+}
+
+/** The line's readings on the list's own frames. */
+export function ruledList(series: Series, line: Line, request: CheckRequest, rate = 1): Key[] {
+  const { value } = traceLine(series, line, series.x, rate)
+  return request.keys.map((key, i) => ({ frame: key.frame, reading: value[i] as number }))
+}

@@ -1,0 +1,43 @@
+/** Every drawing held against the law's line. */
+import { allowances } from './allowance'
+import type { Trace } from './laws/model'
+import type { Series } from './series'
+import type { CheckRequest, JudgedKey } from './types'
+
+/** Keys as posted, nothing judged: for lists that no law can be held against. */
+export function unjudged(request: CheckRequest): JudgedKey[] {
+  return request.keys.map((key, i) => ({
+    frame: key.frame, reading: key.reading, law: null, offset: null, offsetFrames: null,
+    gap: gapAfter(request, i), lawGap: null, allowance: null, breaks: false,
+  }))
+}
+
+function gapAfter(request: CheckRequest, i: number): number | null {
+  const here = request.keys[i]
+  const next = request.keys[i + 1]
+  return here && next ? next.reading - here.reading : null
+}
+
+/** `trace` holds the line at the list's own keys. */
+export function judgeKeys(request: CheckRequest, series: Series, trace: Trace): JudgedKey[] {
+  const allowed = allowances(trace.value, request.slop, request.tolerance)
+  return request.keys.map((key, i) => {
+    const law = trace.value[i] as number
+    const offset = key.reading - law
+    const next = trace.value[i + 1]
+    const frames = offset / ((trace.rate[i] as number) / series.spanFrames)
+    const allowance = allowed[i] as number
+    return {
+      frame: key.frame,
+      reading: key.reading,
+      law,
+      offset,
+      // Where the law all but stands still, an offset is worth no number of frames.
+      offsetFrames: Number.isFinite(frames) && Math.abs(frames) <= series.spanFrames ? frames : null,
+      gap: gapAfter(request, i),
+      lawGap: next === undefined ? null : next - law,
+      allowance,
+      breaks: Math.abs(offset) > allowance,
+    }
+  })
+}

@@ -1,0 +1,79 @@
+/** What size a list's timing reads as, and how far that is from the claim. */
+import { equalLength, gravityOf, isBody, namedSize, pathAcceleration, pathShare, sizeForLength } from './bodies'
+import type { Fit } from './fit'
+import { accelerationOf } from './laws/oddRule'
+import type { Series } from './series'
+import { inverseRow } from './solve'
+import { student95 } from './student'
+import type { BodySubject, CheckRequest, PathSubject, SizeReading } from './types'
+
+export interface Scale {
+  size: SizeReading | null
+  /**
+   * Claimed pace over the list's own pace: the list run this many times as fast is the claimed size. Null without a claimed size.
+   * Pace goes as k for turning, as √a for falling: sizes scale as time squared.
+   */
+  pace: number | null
+  /** 95 % half-width of ln(pace). */
+  spread: number
+  /** The claimed value in the size's own unit. */
+  claimed: number | null
+}
+
+const NOTHING: Scale = { size: null, pace: null, spread: Infinity, claimed: null }
+/** A size known to no better than this factor either way is printed as this factor, so that an interval is always finite. */
+const WIDEST = 1e6
+
+/** Standard error of one free number: residual spread over the keys kept, times the root of its place in the inverse normal matrix. */
+function standardError(fit: Fit, index: number, kept: number, least: number): { error: number, t: number } {
+  const free = kept - fit.model.size
+  const row = inverseRow(fit.normal, index, fit.model.size)
+  if (free < 1 || !row) return { error: Infinity, t: student95(1) }
+  const sigma = Math.sqrt(Math.max(fit.cost / free, least * least))
+  return { error: sigma * Math.sqrt(row[index] as number), t: student95(free) }
+}
+
+/** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
+export function scaleOf(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+  if (request.law === 'topple' || request.law === 'pendulum') return bodyScale(request, series, fit, kept, least)
+  if (request.law === 'odd-rule' && request.measure !== 'angle') return pathScale(request, series, fit, kept, least)
+  return NOTHING
+}
+
+function bodyScale(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+  const { subject } = request
+  const claimed = subject && isBody(subject) ? subject : null
+  // With no body named, a topple is read as a rod on its foot and a swing as a bob on a cord: the plainest of either.
+  const body: BodySubject = claimed ?? (request.law === 'topple' ? { shape: 'rod', height: 1 } : { shape: 'bob', length: 1 })
+  const gravity = gravityOf(subject)
+  const k = Math.exp(fit.numbers[0] as number) / series.span
+  const value = sizeForLength(body, gravity / (k * k))
+  const { error, t } = standardError(fit, 0, kept, least)
+  const spread = error * t
+  const factor = Math.min(WIDEST, Math.exp(2 * spread))
+  return {
+    size: { value, low: value / factor, high: value * factor, unit: 'm' },
+    pace: claimed ? Math.sqrt(gravity / equalLength(claimed)) / k : null,
+    spread,
+    claimed: claimed ? namedSize(claimed) : null,
+  }
+}
+
+function pathScale(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+  const path: PathSubject = request.subject && !isBody(request.subject) ? request.subject : { gravity: gravityOf(request.subject) }
+  const a = Math.abs(accelerationOf(fit.numbers, series.span))
+  const { error, t } = standardError(fit, 2, kept, least)
+  const half = Math.min(a * WIDEST, Math.abs(accelerationOf(Float64Array.of(0, 0, error * t), series.span)))
+  const perMetre = path.unitsPerMetre
+  const unit = perMetre === undefined ? pathAcceleration(path) : perMetre * pathShare(path)
+  if (!(unit > 0) || !(a > 0)) return NOTHING
+  return {
+    size: {
+      value: a / unit, low: Math.max(0, a - half) / unit, high: (a + half) / unit,
+      unit: perMetre === undefined ? `${request.unit}/m` : 'm/s²',
+    },
+    pace: perMetre === undefined ? null : Math.sqrt(perMetre * pathAcceleration(path) / a),
+    spread: half < a ? -0.5 * Math.log(1 - half / a) : Infinity,
+    claimed: perMetre === undefined ? null : gravityOf(path),
+  }
+}

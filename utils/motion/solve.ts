@@ -1,0 +1,46 @@
+/** Small symmetric systems for the fits: at most three unknowns. */
+
+/**
+ * Solves A·s = b, A symmetric positive definite, `size` × `size` in row order. Null where A is not (within rounding): the caller then
+ * knows that the list doesn't settle all its unknowns. Cholesky's factorisation on the matrix scaled to a unit diagonal.
+ */
+export function solve3(a: ArrayLike<number>, b: ArrayLike<number>, size: number): Float64Array | null {
+  const scale = new Float64Array(size)
+  for (let i = 0; i < size; i++) {
+    const d = a[size * i + i] as number
+    if (!(d > 0)) return null
+    scale[i] = 1 / Math.sqrt(d)
+  }
+  const l = new Float64Array(size * size)
+  for (let i = 0; i < size; i++) {
+    for (let j = 0; j <= i; j++) {
+      let sum = (a[size * i + j] as number) * (scale[i] as number) * (scale[j] as number)
+      for (let k = 0; k < j; k++) sum -= (l[size * i + k] as number) * (l[size * j + k] as number)
+      if (i === j) {
+        if (!(sum > 1e-13)) return null
+        l[size * i + i] = Math.sqrt(sum)
+      } else {
+        l[size * i + j] = sum / (l[size * j + j] as number)
+      }
+    }
+  }
+  const s = new Float64Array(size)
+  for (let i = 0; i < size; i++) {
+    let sum = (b[i] as number) * (scale[i] as number)
+    for (let k = 0; k < i; k++) sum -= (l[size * i + k] as number) * (s[k] as number)
+    s[i] = sum / (l[size * i + i] as number)
+  }
+  for (let i = size - 1; i >= 0; i--) {
+    let sum = s[i] as number
+    for (let k = i + 1; k < size; k++) sum -= (l[size * k + i] as number) * (s[k] as number)
+    s[i] = sum / (l[size * i + i] as number)
+  }
+  return s.map((value, i) => value * (scale[i] as number))
+}
+
+/** Row `row` of A⁻¹, or null. */
+export function inverseRow(a: ArrayLike<number>, row: number, size: number): Float64Array | null {
+  const unit = new Float64Array(size)
+  unit[row] = 1
+  return solve3(a, unit, size)
+}
