@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import { Mutex } from 'async-mutex'
 import { QueryTypes, Sequelize, Transaction } from 'sequelize'
 import sqlite3 from 'sqlite3'
+import { log } from '~/server/utils/log'
 
 /**
  * The one connection to the one file. Everything that knows about sqlite3 is here, so that the pair
@@ -34,6 +35,8 @@ Sequelize.useCLS({
   set: (key: string, value: unknown) => frames.getStore()?.set(key, value),
 } as unknown as object)
 
+// Sequelize's own hook also runs after a commit that failed, and inside the finished transaction: so we keep our own list.
+const waiting = new AsyncLocalStorage<(() => void)[]>()
 const writer = new Mutex()
 let current: Sequelize | null = null
 
@@ -67,7 +70,8 @@ export async function closeDatabase(): Promise<void> {
 
 /** True while the running call is inside `write`. */
 export function isWriting(): boolean {
-  return frames.getStore()?.get('transaction') !== undefined
+  // Null once it is committed or rolled back: what is still running then is outside.
+  return (frames.getStore()?.get('transaction') ?? null) !== null
 }
 
 /**
@@ -76,14 +80,26 @@ export function isWriting(): boolean {
  */
 export async function write<T>(task: () => Promise<T>): Promise<T> {
   if (isWriting()) return task()
-  return writer.runExclusive(() => database().transaction(() => task()))
+  const after: (() => void)[] = []
+  const answer = await writer.runExclusive(() => waiting.run(after, () => database().transaction(() => task())))
+  for (const news of after) tell(news)
+  return answer
 }
 
 /** Runs `task` once the surrounding `write` is committed (at once when there is none); never after a rollback. */
 export function afterCommit(task: () => void): void {
-  const transaction = frames.getStore()?.get('transaction') as Transaction | undefined
-  if (transaction) transaction.afterCommit(() => task())
-  else task()
+  const after = waiting.getStore()
+  if (after && isWriting()) after.push(task)
+  else tell(task)
+}
+
+/** What was committed stays so, whatever those who hear of it do. */
+function tell(task: () => void): void {
+  try {
+    task()
+  } catch (problem) {
+    log.error('news went wrong', { problem: String(problem) })
+  }
 }
 
 type Values = Record<string, string | number | null | readonly (string | number)[]>

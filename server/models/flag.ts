@@ -1,6 +1,7 @@
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
 import type { FindingName } from '~/utils/contracts/take'
+import { jsonColumn } from './json'
 
 /** What a supervisor says about frames of a take. */
 export class Flag extends Model<InferAttributes<Flag>, InferCreationAttributes<Flag>> {
@@ -26,7 +27,7 @@ export function initFlag(sequelize: Sequelize): void {
       fromFrame: { type: DataTypes.INTEGER, allowNull: false },
       toFrame: { type: DataTypes.INTEGER, allowNull: false },
       reason: { type: DataTypes.TEXT, allowNull: false },
-      finding: { type: DataTypes.JSON, allowNull: true },
+      finding: jsonColumn('finding', true),
       personId: { type: DataTypes.TEXT, allowNull: false },
       createdAt: { type: DataTypes.TEXT, allowNull: false },
       liftedAt: { type: DataTypes.TEXT, allowNull: true },

@@ -1,6 +1,7 @@
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
 import type { Claim } from '~/utils/contracts/production'
+import { jsonColumn } from './json'
 
 /** A shot and what it claims. */
 export class Shot extends Model<InferAttributes<Shot>, InferCreationAttributes<Shot>> {
@@ -41,7 +42,7 @@ export function initShot(sequelize: Sequelize): void {
       dueOn: { type: DataTypes.TEXT, allowNull: true },
       animatorId: { type: DataTypes.TEXT, allowNull: true },
       supervisorId: { type: DataTypes.TEXT, allowNull: true },
-      claim: { type: DataTypes.JSON, allowNull: true },
+      claim: jsonColumn('claim', true),
       version: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
       createdBy: { type: DataTypes.TEXT, allowNull: true },
       createdAt: { type: DataTypes.TEXT, allowNull: false },

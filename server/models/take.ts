@@ -3,6 +3,7 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { Claim } from '~/utils/contracts/production'
 import type { TakeSketch } from '~/utils/contracts/take'
 import type { CheckResult, Key } from '~/utils/motion/types'
+import { jsonColumn } from './json'
 
 /** A numbered, immutable posting of a spacing list, with the answer that the judge gave it. */
 export class Take extends Model<InferAttributes<Take>, InferCreationAttributes<Take>> {
@@ -34,21 +35,21 @@ export function initTake(sequelize: Sequelize): void {
       clientId: { type: DataTypes.TEXT, allowNull: false },
       shotId: { type: DataTypes.TEXT, allowNull: false },
       number: { type: DataTypes.INTEGER, allowNull: false },
-      keys: { type: DataTypes.JSON, allowNull: false },
+      keys: jsonColumn('keys'),
       measure: { type: DataTypes.TEXT, allowNull: false },
       unit: { type: DataTypes.TEXT, allowNull: false },
       slop: { type: DataTypes.REAL, allowNull: false },
       tolerance: { type: DataTypes.REAL, allowNull: false },
       fps: { type: DataTypes.REAL, allowNull: false },
-      claim: { type: DataTypes.JSON, allowNull: false },
+      claim: jsonColumn('claim'),
       note: { type: DataTypes.TEXT, allowNull: false },
       personId: { type: DataTypes.TEXT, allowNull: false },
       createdAt: { type: DataTypes.TEXT, allowNull: false },
       withdrawnAt: { type: DataTypes.TEXT, allowNull: true },
-      answer: { type: DataTypes.JSON, allowNull: false },
+      answer: jsonColumn('answer'),
       verdict: { type: DataTypes.TEXT, allowNull: false },
       judgeVersion: { type: DataTypes.TEXT, allowNull: false },
-      sketch: { type: DataTypes.JSON, allowNull: false },
+      sketch: jsonColumn('sketch'),
     },
     { sequelize, tableName: 'takes', modelName: 'Take' },
   )

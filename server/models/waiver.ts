@@ -1,6 +1,7 @@
 import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
 import type { FindingName } from '~/utils/contracts/take'
+import { jsonColumn } from './json'
 
 /** A finding that a supervisor lets pass, with the reason. */
 export class Waiver extends Model<InferAttributes<Waiver>, InferCreationAttributes<Waiver>> {
@@ -21,7 +22,7 @@ export function initWaiver(sequelize: Sequelize): void {
       id: { type: DataTypes.TEXT, primaryKey: true },
       clientId: { type: DataTypes.TEXT, allowNull: false },
       takeId: { type: DataTypes.TEXT, allowNull: false },
-      finding: { type: DataTypes.JSON, allowNull: false },
+      finding: jsonColumn('finding'),
       reason: { type: DataTypes.TEXT, allowNull: false },
       personId: { type: DataTypes.TEXT, allowNull: false },
       createdAt: { type: DataTypes.TEXT, allowNull: false },
