@@ -1,6 +1,7 @@
 import type { H3Event } from 'h3'
 import { getCookie } from 'h3'
-import { clearUserSession, getUserSession, setUserSession, useRuntimeConfig } from '#imports'
+import { useRuntimeConfig } from '#imports'
+import { clearUserSession, getUserSession, setUserSession } from '#sealed-cookie'
 import { v7 as uuid } from 'uuid'
 import { row, run, write } from '~/server/models/database'
 import { fail } from './fail'
