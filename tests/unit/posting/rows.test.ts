@@ -1,0 +1,71 @@
+import { describe, expect, it } from 'vitest'
+import { draftKey, readDraft } from '~/utils/posting/draft'
+import { fillFrames, gapText, joinKeys, nextFrame, readRows, rowsFromKeys, withGap } from '~/utils/posting/rows'
+
+const rows = rowsFromKeys([{ frame: 1, reading: 0 }, { frame: 3, reading: 1 }, { frame: 5, reading: 4 }, { frame: 7, reading: 9 }])
+
+describe('rows to keys', () => {
+  it('reads whole rows and passes over empty ones', () => {
+    const list = [...rows.slice(0, 2), { id: 9, frame: ' ', reading: '' }, ...rows.slice(2)]
+    expect(readRows(list)).toEqual({
+      keys: [{ frame: 1, reading: 0 }, { frame: 3, reading: 1 }, { frame: 5, reading: 4 }, { frame: 7, reading: 9 }],
+      rowOf: [0, 1, 3, 4],
+      issues: [],
+    })
+  })
+  it('tells each fault at its cell and keeps the rest', () => {
+    const list = ['1 0', '2.5 1', '3 x', '3 2', '2 3', '4 ', ' 5', '6 1e9', '7 1'].map((text, id) => {
+      const [frame = '', reading = ''] = text.split(' ')
+      return { id, frame, reading }
+    })
+    const { keys, issues } = readRows(list)
+    expect(keys).toEqual([{ frame: 1, reading: 0 }, { frame: 7, reading: 1 }])
+    expect(issues.map(({ row, column }) => `${row} ${column}`)).toEqual([
+      '1 frame', '2 reading', '3 frame', '4 frame', '5 reading', '6 frame', '7 reading',
+    ])
+  })
+})
+
+describe('gaps', () => {
+  it('lead to the next row', () => {
+    expect(rows.map((_, i) => gapText(rows, i))).toEqual(['1', '3', '5', ''])
+  })
+  it('carry every later drawing with them', () => {
+    const moved = withGap(rows, 1, 2.5)
+    expect(moved.map(({ reading }) => reading)).toEqual(['0', '1', '3.5', '8.5'])
+    expect(gapText(moved, 2)).toBe('5')
+  })
+  it('set only the next drawing where that has no reading yet', () => {
+    const open = rows.map((row, i) => (i === 2 ? { ...row, reading: '' } : row))
+    expect(withGap(open, 1, 2).map(({ reading }) => reading)).toEqual(['0', '1', '3', '9'])
+  })
+  it('leave the list alone where there is nothing to start from', () => {
+    expect(withGap([{ id: 1, frame: '1', reading: '' }, ...rows], 0, 2)).toEqual([{ id: 1, frame: '1', reading: '' }, ...rows])
+  })
+})
+
+describe('filling and joining', () => {
+  it('numbers rows every n frames and drops no reading', () => {
+    expect(fillFrames(rows, 1001, 2, 2).map(({ frame, reading }) => `${frame}:${reading}`)).toEqual(['1001:0', '1003:1', '1005:4', '1007:9'])
+    const longer = fillFrames(rows, 0, 1, 6)
+    expect(longer.map(({ frame }) => frame)).toEqual(['0', '1', '2', '3', '4', '5'])
+    expect(new Set(longer.map(({ id }) => id)).size).toBe(6)
+  })
+  it('goes on at the same step', () => {
+    expect(nextFrame(rows)).toBe(9)
+    expect(nextFrame([])).toBeNull()
+  })
+  it('joins a pasted list by frame', () => {
+    const joined = joinKeys([...rows, { id: 77, frame: '', reading: '3' }], [{ frame: 4, reading: 2 }, { frame: 5, reading: 5 }])
+    expect(joined.map(({ frame, reading }) => `${frame}:${reading}`)).toEqual(['1:0', '3:1', '4:2', '5:5', '7:9', ':3'])
+  })
+})
+
+describe('the draft', () => {
+  const draft = { v: 1, clientId: '7d3f3a52-7c8a-4a34-9f0e-0d6c1f3f2b11', rows, note: 'n', savedAt: '2026-01-01T00:00:00.000Z' }
+  it('comes back as it was kept', () => expect(readDraft(JSON.stringify(draft))).toEqual(draft))
+  it.each([null, '', '{', '[]', '{"v":2}', JSON.stringify({ ...draft, clientId: 'x' })])('%j is none', (text) => expect(readDraft(text)).toBeNull())
+  it('is one per shot and person', () => {
+    expect(draftKey('p', 'A-1', 'x')).not.toBe(draftKey('p', 'A-1', 'y'))
+  })
+})
