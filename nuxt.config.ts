@@ -14,6 +14,9 @@ export default defineNuxtConfig({
     '#sealed-cookie': fileURLToPath(
       new URL('./node_modules/nuxt-auth-utils/dist/runtime/server/utils/session.js', import.meta.url),
     ),
+    '#sealed-password': fileURLToPath(
+      new URL('./node_modules/nuxt-auth-utils/dist/runtime/server/utils/password.js', import.meta.url),
+    ),
   },
   ...(buildDir ? { buildDir: `.nuxt-${basename(buildDir)}` } : {}),
   compatibilityDate: '2026-11-01',
@@ -41,6 +44,8 @@ export default defineNuxtConfig({
   auth: {
     // The sealed cookie carries only a session id; server/utils/session.ts reads the row every time.
     loadStrategy: 'none',
+    // scrypt at the cost of security.md 11.4.2: 128 MiB for each; server/utils/password.ts hashes few at once.
+    hash: { scrypt: { cost: 2 ** 17, blockSize: 8, parallelization: 1, maxMemory: 256 * 1024 * 1024 } },
   },
   runtimeConfig: {
     // Each is set at run time by NUXT_…; scripts/start.mjs fills them from the settings in README.md.
