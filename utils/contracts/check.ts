@@ -20,34 +20,33 @@ export const reading = z
   .max(CHECK_LIMITS.maxReading, 'A reading lies within ±1,000,000.')
 
 const metres = z.number().positive('A size is above zero.').max(10_000, 'At most 10,000 m.').min(0.001, 'At least 1 mm.')
-const kilograms = z.number().positive().max(1e9)
-const gravity = z.number().min(0.01).max(1_000).optional()
+const kilograms = z.number().positive('A mass is above zero.').max(1e9, 'At most a billion kilograms.')
+const gravity = z.number().min(0.01, 'At least 0.01 m/s².').max(1_000, 'At most 1000 m/s².').optional()
 
-export const subject = z.union([
-  z.discriminatedUnion('shape', [
-    z.strictObject({ shape: z.literal('rod'), height: metres, gravity }),
-    z.strictObject({ shape: z.literal('block'), width: metres, height: metres, gravity }),
-    z.strictObject({ shape: z.literal('cylinder'), radius: metres, height: metres, gravity }),
-    z
-      .strictObject({
-        shape: z.literal('pole'),
-        height: metres,
-        mass: kilograms,
-        headMass: kilograms,
-        headHeight: metres,
-        gravity,
-      }),
-    z.strictObject({ shape: z.literal('bob'), length: metres, gravity }),
-    z.strictObject({ shape: z.literal('hung-rod'), length: metres, gravity }),
-    z.strictObject({ shape: z.literal('custom'), equalLength: metres, gravity }),
-  ]),
+/** One discriminated union, so that a fault is told at the field of the body that was meant. What moves on a path has no shape. */
+export const subject = z.discriminatedUnion('shape', [
+  z.strictObject({ shape: z.literal('rod'), height: metres, gravity }),
+  z.strictObject({ shape: z.literal('block'), width: metres, height: metres, gravity }),
+  z.strictObject({ shape: z.literal('cylinder'), radius: metres, height: metres, gravity }),
   z.strictObject({
-    unitsPerMetre: z.number().positive().max(1e6).optional(),
-    slope: z.number().gt(0, 'A slope lies above 0° and up to 90°.').max(90).optional(),
+    shape: z.literal('pole'),
+    height: metres,
+    mass: kilograms,
+    headMass: kilograms,
+    headHeight: metres,
+    gravity,
+  }),
+  z.strictObject({ shape: z.literal('bob'), length: metres, gravity }),
+  z.strictObject({ shape: z.literal('hung-rod'), length: metres, gravity }),
+  z.strictObject({ shape: z.literal('custom'), equalLength: metres, gravity }),
+  z.strictObject({
+    shape: z.undefined().optional(),
+    unitsPerMetre: z.number().positive('A scale is above zero.').max(1e6).optional(),
+    slope: z.number().gt(0, 'A slope lies above 0° and up to 90°.').max(90, 'A slope lies above 0° and up to 90°.').optional(),
     roll: z.enum(rolls).optional(),
     gravity,
   }),
-])
+]) as unknown as z.ZodType<Subject>
 
 export const keys = z
   .array(z.strictObject({ frame, reading }))

@@ -1,0 +1,34 @@
+import { describe, expect, it } from 'vitest'
+import { checkRequest } from '~/utils/contracts/check'
+import { plainIssues } from '~/utils/contracts/issues'
+
+const list = { law: 'topple', fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys: [1, 2, 3].map((frame) => ({ frame, reading: frame })) }
+const issuesOf = (change: object) => {
+  const read = checkRequest.safeParse({ ...list, ...change })
+  return read.success ? [] : plainIssues(read.error.issues)
+}
+
+describe('faults by field', () => {
+  it('has none for a good list', () => expect(issuesOf({})).toEqual([]))
+  it('finds the key of a list', () => {
+    expect(issuesOf({ keys: [{ frame: 1, reading: 0 }, { frame: 1.5, reading: Number.NaN }, { frame: 3, reading: 1 }] }).map(({ path }) => path)).toEqual([
+      'keys[1].frame', 'keys[1].reading',
+    ])
+  })
+  it('speaks for the body that was meant', () => {
+    expect(issuesOf({ subject: { shape: 'block', width: 1, height: -3 } })[0]).toEqual({ path: 'subject.height', message: 'A size is above zero.' })
+    expect(issuesOf({ subject: { shape: 'block', width: 1 } })).toEqual([{ path: 'subject.height', message: 'Write a number here.' }])
+  })
+  it('speaks for the path that was meant', () => {
+    expect(issuesOf({ law: 'odd-rule', measure: 'distance', unit: 'px', subject: { slope: 100 } })[0]?.path).toBe('subject.slope')
+  })
+  it('names a shape that is not known', () => {
+    expect(issuesOf({ subject: { shape: 'egg', height: 1 } })).toEqual([{ path: 'subject.shape', message: 'This is not one of the known kinds.' }])
+  })
+  it('names the choices', () => {
+    expect(issuesOf({ law: 'magic' })).toEqual([{ path: 'law', message: 'One of: odd-rule, topple, pendulum, steady.' }])
+  })
+  it('names unknown fields', () => {
+    expect(issuesOf({ weight: 3 })).toEqual([{ path: '', message: 'Unknown field: weight.' }])
+  })
+})
