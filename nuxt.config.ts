@@ -55,6 +55,8 @@ export default defineNuxtConfig({
     demo: 'on',
     mailUrl: '',
     mailFrom: 'Tiltyard <board@tiltyard.invalid>',
+    // How patient the mail worker is (server/services/letters/pace.ts); only tests are in more of a hurry.
+    mailPaceSeconds: 30,
     trustProxy: 'off',
   },
   nitro: {

@@ -1,6 +1,6 @@
 import { defineNitroPlugin, useStorage } from '#imports'
 import { initModels } from '~/server/models'
-import { closeDatabase, openDatabase, row } from '~/server/models/database'
+import { openDatabase, row } from '~/server/models/database'
 import { migrate, NewerDatabase } from '~/server/models/migrate'
 import type { Migration } from '~/server/models/migrate'
 import { log } from '~/server/utils/log'
@@ -11,9 +11,8 @@ import { settings } from '~/server/utils/settings'
 const OLDEST_SQLITE = [3, 51, 3] as const
 
 /** Opens the database before the first request is answered. Named to run before the other plugins. */
-export default defineNitroPlugin((nitro) => {
+export default defineNitroPlugin(() => {
   setReady(open())
-  nitro.hooks.hook('close', closeDatabase)
 })
 
 async function open(): Promise<void> {
