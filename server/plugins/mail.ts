@@ -1,7 +1,6 @@
-import { defineNitroPlugin, useRuntimeConfig } from '#imports'
-import { carrierFor } from '~/server/services/letters/carriers'
+import { defineNitroPlugin } from '#imports'
+import { carrier, pace } from '~/server/services/letters/carrierInUse'
 import { deliver } from '~/server/services/letters/deliver'
-import { paceOf } from '~/server/services/letters/pace'
 import { outbox } from '~/server/services/letters/wake'
 import { startMailWorker } from '~/server/services/letters/worker'
 import type { MailWorker } from '~/server/services/letters/worker'
@@ -17,12 +16,11 @@ export default defineNitroPlugin((nitro) => {
   async function begin(): Promise<void> {
     await ready()
     if (closing) return
-    const { mailUrl, mailFrom, baseUrl, dataDir, sessionSecret } = settings()
-    const pace = paceOf(Number(useRuntimeConfig().mailPaceSeconds))
-    const carrier = carrierFor(mailUrl, dataDir, pace)
-    worker = startMailWorker(pace, (letter, signal) => deliver(letter, { carrier, from: mailFrom, baseUrl, sessionSecret, signal }))
+    const { mailFrom, baseUrl, sessionSecret } = settings()
+    const means = { carrier: carrier(), from: mailFrom, baseUrl, sessionSecret }
+    worker = startMailWorker(pace(), (letter, signal) => deliver(letter, { ...means, signal }))
     outbox.on('owed', worker.wake)
-    log.info('mail worker started', { place: carrier.place })
+    log.info('mail worker started', { place: means.carrier.place })
   }
 
   begin().catch((problem: unknown) => log.error('mail worker did not start', { problem: String(problem) }))

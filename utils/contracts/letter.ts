@@ -33,6 +33,8 @@ export interface Letter extends LetterLine {
   text: string
   /** A whole HTML document, shown only inside a sandboxed frame. */
   html: string
+  /** False while it is on its way, and once its one-use link is gone. */
+  sendable: boolean
 }
 export interface LettersAnswer {
   letters: LetterLine[]

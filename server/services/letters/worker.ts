@@ -1,3 +1,4 @@
+import { AsyncResource } from 'node:async_hooks'
 import type { Letter } from '~/server/models'
 import { log } from '~/server/utils/log'
 import type { Pace } from './pace'
@@ -66,5 +67,6 @@ export function startMailWorker(pace: Pace, send: (letter: Letter, signal: Abort
   }
 
   wake()
-  return { wake, stop }
+  // Whoever wakes the worker may be inside a transaction that has just ended; the worker's own queries must not look for it.
+  return { wake: AsyncResource.bind(wake), stop }
 }
