@@ -90,7 +90,8 @@ export interface OwnSession {
   current: boolean
 }
 export interface Member extends PersonName {
-  email: string
+  /** Null for those who may not manage the members. */
+  email: string | null
   role: Role
   version: number
   disabled: boolean
@@ -117,7 +118,9 @@ export interface MadeLink {
   invitation: InvitationRow
   link: string
 }
+/** What a link that still works is for, and whom. */
 export interface LinkAnswer {
+  kind: 'invitation' | 'reset'
   email: string
   name: string
 }

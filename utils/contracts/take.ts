@@ -8,6 +8,8 @@ import type { Claim, Decision, Desk, Sequence } from './production'
 import type { Thread } from './thread'
 
 const takeNumber = z.coerce.number().int().min(1).max(100_000)
+/** Which take the shot page shows; the newest standing one when left out. */
+export const shotQuery = z.strictObject({ take: takeNumber.optional() })
 export const takeParams = z.strictObject({ production: slug, code: shotCode, number: takeNumber })
 export const flagParams = z.strictObject({ ...takeParams.shape, flag: serverId })
 export const waiverParams = z.strictObject({ ...takeParams.shape, waiver: serverId })
@@ -94,11 +96,11 @@ export interface TakeSketch {
   /** One short sentence: "Frame 61 lands 0.8 frame early." */
   headline: string
   drawings: number
-  marks: { frame: number; reading: number; law: number; breaks: boolean }[]
+  /** `law` is null where no law could be fitted (verdict `undecided`). */
+  marks: { frame: number; reading: number; law: number | null; breaks: boolean }[]
 }
-/** Everything that the shot page shows, for one chosen take. */
-export interface ShotPage {
-  production: { slug: string; title: string }
+/** What is known of a shot itself: the answer to every change of it, and what a stale write is compared with. */
+export interface ShotFacts {
   sequence: Sequence
   code: string
   title: string
@@ -114,11 +116,15 @@ export interface ShotPage {
   version: number
   desk: Desk
   deskSince: Time
+}
+/** Everything that the shot page shows, for one chosen take. */
+export interface ShotPage extends ShotFacts {
+  production: { slug: string; title: string }
   takes: TakeLine[]
   /** The asked-for take, or the newest that was not taken back. */
   take: Take | null
   threads: Thread[]
-  /** Who would get a letter if the asking person ruled on `take` now. */
+  /** How many would get a letter if the asking person ruled on `take` now; 0 where they may not. */
   letterCount: number
   eventNumber: number
 }

@@ -1,0 +1,37 @@
+import type { Claim } from '~/utils/contracts/production'
+import { lawWords, metres, roundFigure } from '~/utils/drawing/words'
+import type { CheckResult, Finding } from '~/utils/motion/types'
+
+/** What the judge said of a list, in one short sentence for a sheet of the wall: no full stop, no bracket. */
+export function headline(answer: CheckResult, claim: Pick<Claim, 'law'>): string {
+  const { verdict, size, findings } = answer
+  if (verdict === 'undecided') return shorten(answer.reason ?? 'This list can’t be told yet')
+  if (verdict === 'holds') return size ? `Holds · reads as ${sized(size.value, size.unit)}` : 'Holds'
+  const [first] = findings
+  return first ? told(first, answer, claim) : breakingDrawings(answer)
+}
+
+function told(finding: Finding, answer: CheckResult, claim: Pick<Claim, 'law'>): string {
+  const { size, readsAs } = answer
+  if (finding.kind === 'wrong-scale' && size && finding.amount > 0)
+    return `Reads as ${sized(size.value, size.unit)}, not ${sized(size.value / finding.amount, size.unit, 3)}`
+  if (finding.kind === 'wrong-law') {
+    const better = readsAs[0]
+    // The judge names a winner in its sentence only when it is clearly ahead; then so does the sheet.
+    return better && better.law !== claim.law && finding.text.includes('reads as')
+      ? `Reads as ${lawWords[better.law]}, not ${lawWords[claim.law]}`
+      : shorten(finding.text)
+  }
+  return shorten(finding.text)
+}
+
+function breakingDrawings({ keys }: CheckResult): string {
+  const breaking = keys.filter((key) => key.breaks)
+  return breaking.length === 1 ? `Frame ${breaking[0]!.frame} is off the line` : `${breaking.length} drawings are off the line`
+}
+
+const sized = (value: number, unit: string, digits = 2) =>
+  unit === 'm' ? metres(value, digits) : `${roundFigure(value, digits)} ${unit}`
+
+/** The judge's sentence up to where it goes into detail. */
+const shorten = (sentence: string) => sentence.split(/\s*\(|[;:]|, (?:and|so) |\.$/)[0]!.trim()
