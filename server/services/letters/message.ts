@@ -15,7 +15,7 @@ interface Addressed {
 /** A stored letter as the mail library takes it. Every text that comes near a header is made one line first. */
 export function messageOf(letter: Letter, { from, to, listId, baseUrl, text, html }: Addressed): MailDataOptions {
   const list: Record<string, string> = listId
-    ? { 'List-Id': `<${headerLine(listId)}.${domainOf(from)}>`, 'List-Unsubscribe': `<${baseUrl}/me>` }
+    ? { 'List-ID': `<${headerLine(listId)}.${domainOf(from)}>`, 'List-Unsubscribe': `<${baseUrl}/me>` }
     : {}
   return {
     from,

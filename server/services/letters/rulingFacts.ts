@@ -29,7 +29,8 @@ export async function rulingFacts(ruling: Ruling, baseUrl: string): Promise<{ fa
   const production = await Production.findByPk(shot.productionId, { rejectOnEmpty: true })
   const flags = await Flag.findAll({ where: { takeId: take.id, liftedAt: null }, order: [['fromFrame', 'ASC'], ['id', 'ASC']] })
   const waivers = await Waiver.findAll({ where: { takeId: take.id, liftedAt: null } })
-  const people = await Person.findAll({ attributes: ['id', 'name'], where: { id: [...new Set([ruling.personId, take.personId, shot.animatorId, ...flags.map((flag) => flag.personId)])].filter((id) => id !== null) } })
+  const ids = [ruling.personId, take.personId, shot.animatorId, ...flags.map((flag) => flag.personId)].filter((id) => id !== null)
+  const people = await Person.findAll({ attributes: ['id', 'name'], where: { id: [...new Set(ids)] } })
   const nameOf = (id: string | null) => people.find((person) => person.id === id)?.name ?? null
 
   const told = new Set<Finding>()
@@ -45,9 +46,10 @@ export async function rulingFacts(ruling: Ruling, baseUrl: string): Promise<{ fa
     }
   })
   // A take that stands needs no list of what is wrong with it.
-  const others = ruling.decision === 'stands' ? [] : take.answer.findings.filter(
+  const untold = take.answer.findings.filter(
     (finding) => !told.has(finding) && !waivers.some((waiver) => sameFinding(finding, waiver.finding)),
   )
+  const others = ruling.decision === 'stands' ? [] : untold
   return {
     shotId: shot.id,
     facts: {
@@ -62,6 +64,7 @@ export async function rulingFacts(ruling: Ruling, baseUrl: string): Promise<{ fa
       animator: nameOf(shot.animatorId ?? take.personId),
       flags: flagged,
       findings: others.slice(0, MOST_FINDINGS).map(({ frames, text }) => ({ frame: frames[0] ?? null, text })),
+      more: { flags: flags.length - flagged.length, findings: Math.max(0, others.length - MOST_FINDINGS) },
     },
   }
 }

@@ -28,6 +28,8 @@ export interface RulingFacts {
   flags: FlaggedFrames[]
   /** The judge's sentences that no flag speaks of and nobody waived. */
   findings: { frame: number | null; text: string }[]
+  /** How many of each are left out, for the letter's sake: said, never hidden. */
+  more: { flags: number; findings: number }
 }
 export interface Composed {
   subject: string
@@ -56,6 +58,8 @@ function whenOf(at: string): string {
   return `${day}, ${at.slice(11, 16)} UTC`
 }
 
+const moreOf = (count: number, thing: string) => `And ${count} more ${thing}${count === 1 ? '' : 's'}, on the shot’s page.`
+
 function whatNext({ decision, animator, shot, take }: RulingFacts): string {
   if (decision === 'stands') return `${shot.code} is settled. Nothing more is asked.`
   if (decision === 'stands-with-notes') return `${shot.code} is settled. The note and the flags go along into the work that follows.`
@@ -79,10 +83,12 @@ function asText(facts: RulingFacts): string {
   ]
   if (facts.note) parts.push(`NOTE\n${facts.note.replace(/\r\n?/g, '\n')}`)
   if (facts.flags.length > 0) parts.push(`FLAGGED FRAMES\n${facts.flags.map((flag) => flagText(facts, flag)).join('\n\n')}`)
+  if (facts.more.flags > 0) parts.push(moreOf(facts.more.flags, 'flag'))
   if (facts.findings.length > 0)
     parts.push(
       `WHAT ELSE THE JUDGE FOUND\n${facts.findings.map(({ frame, text }) => `- ${text}${frame === null ? '' : `\n  ${takeLink(facts, frame)}`}`).join('\n')}`,
     )
+  if (facts.more.findings > 0) parts.push(moreOf(facts.more.findings, 'finding'))
   parts.push(`WHAT HAPPENS NEXT\n${whatNext(facts)}\n${takeLink(facts)}`)
   parts.push(`-- \nYou work on this shot, coordinate the production or took part in a thread.\nWhich letters you get: ${facts.baseUrl}/me`)
   return `${parts.join('\n\n')}\n`
@@ -127,7 +133,8 @@ function flagTable(facts: RulingFacts): Html {
 <table style="border-collapse:collapse;width:100%">
 <tbody>
 ${rows}</tbody>
-</table>`
+</table>
+${facts.more.flags > 0 ? html`<p>${moreOf(facts.more.flags, 'flag')}</p>` : ''}`
 }
 
 function findingList(facts: RulingFacts): Html {
@@ -138,5 +145,6 @@ function findingList(facts: RulingFacts): Html {
   )
   return html`${heading('What else the judge found')}
 <ul style="margin:0;padding-left:20px">
-${items}</ul>`
+${items}</ul>
+${facts.more.findings > 0 ? html`<p>${moreOf(facts.more.findings, 'finding')}</p>` : ''}`
 }
