@@ -64,7 +64,8 @@ export default defineNuxtConfig({
     experimental: { websocket: true },
     ...(buildDir ? { output: { dir: `${buildDir}/output` } } : {}),
     externals: { external: ['sequelize', 'sqlite3'] },
-    serverAssets: [{ baseName: 'migrations', dir: './server/migrations' }],
+    // Taken from the server's folder, which is Nitro's own root.
+    serverAssets: [{ baseName: 'migrations', dir: './migrations' }],
     typescript: { strict: true },
   },
   typescript: {
