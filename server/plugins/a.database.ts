@@ -3,6 +3,7 @@ import { initModels } from '~/server/models'
 import { openDatabase, row } from '~/server/models/database'
 import { migrate, NewerDatabase } from '~/server/models/migrate'
 import type { Migration } from '~/server/models/migrate'
+import { openAsDemo } from '~/server/services/demo'
 import { log } from '~/server/utils/log'
 import { setReady } from '~/server/utils/ready'
 import { settings } from '~/server/utils/settings'
@@ -21,6 +22,7 @@ async function open(): Promise<void> {
     await refuseOldSqlite()
     await migrate(sequelize, await shippedMigrations())
     initModels(sequelize)
+    await openAsDemo(settings().demoWanted)
   } catch (problem) {
     // One clear sentence and out: a board without its database can answer nothing.
     console.error(problem instanceof NewerDatabase ? problem.message : `The database cannot be opened: ${String(problem)}`)
