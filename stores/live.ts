@@ -24,6 +24,8 @@ const TRY_AGAIN = 2_000
 /** A blink of the connection is not worth a notice. */
 const GRACE = 3_000
 const POLL_EVERY = 20_000
+/** A sign-out on this page is heard over the socket before its answer is here. */
+const OWN_SIGN_OUT = 400
 /** Going from page to page keeps the socket; staying away lets it go. */
 const LINGER = 5_000
 
@@ -199,7 +201,12 @@ export const useLiveStore = defineStore('live', () => {
   function signedOut(): void {
     if (followers.size === 0) return
     hangUp()
-    void nuxt.runWithContext(() => navigateTo('/sign-in', { external: true }))
+    const { fullPath } = nuxt.$router.currentRoute.value
+    setTimeout(() => {
+      // Who signs out on this very page is shown the way by that.
+      if (nuxt.$router.currentRoute.value.fullPath !== fullPath) return
+      void nuxt.runWithContext(() => navigateTo({ path: '/sign-in', query: { to: fullPath } }, { external: true }))
+    }, OWN_SIGN_OUT)
   }
   function rightsChanged(reason: 'membership' | 'role'): void {
     hangUp()
@@ -221,5 +228,13 @@ export const useLiveStore = defineStore('live', () => {
     })
   }
 
-  return { state, heardAt, lookersOf, follow, lookAgain, hangUp }
+  return {
+    state: computed(() => state.value),
+    heardAt: computed(() => heardAt.value),
+    lookersOf,
+    follow,
+    lookAgain,
+    catchUp: syncAll,
+    hangUp,
+  }
 })
