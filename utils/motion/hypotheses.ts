@@ -78,7 +78,10 @@ function extend(series: Series, story: Story, care: Care, most: number): Story {
     const key = worst?.[0]
     if (key === undefined) break
     const out = [...now.out, key].sort((a, b) => a - b)
-    now = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
+    const next = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
+    // A drawing that was put back at once would be set aside again for ever.
+    if (next.out.length <= now.out.length) break
+    now = next
   }
   return now
 }
