@@ -1,9 +1,10 @@
 import type { H3Event } from 'h3'
-import { getCookie } from 'h3'
+import { deleteCookie, getCookie } from 'h3'
 import { useRuntimeConfig } from '#imports'
 import { clearUserSession, getUserSession, setUserSession } from '#sealed-cookie'
 import { v7 as uuid } from 'uuid'
-import { row, run, write } from '~/server/models/database'
+import { afterCommit, row, rows, run, write } from '~/server/models/database'
+import { news } from '~/server/services/news'
 import { fail } from './fail'
 import { hashSecret, newSecret } from './secret'
 
@@ -31,6 +32,11 @@ interface SessionRow {
   keeper: number
 }
 
+/** Has a session run out by itself? @param now milliseconds since 1970 */
+export function isOver(session: { createdAt: string; seenAt: string }, now: number): boolean {
+  return now - Date.parse(session.seenAt) > IDLE_DAYS * DAY || now - Date.parse(session.createdAt) > ABSOLUTE_DAYS * DAY
+}
+
 /** The person behind a session token, or null when the session ended, grew old, or its person was disabled. */
 export async function askerOf(token: string | undefined): Promise<Asker | null> {
   if (!token) return null
@@ -43,15 +49,17 @@ export async function askerOf(token: string | undefined): Promise<Asker | null> 
   )
   if (!found) return null
   const now = Date.now()
-  if (now - Date.parse(found.seenAt) > IDLE_DAYS * DAY || now - Date.parse(found.createdAt) > ABSOLUTE_DAYS * DAY) return null
+  if (isOver(found, now)) return null
   if (now - Date.parse(found.seenAt) > SEEN_EVERY)
     await write(() => run('UPDATE sessions SET seen_at = :at WHERE id = :id', { at: new Date(now).toISOString(), id: found.sessionId }))
   return { id: found.id, name: found.name, email: found.email, keeper: found.keeper === 1, sessionId: found.sessionId }
 }
 
+const cookieName = (event: H3Event) => useRuntimeConfig(event).session.name ?? 'tiltyard'
+
 /** The token inside the sealed cookie, if there is one. Asking must not set a cookie where none was. */
 export async function sessionToken(event: H3Event): Promise<string | undefined> {
-  if (getCookie(event, useRuntimeConfig(event).session.name ?? '') === undefined) return undefined
+  if (getCookie(event, cookieName(event)) === undefined) return undefined
   return (await getUserSession(event)).secure?.token
 }
 
@@ -72,13 +80,58 @@ export async function startSession(event: H3Event, personId: string, device: str
   const token = newSecret()
   const at = new Date().toISOString()
   await write(async () => {
-    if (before) await run('UPDATE sessions SET ended_at = :at WHERE token_hash = :hash AND ended_at IS NULL', { at, hash: hashSecret(before) })
+    if (before) await endSessions('token_hash = :hash', { hash: hashSecret(before) })
     await run(
       `INSERT INTO sessions (id, token_hash, person_id, device, address, created_at, seen_at)
        VALUES (:id, :hash, :personId, :device, :address, :at, :at)`,
       { id: uuid(), hash: hashSecret(token), personId, device: device.slice(0, 200), address, at },
     )
   })
+  await putInCookie(event, token)
+}
+
+/** The same session under a new token: a copy of the cookie that somebody took before is worth nothing from here on. */
+export async function renewSession(event: H3Event, sessionId: string): Promise<void> {
+  const token = newSecret()
+  await write(() => run('UPDATE sessions SET token_hash = :hash WHERE id = :id', { id: sessionId, hash: hashSecret(token) }))
+  await putInCookie(event, token)
+}
+
+/** Ends the session that this browser has, if any, and takes the cookie away. */
+export async function closeSession(event: H3Event): Promise<void> {
+  const token = await sessionToken(event)
+  if (token) await write(() => endSessions('token_hash = :hash', { hash: hashSecret(token) }))
+  if (getCookie(event, cookieName(event)) === undefined) return
+  await clearUserSession(event)
+  // The package leaves an empty cookie behind: take it away altogether.
+  deleteCookie(event, cookieName(event), { ...useRuntimeConfig(event).session.cookie, path: '/' })
+  event.context.asker = undefined
+}
+
+/** Ends one session of this person; its sockets go after the commit. @returns false when there is no such session. */
+export async function endOneSession(sessionId: string, personId: string): Promise<boolean> {
+  return (await endSessions('id = :sessionId AND person_id = :personId', { sessionId, personId })) > 0
+}
+
+/** Ends every session of this person, but for one that is kept; all their sockets go after the commit. */
+export async function endSessionsOf(personId: string, exceptSessionId?: string): Promise<number> {
+  const ended = await endSessions('person_id = :personId AND id <> :kept', { personId, kept: exceptSessionId ?? '' })
+  afterCommit(() => news.emit('personOut', { personId, exceptSessionId }))
+  return ended
+}
+
+type Ends = 'token_hash = :hash' | 'id = :sessionId AND person_id = :personId' | 'person_id = :personId AND id <> :kept'
+
+async function endSessions(which: Ends, values: Record<string, string>): Promise<number> {
+  const ended = await rows<{ id: string }>(`UPDATE sessions SET ended_at = :at WHERE ${which} AND ended_at IS NULL RETURNING id`, {
+    ...values,
+    at: new Date().toISOString(),
+  })
+  for (const { id } of ended) afterCommit(() => news.emit('sessionEnded', { sessionId: id }))
+  return ended.length
+}
+
+async function putInCookie(event: H3Event, token: string): Promise<void> {
   // replace-by-merge is this package's way: clear first, so that nothing of an older cookie stays.
   await clearUserSession(event)
   await setUserSession(event, { secure: { token } })

@@ -80,7 +80,7 @@ export interface SessionAnswer {
   /** True while an installation has no keeper yet. */
   empty: boolean
   /** Offered on the sign-in page of a demo installation only. */
-  demoAccounts: { email: string; role: string; name: string }[]
+  demoAccounts: { email: string; role: string; name: string; password: string }[]
 }
 export interface OwnSession {
   id: string

@@ -1,0 +1,50 @@
+import type { FetchError } from 'ofetch'
+import type { Refusal } from '~/utils/contracts/common'
+
+/**
+ * Sending a form: one at a time, what the server says of each field beside that field, and the focus on the first that is
+ * wrong. Put `form` on the form itself.
+ */
+export function useSubmit() {
+  const form = ref<HTMLFormElement | null>(null)
+  const busy = ref(false)
+  /** What to change, by the field's name. */
+  const errors = ref<Record<string, string>>({})
+  /** What went wrong with the whole. */
+  const problem = ref('')
+
+  /** Runs `send` and answers what it gave, or undefined after a refusal. @param fields names that the form shows */
+  async function submit<T>(send: () => Promise<T>, fields: readonly string[] = []): Promise<T | undefined> {
+    if (busy.value) return undefined
+    busy.value = true
+    errors.value = {}
+    problem.value = ''
+    try {
+      return await send()
+    } catch (failure) {
+      tell((failure as FetchError<Refusal>).data, fields)
+      await nextTick()
+      form.value?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus()
+      return undefined
+    } finally {
+      busy.value = false
+    }
+  }
+
+  function tell(refusal: Refusal | undefined, fields: readonly string[]) {
+    const issues = refusal?.data?.issues ?? []
+    errors.value = Object.fromEntries(issues.toReversed().map(({ path, message }) => [path, message]))
+    // Whatever no field of the form stands for is said for the whole.
+    const homeless = issues.find(({ path }) => !fields.includes(path))
+    if (issues.length > 0 && !homeless) return
+    problem.value = homeless?.message ?? refusal?.message ?? 'The server did not answer. Check the connection, then try again.'
+  }
+
+  /** What stands in the form right now, by name: typed, or filled in by a password manager before the page came alive. */
+  function filled<Name extends string>(...names: Name[]): Record<Name, string> {
+    const data = new FormData(form.value ?? undefined)
+    return Object.fromEntries(names.map((name) => [name, String(data.get(name) ?? '')])) as Record<Name, string>
+  }
+
+  return { form, busy, errors, problem, submit, filled }
+}
