@@ -1,6 +1,6 @@
 import type { Day, Time } from '~/utils/contracts/common'
 import type { Claim, Decision, Desk } from '~/utils/contracts/production'
-import type { Law, LawMisfit, Measure, Roll, Subject, Verdict } from '~/utils/motion/types'
+import type { FindingKind, JudgedKey, Law, LawMisfit, Measure, Roll, Subject, Verdict } from '~/utils/motion/types'
 
 /** The words and figures that every screen shares, so that one thing has one name. Nothing here depends on a locale or a clock. */
 
@@ -207,4 +207,49 @@ export function dueWords(day: Day, today: Day): { text: string; plain: string; l
   // A week's day names are unmistakable up to six days ahead.
   if (ahead < 7) return { text: `due ${DAYS[(dayNumber(day) + 4) % 7]}`, plain, late: false }
   return { text: plain, plain, late: false }
+}
+
+/** What a finding is called in a row of the key table. */
+export const findingWords: Record<FindingKind, string> = {
+  misplaced: 'misplaced',
+  held: 'held',
+  skipped: 'one skipped',
+  backward: 'runs backward',
+  'wrong-law': 'another law',
+  'wrong-scale': 'another size',
+}
+
+/** "2.7 frames early", "on the line"; empty where the law stands still. */
+export function earlyOrLateInFrames(offsetFrames: number | null): string {
+  if (offsetFrames === null) return ''
+  const amount = Math.abs(offsetFrames)
+  if (Number(amount.toFixed(1)) === 0) return 'on the line'
+  return `${frameCount(Number(amount.toFixed(1)))} ${offsetFrames > 0 ? 'early' : 'late'}`
+}
+
+/**
+ * Frames off, or null where they say nothing: while the law hardly moves, an offset too small to print is many frames.
+ */
+export function tellingFrames(key: Pick<JudgedKey, 'offset' | 'offsetFrames' | 'breaks'>, decimals: number): number | null {
+  if (key.offset === null || key.offsetFrames === null) return null
+  const unseen = !key.breaks && Number(key.offset.toFixed(decimals)) === 0
+  return unseen && Math.abs(key.offsetFrames) >= 0.5 ? null : key.offsetFrames
+}
+
+/** One drawing in one sentence, for whoever hears the drawings instead of seeing them. */
+export function keyInWords(key: JudgedKey, unit: string, decimals = 1): string {
+  const parts = [`posted ${withUnit(key.reading, unit, decimals)}`]
+  if (key.law !== null) parts.push(`law ${withUnit(key.law, unit, decimals)}`)
+  const off = earlyOrLateInFrames(tellingFrames(key, decimals))
+  if (off) parts.push(off)
+  if (key.breaks) parts.push('breaks')
+  return `Frame ${key.frame}: ${parts.join(', ')}`
+}
+
+/** Decimals that suit the readings of a whole list. */
+export function readingDecimals(keys: readonly Pick<JudgedKey, 'reading'>[]): number {
+  if (keys.length === 0) return 1
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY]
+  for (const { reading } of keys) [low, high] = [Math.min(low, reading), Math.max(high, reading)]
+  return decimalsFor(high - low)
 }

@@ -1,0 +1,58 @@
+import type { Claim } from '~/utils/contracts/production'
+import { claimedSize, frameCount, lawWords, metres, roundFigure, sizeFigure, verdictWords } from '~/utils/drawing/words'
+import type { CheckResult, SizeReading } from '~/utils/motion/types'
+
+/** The sentence at the head of a take: what the list is, what it reads as, what to do about it. */
+
+type SaidClaim = Pick<Claim, 'law' | 'subject' | 'unit'>
+
+/** "8.2 m (7.8–8.6)". */
+export function sizeWithInterval(size: SizeReading): string {
+  // Both ends in the unit that the value is said in: 4.6 cm (4.1–5.2).
+  const small = size.unit === 'm' && size.value < 0.0995
+  const ends = (digits: number) => [size.low, size.high].map((value) => roundFigure(small ? value * 100 : value, digits))
+  // A narrow interval needs a digit more to be one; one narrower still says nothing.
+  const [low, high] = [2, 3].map(ends).find(([from, to]) => from !== to) ?? []
+  return low && size.low > 0 ? `${sizeFigure(size.value, size.unit)} (${low}–${high})` : sizeFigure(size.value, size.unit)
+}
+
+/** Words for the number of drawings that break, apart from those that a finding already tells of. */
+const brokenCount = (answer: CheckResult) => answer.keys.filter((key) => key.breaks).length
+
+function withArticle(law: string): string {
+  return /^[aeiou]/.test(law) ? `an ${law}` : `a ${law}`
+}
+
+function lawAsMotion(claim: SaidClaim): string {
+  if (claim.law === 'topple' || claim.law === 'pendulum') return withArticle(lawWords[claim.law])
+  return claim.law === 'steady' ? 'steady' : 'the odd rule'
+}
+
+function wrongScale(answer: CheckResult, claim: SaidClaim): string {
+  const { size } = answer
+  const claimed = claimedSize(claim.subject)
+  if (!size || size.unit !== 'm' || claimed === null) return answer.findings.find(({ kind }) => kind === 'wrong-scale')!.text
+  const needs = answer.claim
+    ? `: that size needs ${frameCount(answer.claim.frames, 0)}, this takes ${roundFigure(answer.claim.usedFrames, 4)}`
+    : ''
+  return `The shape is ${lawAsMotion(claim)}, but it reads as ${sizeWithInterval(size)}, not ${metres(claimed, 3)}${needs}.`
+}
+
+/** The verdict's word and the rest of its sentence. */
+export function verdictInWords(answer: CheckResult, claim: SaidClaim): { word: string; rest: string } {
+  if (answer.verdict === 'undecided') return { word: `${verdictWords.undecided}:`, rest: answer.reason ?? 'the list is too short.' }
+  const word = `${verdictWords[answer.verdict]}.`
+  if (answer.verdict === 'holds') {
+    const size = answer.size && answer.size.unit === 'm' ? ` of ${sizeWithInterval(answer.size)}` : ''
+    return { word, rest: `Every drawing sits inside its allowance: it reads as ${lawAsMotion(claim)}${size}.` }
+  }
+  if (answer.findings.some(({ kind }) => kind === 'wrong-law')) return { word, rest: answer.findings.find(({ kind }) => kind === 'wrong-law')!.text }
+  if (answer.findings.some(({ kind }) => kind === 'wrong-scale')) return { word, rest: wrongScale(answer, claim) }
+  const [first, ...others] = answer.findings
+  if (!first) {
+    const count = brokenCount(answer)
+    return { word, rest: `${count} ${count === 1 ? 'drawing sits' : 'drawings sit'} outside ${count === 1 ? 'its' : 'their'} allowance.` }
+  }
+  const more = others.length === 0 ? '' : others.length === 1 ? ' One more finding below.' : ` ${others.length} more findings below.`
+  return { word, rest: first.text + more }
+}
