@@ -8,8 +8,8 @@ import { deliver, outcomeOf } from '~/server/services/letters/deliver'
 import { sendAgain, showLetter } from '~/server/services/letters/mailRoom'
 import { MOST_ATTEMPTS, paceOf } from '~/server/services/letters/pace'
 import { claimLetter, nextDue, settleLetter } from '~/server/services/letters/queue'
-import { openHouse, rule, SECRET, tellStory } from './house'
-import type { Story } from './house'
+import { openHouse, rule, SECRET, tellStory } from '../../helpers/rulingStory'
+import type { Story } from '../../helpers/rulingStory'
 
 const pace = paceOf(30)
 const never = new AbortController().signal

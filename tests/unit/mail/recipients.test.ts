@@ -2,7 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { Letter, Membership, Ruling } from '~/server/models'
 import { write } from '~/server/models/database'
 import { oweRulingLetters, rulingReaders } from '~/server/services/letters'
-import { openHouse, postTake, rule, talk, tellStory } from './house'
+import { openHouse, postTake, rule, talk, tellStory } from '../../helpers/rulingStory'
 
 let close: () => Promise<void>
 beforeAll(async () => {

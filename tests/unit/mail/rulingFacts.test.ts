@@ -1,10 +1,11 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { v7 as uuid } from 'uuid'
 import { Letter, Waiver } from '~/server/models'
+import { write } from '~/server/models/database'
 import { oweRulingLetters } from '~/server/services/letters'
 import { findingsOfFlag, rulingFacts } from '~/server/services/letters/rulingFacts'
 import type { Finding } from '~/utils/motion/types'
-import { flag, openHouse, rule, tellStory } from './house'
+import { flag, openHouse, rule, tellStory } from '../../helpers/rulingStory'
 
 let close: () => Promise<void>
 beforeAll(async () => {
@@ -55,7 +56,9 @@ describe('what a letter tells', () => {
 
   it('stays readable with 300 flags and says how many more there are', async () => {
     const { take, people, production } = await tellStory()
-    for (let i = 0; i < 300; i++) await flag(take, people.sam!, 1001 + i, 1001 + i, 'x'.repeat(1000))
+    await write(async () => {
+      for (let i = 0; i < 300; i++) await flag(take, people.sam!, 1001 + i, 1001 + i, 'x'.repeat(1000))
+    })
     const letter = await rule(take, people.sam!, async (ruling) => {
       await oweRulingLetters(ruling)
       return Letter.findOne({ where: { rulingId: ruling.id }, rejectOnEmpty: true })
