@@ -81,9 +81,38 @@ export function isWriting(): boolean {
 export async function write<T>(task: () => Promise<T>): Promise<T> {
   if (isWriting()) return task()
   const after: (() => void)[] = []
-  const answer = await writer.runExclusive(() => waiting.run(after, () => database().transaction(() => task())))
+  const answer = await writer.runExclusive(() => waiting.run(after, () => transact(task)))
   for (const news of after) tell(news)
   return answer
+}
+
+async function transact<T>(task: () => Promise<T>): Promise<T> {
+  let own: Transaction | undefined
+  try {
+    return await database().transaction((transaction) => {
+      own = transaction
+      return task()
+    })
+  } catch (problem) {
+    if (own) await abandon(own)
+    throw problem
+  }
+}
+
+type Held = { id: string; finished?: string; connection?: sqlite3.Database & { uuid?: string } }
+type Keeper = { releaseConnection(connection: sqlite3.Database): void }
+
+/**
+ * Sequelize marks a transaction whose COMMIT failed (a full disk) as committed and leaves its connection open, holding
+ * SQLite's write lock for good. Roll it back and close it, so that the next writer can go on.
+ */
+async function abandon(transaction: Transaction): Promise<void> {
+  const { id, finished, connection } = transaction as unknown as Held
+  if (finished !== 'commit' || !connection) return
+  await new Promise<void>((done) => connection.exec('ROLLBACK', () => done()))
+  // The name that Sequelize knows the connection by: it closes and forgets it.
+  connection.uuid = id
+  ;(database().connectionManager as unknown as Keeper).releaseConnection(connection)
 }
 
 /** Runs `task` once the surrounding `write` is committed (at once when there is none); never after a rollback. */
@@ -102,11 +131,37 @@ function tell(task: () => void): void {
   }
 }
 
-type Values = Record<string, string | number | null | readonly (string | number)[]>
+type Value = string | number | null
+type Values = Record<string, Value | readonly Value[]>
+
+/**
+ * Our `:name` to what SQLite binds: a value never becomes part of the SQL text. A list stands for its members, as `IN` wants
+ * them.
+ */
+function bound(sql: string, values: Values): { sql: string; bind: Record<string, Value> } {
+  const bind: Record<string, Value> = {}
+  const text = sql.replace(/:([a-zA-Z]\w*)/g, (_, name: string) => {
+    const value = values[name]
+    if (value === undefined) throw new Error(`Nothing stands for :${name}.`)
+    const members = Array.isArray(value) ? (value as readonly Value[]) : null
+    if (!members) {
+      bind[name] = value as Value
+      return `$${name}`
+    }
+    return members
+      .map((member, i) => {
+        bind[`${name}_${i}`] = member
+        return `$${name}_${i}`
+      })
+      .join(', ')
+  })
+  return { sql: text, bind }
+}
 
 /** Rows of a SELECT with named parameters (`:name`). Never build SQL from what a person sent. */
 export async function rows<T extends object>(sql: string, values: Values = {}): Promise<T[]> {
-  return database().query<T>(sql, { replacements: values as Record<string, unknown>, type: QueryTypes.SELECT })
+  const { sql: text, bind } = bound(sql, values)
+  return database().query<T>(text, { bind, type: QueryTypes.SELECT })
 }
 
 /** The first row of a SELECT, or null. */
@@ -116,9 +171,7 @@ export async function row<T extends object>(sql: string, values: Values = {}): P
 
 /** Runs an INSERT, UPDATE or DELETE with named parameters; answers how many rows it changed. */
 export async function run(sql: string, values: Values = {}): Promise<number> {
-  const [, changes] = await database().query(sql, {
-    replacements: values as Record<string, unknown>,
-    type: QueryTypes.UPDATE,
-  })
+  const { sql: text, bind } = bound(sql, values)
+  const [, changes] = await database().query(text, { bind, type: QueryTypes.UPDATE })
   return changes
 }
