@@ -138,7 +138,7 @@ export class Outbox {
       if (answer === 'done') {
         this.#forget(next.clientId)
         this.#change(next.clientId, { state: 'sent' })
-      } else {
+      } else if (this.#list.some(({ clientId }) => clientId === next.clientId)) {
         // Only this one's own place changes: whatever came from the server meanwhile stays as it is.
         this.#keep({ ...next, problem: answer.refused })
         this.#change(next.clientId, { state: 'failed', problem: answer.refused })
