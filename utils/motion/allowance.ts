@@ -6,7 +6,9 @@
  */
 export function allowances(line: Float64Array, slop: number, tolerance: number): Float64Array {
   const n = line.length
-  return line.map((_, i) => allowanceAt(line, i, n, slop, tolerance))
+  const out = new Float64Array(n)
+  for (let i = 0; i < n; i++) out[i] = allowanceAt(line, i, n, slop, tolerance)
+  return out
 }
 
 /** The same for one key. */

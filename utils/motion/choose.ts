@@ -1,5 +1,6 @@
 /** Which story is told, and whether the claimed law is the one to tell it under. */
 import { allowances } from './allowance'
+import { PASSING } from './fit'
 import { charge, pencil, plainFit, strain } from './hypotheses'
 import type { Care, Story } from './hypotheses'
 import { LAWS } from './laws/index'
@@ -11,6 +12,7 @@ import type { Law } from './types'
 const MOST_PER_DRAWING = 7
 /** How much better another law must do, nats, before the claimed one is doubted (e⁸ is about three thousand to one). */
 const DOUBT = 8
+const DOUBT_WITH_FAULTS = 3
 /** Misfit under which nobody would doubt the claimed law, whatever else fits. */
 const UNNOTICED = 0.5
 
@@ -78,7 +80,7 @@ export interface Choice {
 /** Fits every law that the measure can take and picks the claimed law's story. */
 export function weigh(series: Series, law: Law, laws: readonly Law[], told: readonly Story[], care: Care): Choice {
   const others = laws.filter(other => other !== law).map((other) => {
-    const { fit } = plainFit(series, LAWS[other], care, 12)
+    const { fit } = plainFit(series, LAWS[other], care, PASSING)
     return { law: other, story: { out: [], shift: null, fit, breaking: 0 } satisfies Story }
   })
   const sigma = pencil([...told, ...others.map(other => other.story)], series.n, care)
@@ -121,8 +123,10 @@ export function opine(series: Series, choice: Choice, care: Care, range: number)
   }
   const [rival] = rivals
   if (!acceptable) return { kind: 'wrong-law', reads: rival ? simplest(rivals, rival).law : null }
-  const spoiled = claimed.story.out.length > 0 || claimed.story.shift !== null || claimed.misfit > UNNOTICED
-  if (spoiled && rival && rival.charge + DOUBT < claimed.charge) return { kind: 'wrong-law', reads: simplest(rivals, rival).law }
+  const faulted = claimed.story.out.length > 0 || claimed.story.shift !== null
+  // A fault under the claimed law has been charged for already; without one, only what could be noticed is held against it.
+  const margin = faulted ? DOUBT_WITH_FAULTS : DOUBT
+  if ((faulted || claimed.misfit > UNNOTICED) && rival && rival.charge + margin < claimed.charge) return { kind: 'wrong-law', reads: simplest(rivals, rival).law }
   return { kind: 'law-holds' }
 }
 

@@ -16,6 +16,21 @@ export interface Fit {
   converged: boolean
 }
 
+/** How hard to look. */
+export interface Effort {
+  /** Steps at most. */
+  steps: number
+  /** A step that saves no larger share of the cost than this is the last. */
+  enough: number
+}
+
+/** For the law that the list is judged by. */
+export const THOROUGH: Effort = { steps: 25, enough: 1e-7 }
+/** For a story that begins from a fit in hand. */
+export const BRIEF: Effort = { steps: 10, enough: 1e-5 }
+/** For laws that are only there to be compared with: a misfit of thirty need not be known to the last digit. */
+export const PASSING: Effort = { steps: 8, enough: 0.02 }
+
 /** Keeps a search inside the range where the law means something; for linear laws nothing is held back. */
 function confine(model: LawModel, numbers: Float64Array): Float64Array {
   if (!model.linear) numbers[0] = Math.min(MOST_LOG, Math.max(LEAST_LOG, numbers[0] as number))
@@ -57,8 +72,9 @@ function normalOf(trace: Trace, y: Float64Array, weights: Float64Array, size: nu
  * finite numbers when it was given finite ones.
  */
 export function refine(
-  model: LawModel, series: Series, x: Float64Array, y: Float64Array, weights: Float64Array, from: Float64Array, steps: number,
+  model: LawModel, series: Series, x: Float64Array, y: Float64Array, weights: Float64Array, from: Float64Array, effort: Effort,
 ): Fit {
+  const { steps, enough } = effort
   const size = model.size
   let numbers = confine(model, from.slice())
   let trace = model.trace(series, numbers, x, true)
@@ -68,7 +84,7 @@ export function refine(
   let converged = false
   for (let step = 0; step < steps && !converged; step++) {
     let moved = false
-    for (let attempt = 0; attempt < 8; attempt++) {
+    for (let attempt = 0; attempt < 6; attempt++) {
       const damped = a.slice()
       for (let p = 0; p < size; p++) damped[size * p + p] = (damped[size * p + p] as number) * (1 + damping)
       const move = solve3(damped, b, size)
@@ -81,7 +97,7 @@ export function refine(
       const nextTrace = model.trace(series, next, x, true)
       const nextCost = costOf(nextTrace, y, weights)
       if (nextCost <= cost) {
-        converged = cost - nextCost <= 1e-9 * cost
+        converged = cost - nextCost <= enough * cost
         numbers = next
         trace = nextTrace
         cost = nextCost

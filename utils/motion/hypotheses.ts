@@ -4,8 +4,8 @@
  * assumes one more thing must explain the list e^charge times better.
  */
 import { allowances } from './allowance'
-import { refine } from './fit'
-import type { Fit } from './fit'
+import { BRIEF, THOROUGH, refine } from './fit'
+import type { Effort, Fit } from './fit'
 import type { LawModel } from './laws/model'
 import { bestShifts, shiftedTimes, worstDrawings } from './scan'
 import type { Shift } from './scan'
@@ -33,8 +33,6 @@ export interface Care {
   least: number
 }
 
-const ALL_STEPS = 25
-
 function weightsWithout(n: number, out: readonly number[]): Float64Array {
   const weights = new Float64Array(n).fill(1)
   for (const i of out) weights[i] = 0
@@ -44,11 +42,12 @@ function weightsWithout(n: number, out: readonly number[]): Float64Array {
 /** Offsets over allowance under a story, with the law's own gaps. */
 export function strain(series: Series, fit: Fit, care: Care): Float64Array {
   const allowed = allowances(fit.trace.value, care.slop, care.tolerance)
-  return series.y.map((value, i) => {
-    const off = Math.abs(value - (fit.trace.value[i] as number))
+  for (let i = 0; i < series.n; i++) {
+    const off = Math.abs((series.y[i] as number) - (fit.trace.value[i] as number))
     const allowance = allowed[i] as number
-    return off === 0 ? 0 : allowance > 0 ? off / allowance : Number.MAX_VALUE
-  })
+    allowed[i] = off === 0 ? 0 : allowance > 0 ? off / allowance : Number.MAX_VALUE
+  }
+  return allowed
 }
 
 /** Tells a story; drawings that turn out not to break once the line is free of the others are put back. */
@@ -63,27 +62,40 @@ function tell(series: Series, model: LawModel, out: number[], shift: Shift | nul
 function tellExactly(
   series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care,
 ): Story {
-  const fit = refine(model, series, shiftedTimes(series.x, shift), series.y, weightsWithout(series.n, out), from, ALL_STEPS)
+  const fit = refine(model, series, shiftedTimes(series.x, shift), series.y, weightsWithout(series.n, out), from, BRIEF)
   const strained = strain(series, fit, care)
   let breaking = 0
   for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !out.includes(i)) breaking++
   return { out, shift, fit, breaking }
 }
 
-/** Sets drawings that still break aside, the worst for its leverage first, until none is left or more than `most` are out. */
+/**
+ * Sets drawings that still break aside until none is left or more than `most` are out: one at a time, the worst for its leverage first,
+ * while they are few; by the handful in a long list.
+ */
 function extend(series: Series, story: Story, care: Care, most: number): Story {
   let now = story
   while (now.breaking > 0 && now.out.length < most) {
-    const [worst] = worstDrawings(now.fit, series.y, weightsWithout(series.n, now.out))
-    const key = worst?.[0]
-    if (key === undefined) break
-    const out = [...now.out, key].sort((a, b) => a - b)
+    // A list that breaks all over is not a list with a few bad drawings.
+    if (now.breaking > 3 * (most - now.out.length) + 2) break
+    const more = now.breaking <= 8 ? worstDrawings(now.fit, series.y, weightsWithout(series.n, now.out))[0] : worstBreaking(series, now, care)
+    if (!more || more.length === 0) break
+    const out = [...now.out, ...more].sort((a, b) => a - b)
     const next = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
     // A drawing that was put back at once would be set aside again for ever.
     if (next.out.length <= now.out.length) break
     now = next
   }
   return now
+}
+
+/** The worst quarter of the drawings that break. */
+function worstBreaking(series: Series, story: Story, care: Care): number[] {
+  const strained = strain(series, story.fit, care)
+  return Array.from(strained.keys())
+    .filter(i => (strained[i] as number) > 1 && !story.out.includes(i))
+    .sort((a, b) => (strained[b] as number) - (strained[a] as number) || a - b)
+    .slice(0, Math.ceil(story.breaking / 4))
 }
 
 /** The exposures a hold or a skip could be: gap lengths that occur in the list, commonest first, at most three. */
@@ -97,21 +109,21 @@ function exposures(series: Series): number[] {
 }
 
 /** A plain fit of a law with lone bad drawings smoothed over at the start of the search. */
-export function plainFit(series: Series, model: LawModel, care: Care, steps: number): { fit: Fit, base: Fit } {
+export function plainFit(series: Series, model: LawModel, care: Care, effort: Effort): { fit: Fit, base: Fit } {
   const calm = smoothed(series.x, series.y, 2 * care.slop)
   const ones = new Float64Array(series.n).fill(1)
   let base: Fit | null = null
   for (const start of model.begin(series, calm)) {
-    const found = refine(model, series, series.x, calm, ones, start, steps)
+    const found = refine(model, series, series.x, calm, ones, start, effort)
     if (!base || found.cost < base.cost) base = found
   }
   const kept = base as Fit
-  return { base: kept, fit: refine(model, series, series.x, series.y, ones, kept.numbers, steps) }
+  return { base: kept, fit: refine(model, series, series.x, series.y, ones, kept.numbers, effort) }
 }
 
 /** Every story worth hearing under one law. The first is always "nothing happened". */
 export function stories(series: Series, model: LawModel, care: Care): Story[] {
-  const { fit, base } = plainFit(series, model, care, ALL_STEPS)
+  const { fit, base } = plainFit(series, model, care, THOROUGH)
   const { n, y } = series
   const strained = strain(series, fit, care)
   let breaking = 0
@@ -132,18 +144,14 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   const offBase = Array.from(off.keys()).filter(i => (off[i] as number) > 1)
   if (offBase.length > 0 && offBase.length <= Math.min(spare, n / 4)) told.push(tell(series, model, offBase, null, base.numbers, care))
 
-  const candidates: { shift: Shift, cost: number, numbers: Float64Array }[] = []
-  for (const by of exposures(series)) {
-    for (const way of [by, -by]) {
-      candidates.push(...bestShifts(series, fit, y, ones, way, 2))
-      if (!model.linear) candidates.push(...bestShifts(series, base, y, ones, way, 2))
-    }
-  }
+  const sizes = exposures(series).flatMap(by => [by, -by])
+  const candidates = bestShifts(series, fit, y, sizes)
+  if (!model.linear && offBase.length > 0) candidates.push(...bestShifts(series, base, y, sizes))
   candidates.sort((a, b) => a.cost - b.cost)
   const seen = new Set<string>()
   for (const { shift, numbers } of candidates) {
     const name = `${shift.at} ${shift.by}`
-    if (seen.has(name) || seen.size >= 6) continue
+    if (seen.has(name) || seen.size >= 4) continue
     seen.add(name)
     told.push(tell(series, model, [], shift, numbers, care))
   }
@@ -152,7 +160,15 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   const most = Math.min(spare, Math.max(2, Math.floor(n / 6)))
   const sigma = pencil(told, n, care)
   const likely = [...told].sort((a, b) => charge(a, sigma, n) - charge(b, sigma, n)).slice(0, 4)
-  for (const story of likely) if (story.breaking > 0) told.push(extend(series, story, care, most))
+  let least = Infinity
+  for (const story of told) if (story.breaking === 0) least = Math.min(least, charge(story, sigma, n))
+  for (const story of likely) {
+    // However well it then fits, one more drawing set aside would already cost more than the best that explains all.
+    if (story.breaking === 0 || assumed(story, n) + MISPLACED_CHARGE >= least) continue
+    const longer = extend(series, story, care, most)
+    told.push(longer)
+    if (longer.breaking === 0) least = Math.min(least, charge(longer, sigma, n))
+  }
   return told
 }
 
@@ -172,7 +188,10 @@ export function pencil(told: readonly Story[], n: number, care: Care): number {
 
 /** What a story costs, nats, if the pencil's spread is `sigma`. */
 export function charge(story: Story, sigma: number, n: number): number {
-  return story.fit.cost / (2 * sigma * sigma)
-    + MISPLACED_CHARGE * story.out.length
-    + (story.shift ? SHIFT_CHARGE + Math.log(2 * n) : 0)
+  return story.fit.cost / (2 * sigma * sigma) + assumed(story, n)
+}
+
+/** What its assumptions alone cost. */
+function assumed(story: Story, n: number): number {
+  return MISPLACED_CHARGE * story.out.length + (story.shift ? SHIFT_CHARGE + Math.log(2 * n) : 0)
 }

@@ -119,7 +119,8 @@ function shiftFindings(series: Series, story: Story, keys: readonly JudgedKey[])
 function drawingFindings(
   request: CheckRequest, series: Series, story: Story, keys: readonly JudgedKey[], rate: Float64Array,
 ): Finding[] {
-  const way = oneWay(keys, rate, request.slop)
+  // A swing turns by its nature, whatever part of it a list shows.
+  const way = request.law === 'pendulum' ? 0 : oneWay(keys, rate, request.slop)
   // Rounding alone can add one step to what the slop allows.
   const least = request.slop + roundingStep(series.y)
   const backStep = (i: number) => {

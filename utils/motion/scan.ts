@@ -4,7 +4,7 @@
  */
 import type { Fit } from './fit'
 import type { Series } from './series'
-import { solve3 } from './solve'
+import { solve3, solveInto } from './solve'
 
 export interface Shift {
   /** Index of the first key that is late (by > 0) or early (by < 0). */
@@ -15,7 +15,10 @@ export interface Shift {
 
 /** Times with everything from `at` on moved back by `by`: what a key there shows is what the law had that much earlier. */
 export function shiftedTimes(x: Float64Array, shift: Shift | null): Float64Array {
-  return shift ? x.map((at, i) => (i >= shift.at ? at - shift.by : at)) : x
+  if (!shift) return x
+  const out = x.slice()
+  for (let i = shift.at; i < out.length; i++) out[i] = (out[i] as number) - shift.by
+  return out
 }
 
 /**
@@ -68,61 +71,73 @@ export function worstDrawings(fit: Fit, y: Float64Array, weights: Float64Array):
   return [[first], ...sets.slice(0, 2).map(set => set.keys)]
 }
 
-/**
- * The most promising places for a shift of `by` spans, given a fit to begin from: at most `most`, best first, each at least two keys
- * from either end (a single late drawing at an end is a misplaced one). Running sums make this one pass over the list.
- */
-export function bestShifts(
-  series: Series, fit: Fit, y: Float64Array, weights: Float64Array, by: number, most: number,
-): { shift: Shift, cost: number, numbers: Float64Array }[] {
+/** Running sums, key by key, of what a least-squares step needs: six products of columns, three of columns with offsets, offsets squared. */
+const WIDTH = 10
+
+function runningSums(series: Series, fit: Fit, y: Float64Array, x: Float64Array): Float64Array {
   const n = y.length
   const size = fit.model.size
-  const width = 10
-  const sums = (x: Float64Array) => {
-    const trace = fit.model.trace(series, fit.numbers, x, true)
-    const table = new Float64Array((n + 1) * width)
-    for (let i = 0; i < n; i++) {
-      const w = weights[i] as number
-      const r = (y[i] as number) - (trace.value[i] as number)
-      const from = i * width
-      const to = from + width
-      for (let k = 0; k < width; k++) table[to + k] = table[from + k] as number
-      let slot = to
-      for (let p = 0; p < size; p++) {
-        const cp = (trace.columns[p] as Float64Array)[i] as number
-        for (let q = 0; q <= p; q++) {
-          table[slot] = (table[slot] as number) + w * cp * ((trace.columns[q] as Float64Array)[i] as number)
-          slot++
-        }
-        table[to + 6 + p] = (table[to + 6 + p] as number) + w * cp * r
-      }
-      table[to + 9] = (table[to + 9] as number) + w * r * r
-    }
-    return table
-  }
-  const early = sums(series.x)
-  const late = sums(series.x.map(at => at - by))
-  const found: { shift: Shift, cost: number, numbers: Float64Array }[] = []
-  const a = new Float64Array(size * size)
-  const b = new Float64Array(size)
-  const last = n * width
-  for (let at = 2; at <= n - 2; at++) {
-    const cut = at * width
-    const total = (k: number) => (early[cut + k] as number) + (late[last + k] as number) - (late[cut + k] as number)
-    let slot = 0
+  const trace = fit.model.trace(series, fit.numbers, x, true)
+  const table = new Float64Array((n + 1) * WIDTH)
+  for (let i = 0; i < n; i++) {
+    const r = (y[i] as number) - (trace.value[i] as number)
+    const from = i * WIDTH
+    const to = from + WIDTH
+    for (let k = 0; k < WIDTH; k++) table[to + k] = table[from + k] as number
+    let slot = to
     for (let p = 0; p < size; p++) {
+      const cp = (trace.columns[p] as Float64Array)[i] as number
       for (let q = 0; q <= p; q++) {
-        a[size * p + q] = a[size * q + p] = total(slot)
+        table[slot] = (table[slot] as number) + cp * ((trace.columns[q] as Float64Array)[i] as number)
         slot++
       }
-      b[p] = total(6 + p)
+      table[to + 6 + p] = (table[to + 6 + p] as number) + cp * r
     }
-    const move = solve3(a, b, size)
-    if (!move) continue
-    let cost = total(9)
-    for (let p = 0; p < size; p++) cost -= (b[p] as number) * (move[p] as number)
-    found.push({ shift: { at, by }, cost, numbers: fit.numbers.map((value, p) => value + (move[p] as number)) })
+    table[to + 9] = (table[to + 9] as number) + r * r
   }
-  found.sort((p, q) => p.cost - q.cost || p.shift.at - q.shift.at)
-  return found.slice(0, most)
+  return table
+}
+
+export interface Candidate { shift: Shift, cost: number, numbers: Float64Array }
+
+/**
+ * The most promising places for a shift of each of `sizes` (spans), given a fit to begin from: for each size the best two, none within
+ * two keys of an end (a single late drawing at an end is a misplaced one). Running sums make each size one pass over the list.
+ */
+export function bestShifts(series: Series, fit: Fit, y: Float64Array, sizes: readonly number[]): Candidate[] {
+  const n = y.length
+  const size = fit.model.size
+  const early = runningSums(series, fit, y, series.x)
+  const a = new Float64Array(size * size)
+  const b = new Float64Array(size)
+  const move = new Float64Array(size)
+  const total = new Float64Array(WIDTH)
+  const last = n * WIDTH
+  const found: Candidate[] = []
+  for (const by of sizes) {
+    const late = runningSums(series, fit, y, series.x.map(at => at - by))
+    const best: Candidate[] = []
+    for (let at = 2; at <= n - 2; at++) {
+      const cut = at * WIDTH
+      for (let k = 0; k < WIDTH; k++) total[k] = (early[cut + k] as number) + (late[last + k] as number) - (late[cut + k] as number)
+      let slot = 0
+      for (let p = 0; p < size; p++) {
+        for (let q = 0; q <= p; q++) {
+          a[size * p + q] = a[size * q + p] = total[slot] as number
+          slot++
+        }
+        b[p] = total[6 + p] as number
+      }
+      if (!solveInto(a, b, size, move)) continue
+      let cost = total[9] as number
+      for (let p = 0; p < size; p++) cost -= (b[p] as number) * (move[p] as number)
+      const runnerUp = best[1]
+      if (runnerUp && cost >= runnerUp.cost) continue
+      best.push({ shift: { at, by }, cost, numbers: fit.numbers.map((value, p) => value + (move[p] as number)) })
+      best.sort((p, q) => p.cost - q.cost || p.shift.at - q.shift.at)
+      best.length = Math.min(best.length, 2)
+    }
+    found.push(...best)
+  }
+  return found
 }

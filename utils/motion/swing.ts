@@ -4,15 +4,16 @@
 import { amplitude, incompleteF, jacobi, ladder } from './elliptic'
 
 const TURN = 2 * Math.PI
+const out = new Float64Array(3)
 
 /**
- * Fills `angle` and `rate` (dθ/dτ), radians, for each τ in `taus`, starting from θ = start, dθ/dτ = push at τ = 0.
+ * Fills `angle` and `rate` (dθ/dτ), radians, for the first `n` of `taus`, starting from θ = start, dθ/dτ = push at τ = 0.
  * `fromTop`: angles count from upright balance (topple) instead of from hanging rest (pendulum).
  * m = sin²(θ₁/2) + (push/2)². Below one the body swings, above one it goes over the top. DLMF 22.19(i).
  * Always finite for finite arguments.
  */
 export function freeSwing(
-  start: number, push: number, fromTop: boolean, taus: ArrayLike<number>, angle: Float64Array, rate: Float64Array,
+  start: number, push: number, fromTop: boolean, taus: ArrayLike<number>, n: number, angle: Float64Array, rate: Float64Array,
 ): void {
   // Half angles are taken from whichever end the caller counts, so that a lean of a thousandth of a degree is not 180° minus itself.
   const own = start / 2
@@ -26,8 +27,6 @@ export function freeSwing(
   }
   // Whole turns are counted apart: a hanging angle is 2·atan2(s, c), within half a turn, plus these.
   const whole = Math.round((hanging - 2 * Math.atan2(s, c)) / TURN) * TURN
-  const n = taus.length
-  const out = new Float64Array(3)
   const flip = fromTop ? -1 : 1
   const speed = Math.abs(v)
 

@@ -12,12 +12,19 @@ export const oddRule: LawModel = {
   linear: true,
   trace(_series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace {
     const [c0 = 0, c1 = 0, c2 = 0] = numbers
-    const z = x.map(at => 2 * at - 1)
-    return {
-      value: z.map(at => c0 + at * c1 + c2 * (at * at - 1 / 3)),
-      rate: z.map(at => 2 * c1 + 4 * c2 * at),
-      columns: withColumns ? [z.map(() => 1), z, z.map(at => at * at - 1 / 3)] : [],
+    const n = x.length
+    const value = new Float64Array(n)
+    const rate = new Float64Array(n)
+    const first = new Float64Array(n)
+    const second = new Float64Array(n)
+    for (let i = 0; i < n; i++) {
+      const z = 2 * (x[i] as number) - 1
+      first[i] = z
+      second[i] = z * z - 1 / 3
+      value[i] = c0 + c1 * z + c2 * (z * z - 1 / 3)
+      rate[i] = 2 * c1 + 4 * c2 * z
     }
+    return { value, rate, columns: withColumns ? [new Float64Array(n).fill(1), first, second] : [] }
   },
   begin: () => [new Float64Array(3)],
 }

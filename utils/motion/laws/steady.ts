@@ -9,11 +9,15 @@ export const steady: LawModel = {
   linear: true,
   trace(_series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace {
     const [middle = 0, half = 0] = numbers
-    return {
-      value: x.map(at => middle + half * (2 * at - 1)),
-      rate: x.map(() => 2 * half),
-      columns: withColumns ? [x.map(() => 1), x.map(at => 2 * at - 1)] : [],
+    const n = x.length
+    const value = new Float64Array(n)
+    const first = new Float64Array(n)
+    for (let i = 0; i < n; i++) {
+      const z = 2 * (x[i] as number) - 1
+      first[i] = z
+      value[i] = middle + half * z
     }
+    return { value, rate: new Float64Array(n).fill(2 * half), columns: withColumns ? [new Float64Array(n).fill(1), first] : [] }
   },
   begin: () => [new Float64Array(2)],
 }

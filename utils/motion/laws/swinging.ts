@@ -12,6 +12,20 @@ export const LEAST_LOG = Math.log(1e-3)
 export const MOST_LOG = Math.log(1e3)
 const NUDGE = 1e-6
 
+// Work space, grown when a longer list comes: a search traces the same few dozen drawings hundreds of times.
+let taus = new Float64Array(64)
+let shifted = new Float64Array(64)
+let spare = new Float64Array(64)
+let along = new Float64Array(64)
+
+function makeRoom(n: number): void {
+  if (taus.length >= n) return
+  taus = new Float64Array(n)
+  shifted = new Float64Array(n)
+  spare = new Float64Array(n)
+  along = new Float64Array(n)
+}
+
 /** Numbers: ln κ; angle at the first key, radians; turn rate there, radians per span. */
 export function traceSwing(
   series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean, fromTop: boolean,
@@ -21,47 +35,52 @@ export function traceSwing(
   const push = (numbers[2] as number) / kappa
   const { perRadian, zero } = series
   const n = x.length
-  const taus = x.map(at => at * kappa)
-  const angle = new Float64Array(n)
+  makeRoom(n)
+  for (let i = 0; i < n; i++) taus[i] = (x[i] as number) * kappa
+  const value = new Float64Array(n)
   const rate = new Float64Array(n)
-  freeSwing(start, push, fromTop, taus, angle, rate)
-  const value = angle.map(a => (a - zero) * perRadian)
-  const perSpan = rate.map(r => r * kappa * perRadian)
-  if (!withColumns) return { value, rate: perSpan, columns: [] }
+  freeSwing(start, push, fromTop, taus, n, value, rate)
+  const columns = withColumns ? columnsOf(kappa, start, push, n, value, rate, perRadian, fromTop) : []
+  for (let i = 0; i < n; i++) {
+    value[i] = ((value[i] as number) - zero) * perRadian
+    rate[i] = (rate[i] as number) * kappa * perRadian
+  }
+  return { value, rate, columns }
+}
 
-  // Moving (start, push) along the motion itself is the same as moving time, so that direction is known exactly; only the direction
-  // across it needs a second solution.
+/**
+ * How the line bends with each number. Moving (start, push) along the motion itself is the same as moving time, so that direction is
+ * known exactly; only the direction across it needs a second solution close by.
+ */
+function columnsOf(
+  kappa: number, start: number, push: number, n: number, angle: Float64Array, rate: Float64Array, perRadian: number, fromTop: boolean,
+): Float64Array[] {
   const turn = fromTop ? Math.sin(start) : -Math.sin(start)
   const size = Math.hypot(push, turn)
   const known = size > 1e-6
   const alongStart = known ? push / size : 1
   const alongPush = known ? turn / size : 0
-  const across = new Float64Array(n)
-  const shifted = new Float64Array(n)
-  const spare = new Float64Array(n)
   const step = NUDGE * Math.max(1, Math.abs(push))
-  freeSwing(start - alongPush * step, push + alongStart * step, fromTop, taus, shifted, spare)
-  for (let i = 0; i < n; i++) across[i] = ((shifted[i] as number) - (angle[i] as number)) / step
-  const along = new Float64Array(n)
   if (known) {
     for (let i = 0; i < n; i++) along[i] = (rate[i] as number) / size
   } else {
-    freeSwing(start + alongStart * step, push + alongPush * step, fromTop, taus, shifted, spare)
+    freeSwing(start + alongStart * step, push + alongPush * step, fromTop, taus, n, shifted, spare)
     for (let i = 0; i < n; i++) along[i] = ((shifted[i] as number) - (angle[i] as number)) / step
   }
+  freeSwing(start - alongPush * step, push + alongStart * step, fromTop, taus, n, shifted, spare)
   const byLog = new Float64Array(n)
   const byStart = new Float64Array(n)
   const byTurn = new Float64Array(n)
   for (let i = 0; i < n; i++) {
     const a = along[i] as number
-    const b = across[i] as number
+    const b = ((shifted[i] as number) - (angle[i] as number)) / step
     const byPush = a * alongPush + b * alongStart
     byStart[i] = (a * alongStart - b * alongPush) * perRadian
     byTurn[i] = byPush / kappa * perRadian
     // At a fixed turn rate, a larger κ also means a smaller push.
     byLog[i] = ((taus[i] as number) * (rate[i] as number) - push * byPush) * perRadian
   }
-  return { value, rate: perSpan, columns: [byLog, byStart, byTurn] }
+  return [byLog, byStart, byTurn]
 }
 
 /**
