@@ -47,15 +47,37 @@ const STOP_SIGNALS = { SIGINT: 2, SIGTERM: 15, SIGHUP: 1 }
  * @returns {() => void} gives the signals back
  */
 export function endChildrenOnSignals() {
-  const handlers = Object.entries(STOP_SIGNALS).map(([signal, number]) => {
-    const stop = () => {
-      for (const pid of running) endGroup(pid)
-      process.exit(128 + number)
-    }
+  const stopAs = (signal) => () => {
+    for (const pid of running) endGroup(pid)
+    process.exit(128 + STOP_SIGNALS[signal])
+  }
+  const handlers = Object.keys(STOP_SIGNALS).map((signal) => {
+    const stop = stopAs(signal)
     process.once(signal, stop)
     return () => process.off(signal, stop)
   })
+  handlers.push(whenAbandoned(stopAs('SIGTERM')))
   return () => handlers.forEach((giveBack) => giveBack())
+}
+
+const ABANDONED_CHECK_MS = 200
+
+/**
+ * npm passes a signal on to the shell it runs scripts in, and most shells die of it without telling the script. So a
+ * script that npm started asks whether that shell is still its parent. One that somebody else started may outlive them.
+ * @param {() => void} stop called once, when the shell is gone
+ * @returns {() => void} stops asking
+ */
+export function whenAbandoned(stop, env = process.env) {
+  if (!env.npm_lifecycle_event) return () => {}
+  const parent = process.ppid
+  const timer = setInterval(() => {
+    if (process.ppid === parent) return
+    clearInterval(timer)
+    stop()
+  }, ABANDONED_CHECK_MS)
+  timer.unref()
+  return () => clearInterval(timer)
 }
 
 function endGroup(pid) {

@@ -2,6 +2,7 @@
 import { spawn } from 'node:child_process'
 import { createServer } from 'node:net'
 import { fileURLToPath } from 'node:url'
+import { whenAbandoned } from './processes.mjs'
 import { PlainStop } from './say.mjs'
 
 const FOLLOW_PARENT = new URL('./follow-parent.mjs', import.meta.url).href
@@ -44,13 +45,13 @@ export async function serve({ args, env, cwd, url, onReady }) {
     stdio: ['ignore', 'inherit', 'inherit', 'ipc'],
   })
   let stopping = false
-  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
-    process.on(signal, () => {
-      // Ctrl-C reaches the child by itself as well, and npm passes signals on a second time: once is enough.
-      if (!stopping) child.kill(signal === 'SIGHUP' ? 'SIGTERM' : signal)
-      stopping = true
-    })
+  const stop = () => {
+    // Ctrl-C reaches the child by itself as well, and npm passes signals on a second time: once is enough.
+    if (!stopping) child.kill('SIGTERM')
+    stopping = true
   }
+  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, stop)
+  whenAbandoned(stop)
   const ended = new Promise((resolve) => {
     child.once('error', () => resolve(1))
     child.once('exit', (code) => resolve(code ?? (stopping ? 0 : 1)))

@@ -93,7 +93,7 @@ const board = (port: number, ends: string) => `
   }).listen(${port}, '127.0.0.1')
   process.on('SIGTERM', () => { console.log('board stops'); server.close(); server.closeAllConnections() })`
 
-async function serving(ends = '') {
+async function prepareServing(ends = '') {
   const port = await freePort()
   const script = join(folder, 'board.mjs')
   writeFileSync(script, board(port, ends))
@@ -106,7 +106,12 @@ async function serving(ends = '') {
      await runScript(() => serve({ args: [${JSON.stringify(script)}], env: process.env, cwd: '.',
        url: 'http://127.0.0.1:${port}', onReady: (session) => console.log('ready', JSON.stringify(session)) }))`,
   )
-  return { port, ...node([starter]) }
+  return { port, script: starter, said: { out: '', err: '' } }
+}
+
+async function serving(ends = '') {
+  const { port, script } = await prepareServing(ends)
+  return { port, ...node([script]) }
 }
 
 describe('the server’s keeper', () => {
@@ -124,6 +129,20 @@ describe('the server’s keeper', () => {
     const { said, ended } = await serving(`console.error('The database is from a newer version.'); process.exit(1)`)
     expect(await ended).toBe(1)
     expect(said).toEqual({ out: '', err: 'The database is from a newer version.\n' })
+  })
+
+  it('stops it when npm’s shell dies of a signal without passing it on', async () => {
+    const { script, said } = await prepareServing()
+    // A shell that does something after the command stays its parent, as npm's does.
+    const shell = spawn('sh', ['-c', `"${process.execPath}" "${script}"; true`], {
+      env: { ...withoutSettings(process.env), npm_lifecycle_event: 'start' },
+    })
+    started.add(shell)
+    shell.stdout.setEncoding('utf8').on('data', (text) => (said.out += text))
+    await until(() => said.out.includes('ready'), 'ready')
+    shell.kill('SIGTERM')
+    await new Promise((resolve) => shell.once('close', resolve))
+    expect(said.out).toMatch(/board stops\n$/)
   })
 
   it('takes the server along when it is killed itself', async () => {
