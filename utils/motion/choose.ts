@@ -41,9 +41,16 @@ export function shows(series: Series, story: Story, care: Care): boolean {
   return false
 }
 
+/** What blaming one thing more costs where a simpler story already leaves nothing that anyone would notice, nats. */
+const NEEDLESS = 6
+
+const blamed = (story: Story) => story.out.length + (story.shift ? 1 : 0)
+
 /** The cheapest story that shows. */
 export function cheapest(series: Series, told: readonly Story[], care: Care, sigma: number): Story {
-  const ranked = [...told].sort((a, b) => charge(a, sigma, series.n) - charge(b, sigma, series.n))
+  const simplest = told.reduce((least, story) => (story.breaking === 0 ? Math.min(least, blamed(story)) : least), Infinity)
+  const cost = (story: Story) => charge(story, sigma, series.n) + (blamed(story) > simplest ? NEEDLESS : 0)
+  const ranked = [...told].sort((a, b) => cost(a) - cost(b))
   return ranked.find(story => shows(series, story, care)) ?? (told[0] as Story)
 }
 
@@ -60,7 +67,7 @@ function rootMean(strained: Float64Array, out: readonly number[]): number {
 }
 
 function readingOf(series: Series, law: Law, story: Story, care: Care, cost: number): Reading {
-  const strained = strain(series, story.fit, care)
+  const strained = strain(series, story.fit, care, story.shift)
   let breaking = 0
   for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !story.out.includes(i)) breaking++
   return {

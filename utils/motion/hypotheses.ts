@@ -40,8 +40,13 @@ function weightsWithout(n: number, out: readonly number[]): Float64Array {
 }
 
 /** Offsets over allowance under a story, with the law's own gaps. */
-export function strain(series: Series, fit: Fit, care: Care): Float64Array {
+export function strain(series: Series, fit: Fit, care: Care, shift: Shift | null = null): Float64Array {
   const allowed = allowances(fit.trace.value, care.slop, care.tolerance)
+  if (shift) {
+    // The gap across a held or skipped drawing is not the law's: either side is measured by its own gaps.
+    allowed.set(allowances(fit.trace.value.subarray(0, shift.at), care.slop, care.tolerance))
+    allowed.set(allowances(fit.trace.value.subarray(shift.at), care.slop, care.tolerance), shift.at)
+  }
   for (let i = 0; i < series.n; i++) {
     const off = Math.abs((series.y[i] as number) - (fit.trace.value[i] as number))
     const allowance = allowed[i] as number
@@ -54,7 +59,7 @@ export function strain(series: Series, fit: Fit, care: Care): Float64Array {
 function tell(series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care): Story {
   const story = tellExactly(series, model, out, shift, from, care)
   if (out.length < 2) return story
-  const strained = strain(series, story.fit, care)
+  const strained = strain(series, story.fit, care, shift)
   const kept = out.filter(i => (strained[i] as number) > 1)
   return kept.length === out.length ? story : tell(series, model, kept, shift, story.fit.numbers, care)
 }
@@ -63,7 +68,7 @@ function tellExactly(
   series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care,
 ): Story {
   const fit = refine(model, series, shiftedTimes(series.x, shift), series.y, weightsWithout(series.n, out), from, BRIEF)
-  const strained = strain(series, fit, care)
+  const strained = strain(series, fit, care, shift)
   let breaking = 0
   for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !out.includes(i)) breaking++
   return { out, shift, fit, breaking }
@@ -78,8 +83,8 @@ function extend(series: Series, story: Story, care: Care, most: number): Story {
   while (now.breaking > 0 && now.out.length < most) {
     // A list that breaks all over is not a list with a few bad drawings.
     if (now.breaking > 3 * (most - now.out.length) + 2) break
-    const more = now.breaking <= 8 ? worstDrawings(now.fit, series.y, weightsWithout(series.n, now.out))[0] : worstBreaking(series, now, care)
-    if (!more || more.length === 0) break
+    const more = worstBreaking(series, now, care)
+    if (more.length === 0) break
     const out = [...now.out, ...more].sort((a, b) => a - b)
     const next = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
     // A drawing that was put back at once would be set aside again for ever.
@@ -89,23 +94,26 @@ function extend(series: Series, story: Story, care: Care, most: number): Story {
   return now
 }
 
-/** The worst quarter of the drawings that break. */
+/** Of the drawings that break, the one that bends the line most; of many, the worst quarter. */
 function worstBreaking(series: Series, story: Story, care: Care): number[] {
-  const strained = strain(series, story.fit, care)
-  return Array.from(strained.keys())
-    .filter(i => (strained[i] as number) > 1 && !story.out.includes(i))
-    .sort((a, b) => (strained[b] as number) - (strained[a] as number) || a - b)
-    .slice(0, Math.ceil(story.breaking / 4))
+  const strained = strain(series, story.fit, care, story.shift)
+  const breaking = Array.from(strained.keys()).filter(i => (strained[i] as number) > 1 && !story.out.includes(i))
+  if (breaking.length <= 8) {
+    const weights = new Float64Array(series.n)
+    for (const i of breaking) weights[i] = 1
+    return worstDrawings(story.fit, series.y, weights)[0] ?? []
+  }
+  return breaking.sort((a, b) => (strained[b] as number) - (strained[a] as number) || a - b).slice(0, Math.ceil(breaking.length / 4))
 }
 
-/** The exposures a hold or a skip could be: gap lengths that occur in the list, commonest first, at most three. */
+/** The exposures a hold or a skip could be: gap lengths that occur in the list, commonest first, at most six. */
 function exposures(series: Series): number[] {
   const counts = new Map<number, number>()
   for (let i = 1; i < series.n; i++) {
     const frames = Math.round(((series.x[i] as number) - (series.x[i - 1] as number)) * series.spanFrames)
     counts.set(frames, (counts.get(frames) ?? 0) + 1)
   }
-  return [...counts].sort((a, b) => b[1] - a[1] || a[0] - b[0]).slice(0, 3).map(([frames]) => frames / series.spanFrames)
+  return [...counts].sort((a, b) => b[1] - a[1] || a[0] - b[0]).slice(0, 6).map(([frames]) => frames / series.spanFrames)
 }
 
 /** A plain fit of a law with lone bad drawings smoothed over at the start of the search. */
@@ -155,6 +163,15 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
     seen.add(name)
     told.push(tell(series, model, [], shift, numbers, care))
   }
+  // One step from a bent line may point a key too far; the neighbours of the best place get their own hearing.
+  const place = told.reduce<Story | null>((best, story) => (story.shift && (!best || story.fit.cost < best.fit.cost) ? story : best), null)
+  if (place?.shift) {
+    for (const at of [place.shift.at - 1, place.shift.at + 1]) {
+      const by = place.shift.by
+      if (at < 2 || at > n - 2 || seen.has(`${at} ${by}`)) continue
+      told.push(tell(series, model, [], { at, by }, place.fit.numbers, care))
+    }
+  }
 
   // The likeliest few may need a lone bad drawing on top.
   const most = Math.min(spare, Math.max(2, Math.floor(n / 6)))
@@ -173,15 +190,15 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
 }
 
 /**
- * The pencil's spread, reading units, judged by the story that leaves least unexplained. A quarter of the slop counts as three drawings
+ * The pencil's spread, reading units, judged by the story that leaves least unexplained. A third of the slop counts as four drawings
  * seen before the first one is (common practice: slop is what nobody means, and most drawings sit well inside it).
  */
 export function pencil(told: readonly Story[], n: number, care: Care): number {
-  const before = (care.slop / 4) ** 2
+  const before = (care.slop / 3) ** 2
   let best = Infinity
   for (const { fit, out } of told) {
     const free = Math.max(1, n - out.length - fit.model.size)
-    best = Math.min(best, (3 * before + fit.cost) / (3 + free))
+    best = Math.min(best, (4 * before + fit.cost) / (4 + free))
   }
   return Math.sqrt(Math.max(best, care.least * care.least))
 }

@@ -91,7 +91,7 @@ function swingMotion(chance: Chance, paper: Paper, size: number): Exact {
   return { readings, law: 'pendulum', size, covers: swings, turns: true }
 }
 
-function fallMotion(chance: Chance, paper: Paper, keys: number, every: number): Exact {
+function fallMotion(chance: Chance, keys: number, every: number): Exact {
   const frames = keys * every
   const travel = chance.spread(60, 2500)
   const way = chance.one(['rest', 'rest', 'pushed', 'apex'] as const)
@@ -102,7 +102,7 @@ function fallMotion(chance: Chance, paper: Paper, keys: number, every: number): 
   const sign = chance.one([1, 1, -1])
   const zero = chance.one([0, 0, chance.between(-200, 200)])
   const readings = Array.from({ length: frames + 1 }, (_, i) => zero + sign * a * ((i - apex) ** 2 - near * near))
-  return { readings, law: 'odd-rule', turns: way === 'apex' || paper.measure === 'angle' }
+  return { readings, law: 'odd-rule', turns: way === 'apex' }
 }
 
 interface Drawn { frames: number[], exact: number[], reading: number[], allowance: number[] }
@@ -149,7 +149,7 @@ function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'topple' | 'p
   let at = exposuresFor(chance, last, uneven)
   const most = 60
   // Another law over part of its way may well pass for the claimed one.
-  if (at.length > most && (family === 'fall-as-topple' || family === 'topple-as-fall')) return null
+  if (at.length > most && (family === 'fall-as-topple' || family === 'topple-as-fall' || family === 'ease')) return null
   if (at.length > most) at = turning ? exposuresFor(chance, last, uneven).filter((_, i, all) => i >= all.length - most) : at.slice(0, most)
   const offset = at[0] ?? 0
   const gaps = at.slice(1).map((frame, i) => frame - (at[i] as number))
@@ -253,7 +253,7 @@ function motionFor(chance: Chance, family: Family, law: MadeList['request']['law
     const gap = chance.spread(5, 60) * chance.one([1, -1])
     return { readings: Array.from({ length: frames + 1 }, (_, i) => gap / every * i), law: 'steady', turns: false }
   }
-  return fallMotion(chance, paper, keys, every)
+  return fallMotion(chance, keys, every)
 }
 
 /** Moves drawings by at least three allowances; where the motion never turns they stay between their neighbours. */
