@@ -12,7 +12,8 @@ export function readingTicks(low: number, high: number, count: number, unit: str
   const step = unit === 'deg' ? DEGREE_STEPS.find((one) => (high - low) / one <= count) : undefined
   if (!step) return scaleLinear().domain([low, high]).ticks(count)
   const ticks = []
-  for (let n = Math.ceil(low / step - 1e-9); n * step <= high + 1e-9; n++) ticks.push(Math.round(n * step * 10) / 10)
+  // Adding zero turns a minus zero into a plain one.
+  for (let n = Math.ceil(low / step - 1e-9); n * step <= high + 1e-9; n++) ticks.push(Math.round(n * step * 10) / 10 + 0)
   return ticks
 }
 

@@ -135,7 +135,7 @@ function leadersPath(labels: readonly Placed<number>[], crossAt: (i: number) => 
         x: Math.min(Math.max(from.x, box.x + 4), box.x + box.width - 4),
         y: from.y > box.y + box.height / 2 ? box.y + box.height + 1 : box.y - 1,
       }
-      return Math.hypot(from.x - to.x, from.y - to.y) < 13 ? '' : `M${px(from.x)} ${px(from.y)}L${px(to.x)} ${px(to.y)}`
+      return Math.hypot(from.x - to.x, from.y - to.y) < 18 ? '' : `M${px(from.x)} ${px(from.y)}L${px(to.x)} ${px(to.y)}`
     })
     .join('')
 }

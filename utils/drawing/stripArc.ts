@@ -1,4 +1,5 @@
 import { bodyPath } from '~/utils/drawing/body'
+import { textWidth } from '~/utils/drawing/labels'
 import type { Anchor } from '~/utils/drawing/labels'
 import { passesOf } from '~/utils/drawing/passes'
 import type { StripClaim, StripKey, StripLayout } from '~/utils/drawing/stripLayout'
@@ -9,14 +10,12 @@ import type { ArcTrack } from '~/utils/drawing/track'
 import { arcTrack, degreesOf } from '~/utils/drawing/track'
 
 const HEIGHT = 320
+/** A motion that goes over the top needs room on all sides of its pivot. */
+const ROUND_HEIGHT = 384
 const SMALL_HEIGHT = 150
-const LANE = 2 * TICK.to + 22
-/** Room between the innermost ticks and the body, where the frame numbers stand. */
-const NUMBERS = 40
 
 /** Something that turns about a pivot: the true arc, the body at its centre, posted ticks outside and the law's inside. */
 export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean): StripLayout {
-  const height = small ? SMALL_HEIGHT : HEIGHT
   const hangs = claim.law === 'pendulum'
   const degrees = keys.map(({ reading }) => degreesOf(claim, reading)!)
   const lawDegrees = keys.map(({ law }) => (law === null ? null : degreesOf(claim, law)))
@@ -25,6 +24,7 @@ export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: nu
   const falls = Math.abs(high) >= Math.abs(low) ? 1 : -1
   const [from, to] = shownArc(low, high, claim, falls)
 
+  const height = small ? SMALL_HEIGHT : to - from > 200 ? ROUND_HEIGHT : HEIGHT
   const track = arcTrack(from, to, hangs, { width, height }, marginsOf(small, hangs), besidePivot(claim, falls))
   const span = high - low
   const passes = passesOf(
@@ -32,24 +32,29 @@ export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: nu
     Math.max(span / 50, 2),
     350,
   )
-  const lanes = Math.max(1, Math.min(3, Math.floor((track.radius * 0.6) / LANE)))
-  const radiusOf = (i: number) => track.radius - (passes[i]! % lanes) * LANE
+  // Frame numbers stand inside the law's ticks; every lane leaves room for the widest of them.
+  const widest = small ? 0 : Math.max(...keys.map(({ frame }) => textWidth(String(frame))), 12)
+  const lane = small ? 2 * TICK.to + 6 : 2 * TICK.to + widest + 8
+  const lanes = Math.max(1, Math.min(3, Math.floor((track.radius * 0.8) / lane)))
+  const radiusOf = (i: number) => track.radius - (passes[i]! % lanes) * lane
   const used = Math.min(lanes, Math.max(0, ...passes) + 1)
   const posted = degrees.map((angle, i) => track.spot(angle, radiusOf(i)))
-  const length = Math.max(12, track.radius - (used - 1) * LANE - (small ? TICK.to + 8 : NUMBERS))
+  const length = Math.max(12, track.radius - (used - 1) * lane - (small ? TICK.to + 8 : TICK.to + widest + 12))
 
   return {
     width,
     height,
     pivot: track.pivot,
     base:
-      Array.from({ length: used }, (_, lane) => track.path(from, to, track.radius - lane * LANE)).join('') +
+      Array.from({ length: used }, (_, n) => track.path(from, to, track.radius - n * lane)).join('') +
       (hangs ? ceiling(track) : claim.law === 'topple' ? ground(track, width, falls, Math.max(high * falls, low * falls)) : ''),
     posted,
     law: lawDegrees.map((angle, i) => (angle === null ? null : track.spot(angle, radiusOf(i)))),
     framePlace: (i) => {
       const spot = track.spot(lawDegrees[i] ?? degrees[i]!, radiusOf(i))
-      return { x: spot.x - spot.nx * 27, y: spot.y - spot.ny * 27 + 4, anchor: 'middle' }
+      // The box of the number, not its middle, keeps its distance from the ticks.
+      const inwards = TICK.to + 4 + (Math.abs(spot.nx) * textWidth(String(keys[i]!.frame))) / 2 + Math.abs(spot.ny) * 6
+      return { x: spot.x - spot.nx * inwards, y: spot.y - spot.ny * inwards + 4, anchor: 'middle' }
     },
     breakPlaces: (i) => outwards(posted[i]!),
     body: (i) => {

@@ -8,7 +8,7 @@ import { lineTrack } from '~/utils/drawing/track'
 
 const MOST_LANES = 4
 const ABOVE_PLAIN = 26
-const ABOVE_BROKEN = 68
+const ABOVE_BROKEN = 74
 const BELOW = 40
 
 /** A fall, a ramp, a throw: drawn level, posted above the line and the law's below. Each way there and back has its own line. */
@@ -56,7 +56,7 @@ function rowsAbove(spot: Point, text: string, width: number): (Point & { anchor:
   const half = textWidth(text, 12, true) / 2 + 3
   const x = Math.min(Math.max(spot.x, half), width - half)
   const places: (Point & { anchor: Anchor })[] = []
-  for (const up of [41, 56]) {
+  for (const up of [45, 61]) {
     places.push({ x, y: spot.y - up, anchor: 'middle' })
     if (spot.x + 2 * half < width) places.push({ x: spot.x - 4, y: spot.y - up, anchor: 'start' })
     if (spot.x - 2 * half > 0) places.push({ x: spot.x + 4, y: spot.y - up, anchor: 'end' })
