@@ -31,10 +31,12 @@ export interface OpenPage {
 }
 
 interface Watched {
+  context: BrowserContext
   problems: string[]
   close(): Promise<void>
 }
 
+const HEAR_OUT_MS = 2_000
 let shared: Promise<Browser> | null = null
 const watched = new Set<Watched>()
 
@@ -73,10 +75,9 @@ export async function openPage(options: OpenPageOptions): Promise<OpenPage> {
 
   const page = await context.newPage()
   const entry: Watched = {
+    context,
     problems,
-    close: async () => {
-      await context.close()
-    },
+    close: () => context.close(),
   }
   watched.add(entry)
   closeWithTest(entry)
@@ -152,8 +153,16 @@ function closeWithTest(entry: Watched) {
   }
 }
 
+/** Waits until each page has said what it had to say: its complaints arrive in order, before the answer. */
+async function hearOut() {
+  const pages = [...watched].flatMap(({ context }) => context.pages())
+  const answers = Promise.allSettled(pages.map((page) => page.evaluate(() => document.readyState)))
+  await Promise.race([answers, new Promise((resolve) => setTimeout(resolve, HEAR_OUT_MS).unref())])
+}
+
 // `afterEach` runs before `onTestFinished`, so that it still sees the windows of the test.
-afterEach(() => {
+afterEach(async () => {
+  await hearOut()
   const problems = [...watched].flatMap((entry) => entry.problems.splice(0))
   expect(problems, 'what the browser complained about').toEqual([])
 })
