@@ -110,9 +110,8 @@ describe('a worker that is killed', () => {
 describe('a server that is asked to stop', () => {
   it('ends in good order while a letter hangs, and sends it after the restart', async () => {
     const mute = await startMuteServer()
-    await server.restart({ MAIL_URL: mute.url, NUXT_MAIL_PACE_SECONDS: '30' })
+    await server.stop()
     const ids = await owe(1)
-    // A worker of this pace looks only every 30 s; a restart looks at once.
     await server.restart({ MAIL_URL: mute.url, NUXT_MAIL_PACE_SECONDS: '6' })
     await until('the mail server is called', () => mute.calls > 0)
     const ended = await server.stop()
@@ -130,7 +129,8 @@ describe('a server that is asked to stop', () => {
   it('finishes a letter that is being taken right now', async () => {
     await server.restart({ MAIL_URL: mail.url })
     const ids = await owe(5)
-    await until('the first came', () => receivedOf([]).length === 0 && mail.received.length > 0)
+    const letters = await lettersOf(ids)
+    await until('the first came', () => receivedOf(letters).length > 0)
     await server.stop()
     // Whatever was in hand is marked: nothing is left under a lease.
     for (const { state } of await lettersOf(ids)) expect(['waiting', 'sent']).toContain(state)

@@ -50,7 +50,7 @@ export function fileCarrier(dataDir: string): Carrier {
   const folder = join(dataDir, 'mail')
   const transport = createTransport({ streamTransport: true, buffer: true, newline: 'windows' })
   return {
-    place: 'the folder “mail” of the data folder, as .eml files, for no mail server is set',
+    place: 'the folder “mail” in the data folder, as .eml files, because no mail server is set (MAIL_URL)',
     carry: async (id, message) => {
       const { message: source } = await transport.sendMail(message)
       if (!Buffer.isBuffer(source)) throw new Error('The letter was not written.')
