@@ -1,7 +1,7 @@
 /** Which story is told, and whether the claimed law is the one to tell it under. */
 import { allowances } from './allowance'
 import { PASSING } from './fit'
-import { charge, pencil, plainFit, strain } from './hypotheses'
+import { MOST_TOGETHER, charge, longestRun, mostMisplaced, pencil, plainFit, strain } from './hypotheses'
 import type { Care, Story } from './hypotheses'
 import { LAWS } from './laws/index'
 import { shiftedTimes } from './scan'
@@ -119,8 +119,8 @@ export type Opinion =
 export function opine(series: Series, choice: Choice, care: Care, range: number): Opinion {
   const { claimed, others, sigma } = choice
   const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
-  const limit = Math.max(2, Math.floor(series.n / 6))
-  const acceptable = claimed.story.breaking === 0 && claimed.story.out.length <= limit
+  const { breaking, out } = claimed.story
+  const acceptable = breaking === 0 && out.length <= mostMisplaced(series.n) && longestRun(out) <= MOST_TOGETHER
   const rivals = others.filter(fits).sort((a, b) => a.charge - b.charge)
   const steady = others.find(other => other.law === 'steady')
 

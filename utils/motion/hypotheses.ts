@@ -4,8 +4,9 @@
  * assumes one more thing must explain the list e^charge times better.
  */
 import { allowances } from './allowance'
-import { BRIEF, THOROUGH, refine } from './fit'
+import { BRIEF, PASSING, THOROUGH, refine } from './fit'
 import type { Effort, Fit } from './fit'
+import { firstFit } from './grow'
 import type { LawModel } from './laws/model'
 import { bestShifts, shiftedTimes, worstDrawings } from './scan'
 import type { Shift } from './scan'
@@ -16,6 +17,16 @@ import { smoothed } from './smooth'
 const MISPLACED_CHARGE = 5
 /** Charge for a held or skipped drawing, to which the choice of place among 2n is added. */
 const SHIFT_CHARGE = 3
+
+/** A misplaced drawing is one whose neighbours hold. Three in a row may be three mistakes; more are another motion. */
+export const MOST_TOGETHER = 3
+/** Never more lone bad drawings than this, however long the list. */
+const MOST_MISPLACED = 40
+
+/** How many drawings may be called misplaced before the law itself is in doubt: a sixth of the list, two at least. */
+export function mostMisplaced(n: number): number {
+  return Math.min(MOST_MISPLACED, Math.max(2, Math.floor(n / 6)))
+}
 
 export interface Story {
   /** Indexes of drawings set aside. */
@@ -86,12 +97,24 @@ function extend(series: Series, story: Story, care: Care, most: number): Story {
     const more = worstBreaking(series, now, care)
     if (more.length === 0) break
     const out = [...now.out, ...more].sort((a, b) => a - b)
+    if (longestRun(out) > MOST_TOGETHER) break
     const next = tell(series, now.fit.model, out, now.shift, now.fit.numbers, care)
     // A drawing that was put back at once would be set aside again for ever.
     if (next.out.length <= now.out.length) break
     now = next
   }
   return now
+}
+
+/** Length of the longest run of neighbours among sorted indexes. */
+export function longestRun(out: readonly number[]): number {
+  let longest = 0
+  let run = 0
+  out.forEach((i, at) => {
+    run = at > 0 && out[at - 1] === i - 1 ? run + 1 : 1
+    longest = Math.max(longest, run)
+  })
+  return longest
 }
 
 /** Of the drawings that break, the one that bends the line most; of many, the worst quarter. */
@@ -120,13 +143,17 @@ function exposures(series: Series): number[] {
 export function plainFit(series: Series, model: LawModel, care: Care, effort: Effort): { fit: Fit, base: Fit } {
   const calm = smoothed(series.x, series.y, 2 * care.slop)
   const ones = new Float64Array(series.n).fill(1)
-  let base: Fit | null = null
-  for (const start of model.begin(series, calm)) {
-    const found = refine(model, series, series.x, calm, ones, start, effort)
-    if (!base || found.cost < base.cost) base = found
-  }
-  const kept = base as Fit
-  return { base: kept, fit: refine(model, series, series.x, series.y, ones, kept.numbers, effort) }
+  const noticeable = care.slop + care.tolerance * typicalGap(series) + 3 * care.least
+  const base = firstFit(series, model, calm, noticeable, effort)
+  if (effort === PASSING && series.n > 300) return { base, fit: base }
+  return { base, fit: refine(model, series, series.x, series.y, ones, base.numbers, effort) }
+}
+
+/** Mean gap between the posted readings, whichever way they go. */
+function typicalGap(series: Series): number {
+  let sum = 0
+  for (let i = 1; i < series.n; i++) sum += Math.abs((series.y[i] as number) - (series.y[i - 1] as number))
+  return sum / Math.max(1, series.n - 1)
 }
 
 /** Every story worth hearing under one law. The first is always "nothing happened". */
@@ -174,7 +201,7 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   }
 
   // The likeliest few may need a lone bad drawing on top.
-  const most = Math.min(spare, Math.max(2, Math.floor(n / 6)))
+  const most = Math.min(spare, mostMisplaced(n))
   const sigma = pencil(told, n, care)
   const likely = [...told].sort((a, b) => charge(a, sigma, n) - charge(b, sigma, n)).slice(0, 4)
   let least = Infinity
