@@ -126,7 +126,9 @@ export async function changeShot({ production, shot, person }: OnShot, body: z.i
     ...(supervisor === undefined ? {} : { supervisorId: supervisor }),
   })
   if (shot.changed()) {
-    await shot.update({ version: version + 1 })
+    // Not `update`: that saves its own columns only.
+    shot.version = version + 1
+    await shot.save()
     await appendEvent(production, { kind: 'shot', shot, personId: person.id })
   }
   return shotFacts(shot)

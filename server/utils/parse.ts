@@ -38,17 +38,20 @@ export function parseQuery<T>(event: H3Event, schema: z.ZodType<T>): T {
 
 /** @throws 411, 413, 415, 400 or 422 before anything is looked at. */
 export async function parseBody<T>(event: H3Event, schema: z.ZodType<T>): Promise<T> {
-  if (!/^application\/json\b/i.test(getHeader(event, 'content-type') ?? '')) fail(415, 'Send JSON.')
+  if (!/^application\/json\b/i.test(getHeader(event, 'content-type') ?? '')) unfit(415, 'Send JSON.')
   // Node stops reading at the stated length, so a stated length is a real cap.
   const stated = getHeader(event, 'content-length')
-  if (stated === undefined) fail(411, 'Say how long the request is.')
-  if (Number(stated) > LIMITS.bodyBytes) fail(413, `At most ${LIMITS.bodyBytes / 1024} kB at once.`)
+  if (stated === undefined) unfit(411, 'Say how long the request is.')
+  if (Number(stated) > LIMITS.bodyBytes) unfit(413, `At most ${LIMITS.bodyBytes / 1024} kB at once.`)
   const raw = await readRawBody(event, 'utf8')
   let value: unknown
   try {
     value = JSON.parse(raw ?? '')
   } catch {
-    fail(400, 'This is not JSON.', { issues: [{ path: '', message: 'This is not JSON.' }] })
+    unfit(400, 'This is not JSON.')
   }
   return parse(schema, value)
 }
+
+/** The body as a whole is at fault, not one of its fields. */
+const unfit = (statusCode: number, message: string): never => fail(statusCode, message, { issues: [{ path: '', message }] })
