@@ -25,14 +25,16 @@ export function useRowWindow(
     scrolled.value = Math.floor(element.scrollTop / rowHeight)
     inSight.value = Math.ceil(element.clientHeight / rowHeight)
   }
-  /** Scrolls the region just far enough to bring a row into it; the page itself stays where it is. */
-  function reveal(index: number, headHeight = rowHeight) {
+  /**
+   * Scrolls the region just far enough to bring a row into it; the page itself stays where it is. `above` is what lies over the
+   * first row in pixels, `head` the part of it that stays in sight.
+   */
+  function reveal(index: number, above: number, head: number) {
     const element = region.value
     if (!element || index < 0) return
-    const top = index * rowHeight
-    const room = element.clientHeight - headHeight
-    if (top < element.scrollTop) element.scrollTop = top
-    else if (top + rowHeight > element.scrollTop + room) element.scrollTop = top + rowHeight - room
+    const top = above + index * rowHeight
+    if (top < element.scrollTop + head) element.scrollTop = top - head
+    else if (top + rowHeight > element.scrollTop + element.clientHeight) element.scrollTop = top + rowHeight - element.clientHeight
     measure()
   }
 

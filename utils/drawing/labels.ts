@@ -13,7 +13,12 @@ export interface Wanted<T> {
   item: T
   text: string
   /** Tried in this order: where the text's baseline would start, and which end of it. */
-  places: (Point & { anchor: Anchor })[]
+  places: Place[]
+}
+export interface Place extends Point {
+  anchor: Anchor
+  /** Where a hair would lead from here to the mark: no other label may lie across it. */
+  hair?: Box
 }
 export interface Placed<T> extends Point {
   item: T
@@ -58,13 +63,17 @@ export function placeLabels<T>(
 ): Placed<T>[] {
   const { size = 12, bold = false, gap = 3, most = Number.POSITIVE_INFINITY } = style
   const taken = [...obstacles]
+  const hairs: Box[] = []
   const placed: Placed<T>[] = []
   for (const { item, text, places } of wanted) {
     if (placed.length >= most) break
     for (const place of places) {
       const box = textBox(text, place, place.anchor, size, bold)
-      if (!inside(box, bounds) || taken.some((other) => overlaps(box, other, gap))) continue
+      if (!inside(box, bounds) || [...taken, ...hairs].some((other) => overlaps(box, other, gap))) continue
+      const { hair } = place
+      if (hair && placed.some((other) => overlaps(hair, other.box, 1))) continue
       taken.push(box)
+      if (hair) hairs.push(hair)
       placed.push({ item, text, x: place.x, y: place.y, anchor: place.anchor, box })
       break
     }

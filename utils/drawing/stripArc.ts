@@ -1,10 +1,10 @@
 import { bodyPath } from '~/utils/drawing/body'
 import { textWidth } from '~/utils/drawing/labels'
-import type { Anchor } from '~/utils/drawing/labels'
+import type { Anchor, Place } from '~/utils/drawing/labels'
 import { passesOf } from '~/utils/drawing/passes'
 import type { StripClaim, StripKey, StripLayout } from '~/utils/drawing/stripLayout'
 import { TICK } from '~/utils/drawing/stripLayout'
-import type { Point, Spot } from '~/utils/drawing/strokes'
+import type { Spot } from '~/utils/drawing/strokes'
 import { px } from '~/utils/drawing/strokes'
 import type { ArcTrack } from '~/utils/drawing/track'
 import { arcTrack, degreesOf } from '~/utils/drawing/track'
@@ -102,8 +102,8 @@ function besidePivot(claim: StripClaim, falls: 1 | -1): { left?: number; right?:
 }
 
 /** Words beyond the cross, away from the pivot; further out where it is crowded. */
-function outwards(spot: Spot): (Point & { anchor: Anchor })[] {
-  const places: (Point & { anchor: Anchor })[] = []
+function outwards(spot: Spot): Place[] {
+  const places: Place[] = []
   const side: Anchor = spot.nx > 0.15 ? 'start' : spot.nx < -0.15 ? 'end' : 'middle'
   for (const further of [12, 24, 38, 54, 72]) {
     const out = TICK.cross + further

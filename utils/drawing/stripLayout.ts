@@ -1,5 +1,5 @@
 import type { Claim } from '~/utils/contracts/production'
-import type { Anchor } from '~/utils/drawing/labels'
+import type { Place } from '~/utils/drawing/labels'
 import type { Point, Spot } from '~/utils/drawing/strokes'
 import type { JudgedKey } from '~/utils/motion/types'
 
@@ -16,8 +16,8 @@ export interface StripLayout {
   posted: Spot[]
   law: (Spot | null)[]
   /** Places to try for a frame's number and for what a breaking drawing says, in pixels. */
-  framePlace: (index: number) => Point & { anchor: Anchor }
-  breakPlaces: (index: number, text: string) => (Point & { anchor: Anchor })[]
+  framePlace: (index: number) => Place
+  breakPlaces: (index: number, text: string) => Place[]
   body: (index: number) => { posted: string; law: string | null } | null
   sides: string
 }

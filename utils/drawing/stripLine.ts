@@ -1,5 +1,5 @@
 import { textWidth } from '~/utils/drawing/labels'
-import type { Anchor } from '~/utils/drawing/labels'
+import type { Place } from '~/utils/drawing/labels'
 import { passesOf } from '~/utils/drawing/passes'
 import type { StripClaim, StripKey, StripLayout } from '~/utils/drawing/stripLayout'
 import type { Point } from '~/utils/drawing/strokes'
@@ -52,14 +52,16 @@ export function stripLine(keys: readonly StripKey[], claim: StripClaim, width: n
 }
 
 /** Two rows over the cross, moved sideways as far as the edge of the paper asks. */
-function rowsAbove(spot: Point, text: string, width: number): (Point & { anchor: Anchor })[] {
+function rowsAbove(spot: Point, text: string, width: number): Place[] {
   const half = textWidth(text, 12, true) / 2 + 3
   const x = Math.min(Math.max(spot.x, half), width - half)
-  const places: (Point & { anchor: Anchor })[] = []
+  const places: Place[] = []
   for (const up of [45, 61]) {
-    places.push({ x, y: spot.y - up, anchor: 'middle' })
-    if (spot.x + 2 * half < width) places.push({ x: spot.x - 4, y: spot.y - up, anchor: 'start' })
-    if (spot.x - 2 * half > 0) places.push({ x: spot.x + 4, y: spot.y - up, anchor: 'end' })
+    const y = spot.y - up
+    const hair = { x: spot.x - 1, y: y + 3, width: 2, height: up - 40 }
+    places.push({ x, y, anchor: 'middle', hair })
+    if (spot.x + 2 * half < width) places.push({ x: spot.x - 4, y, anchor: 'start', hair })
+    if (spot.x - 2 * half > 0) places.push({ x: spot.x + 4, y, anchor: 'end', hair })
   }
   return places
 }

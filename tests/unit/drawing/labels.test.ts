@@ -34,6 +34,13 @@ describe('placeLabels', () => {
     expect(first).toMatchObject({ item: 'a', y: 60 })
     expect(second).toMatchObject({ item: 'b', y: 40 })
   })
+  it('leads no hair across another label, and sets no label across a hair', () => {
+    const hair = { x: 199, y: 30, width: 2, height: 40 }
+    const high = { item: 'high', text: '63', places: [{ ...place(200, 28), hair }] }
+    const low = { item: 'low', text: '61 · 2.7 early', places: [place(200, 60)] }
+    expect(placeLabels([high, low], bounds).map(({ item }) => item)).toEqual(['high'])
+    expect(placeLabels([low, high], bounds).map(({ item }) => item)).toEqual(['low'])
+  })
   it('keeps clear of obstacles and leaves out what fits nowhere', () => {
     const wall = [{ x: 0, y: 0, width: 400, height: 120 }]
     expect(placeLabels([{ item: 1, text: '61', places: [place(200, 60)] }], bounds, wall)).toEqual([])
