@@ -48,9 +48,10 @@ export function shiftFinding(key: JudgedKey, late: number, before: boolean): Fin
   }
 }
 
-export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number): Finding {
+export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number, keys: readonly JudgedKey[]): Finding {
+  const breaking = keys.filter(key => key.breaks).length
   const text = reads === null
-    ? `No law here explains this list; as ${LAW_WORDS[claimed]} it is ${figure(misfit)} times what would be noticed.`
+    ? `No law here explains this list: as ${LAW_WORDS[claimed]}, ${breaking} of its ${keys.length} drawings break.`
     : `This is not ${LAW_WORDS[claimed]}; it reads as ${LAW_WORDS[reads]}.`
   return { kind: 'wrong-law', frames: [], amount: misfit, text }
 }

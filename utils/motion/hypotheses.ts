@@ -69,7 +69,7 @@ export function strain(series: Series, fit: Fit, care: Care, shift: Shift | null
 /** Tells a story; drawings that turn out not to break once the line is free of the others are put back. */
 function tell(series: Series, model: LawModel, out: number[], shift: Shift | null, from: Float64Array, care: Care): Story {
   const story = tellExactly(series, model, out, shift, from, care)
-  if (out.length < 2) return story
+  if (out.length === 0) return story
   const strained = strain(series, story.fit, care, shift)
   const kept = out.filter(i => (strained[i] as number) > 1)
   return kept.length === out.length ? story : tell(series, model, kept, shift, story.fit.numbers, care)

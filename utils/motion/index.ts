@@ -8,4 +8,7 @@ export {
   STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
 } from './bodies'
 export { LAW_WORDS, lawsFor } from './laws/index'
+export { edgeRatio, leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
+export { framesFor, plannedList, secondsFor } from './plan'
+export type { Plan, PlannedList } from './plan'
 export * from './types'

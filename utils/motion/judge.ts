@@ -52,7 +52,7 @@ export function judgeInDepth(request: CheckRequest): Judgement {
     const line: Line = { law: request.law, numbers: Array.from(plain.fit.numbers), lag: 0 }
     const keys = judgeKeys(request, series, traceLine(series, line, series.x))
     const amount = readsAs.find(({ law }) => law === request.law)?.misfit ?? 0
-    const findings = [wrongLawFinding(request.law, opinion.reads, amount)]
+    const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
     return {
       line, pace: null,
       result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: null } },

@@ -1,0 +1,91 @@
+/** The bench: a spacing list worked out before anything is drawn. */
+import { pathAcceleration } from './bodies'
+import { RADIAN } from './series'
+import { freeSwing } from './swing'
+import { paceOf, swingPeriod, toppleTime } from './times'
+import type { BodySubject, Key, PathSubject } from './types'
+
+interface OnPaper {
+  fps: number
+  /** Frames per drawing: 1 on ones, 2 on twos. */
+  exposure: number
+  /** First frame's number; 1 when left out. */
+  firstFrame?: number
+  /** Readings are rounded to this; not at all when left out. */
+  step?: number
+}
+
+export type Plan = OnPaper & (
+  /** From rest at `lean` degrees until `to` degrees (90 when left out). */
+  | { law: 'topple', subject: BodySubject, lean: number, to?: number }
+  /** Let go at `amplitude` degrees, for `swings` full swings. */
+  | { law: 'pendulum', subject: BodySubject, amplitude: number, swings: number }
+  /** From rest over `travel` drawing units. */
+  | { law: 'odd-rule', subject: PathSubject & { unitsPerMetre: number }, travel: number }
+  /** Evenly over `travel` drawing units in `seconds`. */
+  | { law: 'steady', travel: number, seconds: number }
+)
+
+export interface PlannedList {
+  keys: Key[]
+  /** Seconds that the whole motion takes; Infinity where it never ends. */
+  seconds: number
+  /** The same in frames, not rounded: where it ends between two drawings. */
+  frames: number
+}
+
+/** No plan has more keys than a list may have. */
+const MOST_KEYS = 2000
+
+/** Seconds the planned motion takes. */
+export function secondsFor(plan: Plan): number {
+  switch (plan.law) {
+    case 'topple': return toppleTime(plan.subject, plan.lean, plan.to ?? 90)
+    case 'pendulum': return swingPeriod(plan.subject, plan.amplitude) * plan.swings
+    case 'odd-rule': return Math.sqrt(2 * Math.abs(plan.travel) / (plan.subject.unitsPerMetre * pathAcceleration(plan.subject)))
+    case 'steady': return plan.seconds
+  }
+}
+
+/** Frames the planned motion needs, rounded up to whole ones; Infinity where it never ends. Sizes scale as time squared. */
+export function framesFor(plan: Plan): number {
+  return Math.ceil(secondsFor(plan) * plan.fps - 1e-9)
+}
+
+/** Keys at every exposure up to the end of the motion; degrees for turning, drawing units for the rest. At most 2,000 keys. */
+export function plannedList(plan: Plan): PlannedList {
+  const seconds = secondsFor(plan)
+  const frames = seconds * plan.fps
+  const count = Math.min(MOST_KEYS, Math.floor(frames / plan.exposure + 1e-9) + 1)
+  const times = Float64Array.from({ length: count }, (_, i) => i * plan.exposure / plan.fps)
+  const readings = readingsAt(plan, times)
+  const first = plan.firstFrame ?? 1
+  const { step } = plan
+  return {
+    seconds, frames,
+    keys: Array.from(readings, (reading, i) => ({
+      frame: first + i * plan.exposure,
+      // toFixed drops the stray last bits of a multiple of 0.1.
+      reading: step ? Number((Math.round(reading / step) * step).toFixed(9)) : reading,
+    })),
+  }
+}
+
+function readingsAt(plan: Plan, times: Float64Array): Float64Array {
+  switch (plan.law) {
+    case 'topple': return turned(plan.subject, plan.lean, true, times)
+    case 'pendulum': return turned(plan.subject, plan.amplitude, false, times)
+    case 'odd-rule': {
+      const a = Math.sign(plan.travel) * plan.subject.unitsPerMetre * pathAcceleration(plan.subject)
+      return times.map(t => a * t * t / 2)
+    }
+    case 'steady': return times.map(t => plan.travel * t / plan.seconds)
+  }
+}
+
+function turned(subject: BodySubject, start: number, fromTop: boolean, times: Float64Array): Float64Array {
+  const k = paceOf(subject)
+  const angle = new Float64Array(times.length)
+  freeSwing(start * RADIAN, 0, fromTop, times.map(t => k * t), times.length, angle, new Float64Array(times.length))
+  return angle.map(a => a / RADIAN)
+}
