@@ -1,12 +1,25 @@
 import { basename } from 'node:path'
 import { fileURLToPath } from 'node:url'
+import type { Nuxt } from 'nuxt/schema'
 
 // A build folder of one's own lets two builds run side by side (tests beside development). The intermediate files stay
 // inside the checkout, where the packages they import are found.
 const buildDir = process.env.TILTYARD_BUILD_DIR
 
 export default defineNuxtConfig({
-  modules: ['@nuxtjs/tailwindcss', '@pinia/nuxt', 'nuxt-auth-utils', '@nuxt/icon', '@nuxt/eslint'],
+  modules: [
+    '@nuxtjs/tailwindcss',
+    '@pinia/nuxt',
+    'nuxt-auth-utils',
+    '@nuxt/icon',
+    '@nuxt/eslint',
+    // Vue numbers its ids anew behind every component that prefetches. Nuxt strips that from the browser's half only, and
+    // behind the first icon every label would point at an id that its field does not have.
+    (_: unknown, nuxt: Nuxt) => {
+      const { client } = nuxt.options.optimization.treeShake.composables
+      client.vue = (client.vue ?? []).filter((name) => name !== 'onServerPrefetch')
+    },
+  ],
   // Folders sit at the root, as DEVELOPERS.md draws them.
   srcDir: '.',
   alias: {
@@ -37,6 +50,8 @@ export default defineNuxtConfig({
   icon: {
     // Drawn on the page from the bundle: no request ever leaves for an icon.
     provider: 'none',
+    // As SVG in the page: the other way writes a style element, which the content security policy refuses.
+    mode: 'svg',
     serverBundle: false,
     clientBundle: { scan: true, sizeLimitKb: 64 },
     fallbackToApi: false,
