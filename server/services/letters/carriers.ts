@@ -1,14 +1,14 @@
 import { mkdir, open, rename, unlink } from 'node:fs/promises'
 import { join } from 'node:path'
 import { createTransport } from 'nodemailer'
-import type { MailDataOptions } from 'nodemailer'
+import type { SendMailOptions } from 'nodemailer'
 import type { Pace } from './pace'
 
 /** Takes letters somewhere. Throws when it cannot; the error may carry the server's `responseCode` and `response`. */
 export interface Carrier {
   /** Where letters go, for the mail room: "Letters go to …". */
   place: string
-  carry(letterId: string, message: MailDataOptions, signal: AbortSignal): Promise<void>
+  carry(letterId: string, message: SendMailOptions, signal: AbortSignal): Promise<void>
 }
 
 /** What one address in MAIL_URL says. @throws one sentence when it is none. */

@@ -1,4 +1,4 @@
-import type { MailDataOptions } from 'nodemailer'
+import type { SendMailOptions } from 'nodemailer'
 import type { Letter } from '~/server/models'
 import { domainOf, headerLine } from './headers'
 
@@ -13,7 +13,7 @@ interface Addressed {
 }
 
 /** A stored letter as the mail library takes it. Every text that comes near a header is made one line first. */
-export function messageOf(letter: Letter, { from, to, listId, baseUrl, text, html }: Addressed): MailDataOptions {
+export function messageOf(letter: Letter, { from, to, listId, baseUrl, text, html }: Addressed): SendMailOptions {
   const list: Record<string, string> = listId
     ? { 'List-ID': `<${headerLine(listId)}.${domainOf(from)}>`, 'List-Unsubscribe': `<${baseUrl}/me>` }
     : {}
