@@ -1,3 +1,4 @@
+import './scripts/lib/group-by.mjs'
 import withNuxt from './.nuxt/eslint.config.mjs'
 
 export default withNuxt(
@@ -10,6 +11,8 @@ export default withNuxt(
       'vue/no-v-html': 'error',
       'vue/html-self-closing': 'off',
       'no-console': 'off',
+      // Refusing control characters takes naming them.
+      'no-control-regex': 'off',
     },
   },
 )

@@ -1,7 +1,7 @@
 /** odex ships TypeScript sources that do not compile under `strict`; these are the parts that the checks use. */
 export type Derivative = (x: number, y: number[]) => number[]
 export type Dense = (component: number, x: number) => number
-export type OutputFunction = (step: number, from: number, to: number, y: number[], dense?: Dense) => boolean | void
+export type OutputFunction = (step: number, from: number, to: number, y: number[], dense?: Dense) => boolean | undefined
 
 export class Solver {
   constructor(dimensions: number)
