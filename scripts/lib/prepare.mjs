@@ -46,7 +46,11 @@ export function outputDir(root, env = process.env) {
   return env.TILTYARD_BUILD_DIR ? resolve(root, env.TILTYARD_BUILD_DIR, 'output') : join(root, '.output')
 }
 
-/** The built server's entry file. */
+/**
+ * The built server's entry file.
+ * @param {string} root
+ * @param {Record<string, string | undefined>} [env]
+ */
 export const serverEntry = (root, env = process.env) => join(outputDir(root, env), 'server', 'index.mjs')
 
 /** @returns {boolean} true when `npm ci` has to run before anything else can */
@@ -65,7 +69,11 @@ export function stampInstall(root) {
   writeFileSync(join(root, INSTALL_STAMP), JSON.stringify(stamp))
 }
 
-/** @returns {boolean} true when there is no finished build of exactly these sources */
+/**
+ * @param {string} root
+ * @param {Record<string, string | undefined>} [env]
+ * @returns {boolean} true when there is no finished build of exactly these sources
+ */
 export function needsBuild(root, env = process.env) {
   if (!existsSync(serverEntry(root, env))) return true
   return readJson(join(outputDir(root, env), BUILD_STAMP))?.sources !== hashSources(root)
@@ -98,6 +106,8 @@ export async function install(root) {
 
 /**
  * Builds, whether or not it is needed.
+ * @param {string} root
+ * @param {{ env?: Record<string, string | undefined>, timeoutMs?: number }} [options]
  * @returns {Promise<boolean>} false when the build failed; its output has said why
  */
 export async function build(root, { env = process.env, timeoutMs } = {}) {

@@ -1,3 +1,4 @@
+import { setTimeout } from 'node:timers/promises'
 import { chromium } from 'playwright-core'
 import type { Browser, BrowserContext, BrowserContextOptions, Page, Request } from 'playwright-core'
 import { afterAll, afterEach, expect, onTestFinished } from 'vitest'
@@ -157,7 +158,7 @@ function closeWithTest(entry: Watched) {
 async function hearOut() {
   const pages = [...watched].flatMap(({ context }) => context.pages())
   const answers = Promise.allSettled(pages.map((page) => page.evaluate(() => document.readyState)))
-  await Promise.race([answers, new Promise((resolve) => setTimeout(resolve, HEAR_OUT_MS).unref())])
+  await Promise.race([answers, setTimeout(HEAR_OUT_MS, undefined, { ref: false })])
 }
 
 // `afterEach` runs before `onTestFinished`, so that it still sees the windows of the test.

@@ -75,13 +75,13 @@ describe('settings', () => {
 })
 
 describe('plain http', () => {
-  it.each([
+  it.each<Record<string, string>>([
     { HOST: '192.168.1.5' },
     { HOST: 'board.studio.example' },
     { HOST: '0.0.0.0', BASE_URL: 'http://board.studio.example' },
     { BASE_URL: 'http://board.studio.example' },
     { HOST: '0.0.0.0', BASE_URL: 'http://127.0.0.1:4310' },
-  ])('is refused off loopback: %o', (env: Record<string, string>) => {
+  ])('is refused off loopback: %o', (env) => {
     expect(() => read(env)).toThrow(/ALLOW_PLAIN_HTTP=yes/)
     expect(() => read({ ...env, ALLOW_PLAIN_HTTP: 'no' })).toThrow(/ALLOW_PLAIN_HTTP=yes/)
     expect(read({ ...env, ALLOW_PLAIN_HTTP: 'yes' }).plainHttpAllowed).toBe(true)
