@@ -21,6 +21,7 @@ interface Follower extends Following {
 const ANSWER_WITHIN = 5_000
 const FETCH_WITHIN = 15_000
 const TRY_AGAIN = 2_000
+const AT_ONCE = 50
 /** A blink of the connection is not worth a notice. */
 const GRACE = 3_000
 const POLL_EVERY = 20_000
@@ -46,6 +47,7 @@ export const useLiveStore = defineStore('live', () => {
   let graceTimer: ReturnType<typeof setTimeout> | null = null
   let again: ReturnType<typeof setTimeout> | null = null
   let listening = false
+  let sessionDoubted = false
 
   /** The production of the page on screen; while one page gives way to the next, the newer one's. */
   const production = () => [...followers].at(-1)?.production
@@ -115,7 +117,8 @@ export const useLiveStore = defineStore('live', () => {
       lookers.value = {}
       waitForGrace()
       // After a word of the server's the client does not come back by itself.
-      if (!line.active) tryAgain(connect)
+      if (!line.active) tryAgain(connect, sessionDoubted ? AT_ONCE : TRY_AGAIN)
+      sessionDoubted = false
     })
     line.on('connect_error', (problem: Error & { data?: SocketAnswer }) => {
       if (problem.data?.ok === false && problem.data.statusCode === 401) return signedOut()
@@ -129,7 +132,8 @@ export const useLiveStore = defineStore('live', () => {
       lookers.value = { ...lookers.value, [presence.production]: presence.lookers }
     })
     line.on('dismissed', ({ reason, production: slug }) => {
-      if (reason === 'session') signedOut()
+      // Perhaps this browser has a new session by now, as after a new password: the handshake will tell.
+      if (reason === 'session') sessionDoubted = true
       else if (slug === production()) rightsChanged(reason)
     })
   }
@@ -186,9 +190,9 @@ export const useLiveStore = defineStore('live', () => {
     // While the line is down, the poll and the next connect ask anyway.
     else if (socket?.connected) tryAgain(retry)
   }
-  function tryAgain(task: () => Promise<unknown>): void {
+  function tryAgain(task: () => Promise<unknown>, ms = TRY_AGAIN): void {
     if (again) clearTimeout(again)
-    again = setTimeout(() => followers.size > 0 && void task(), TRY_AGAIN)
+    again = setTimeout(() => followers.size > 0 && void task(), ms)
   }
   function waitForGrace(): void {
     graceTimer ??= setTimeout(() => {

@@ -31,7 +31,7 @@ export default defineNitroPlugin((nitro) => {
 
   const stopCarrying = carryNews(io, presence)
   const sweeping = setInterval(() => {
-    sweep(io).catch((problem: unknown) => log.error('socket sweep failed', { problem: String(problem) }))
+    sweep(io.sockets.sockets.values()).catch((problem: unknown) => log.error('socket sweep failed', { problem: String(problem) }))
   }, SWEEP_EVERY)
   sweeping.unref()
 

@@ -1,13 +1,13 @@
-import { ABSOLUTE_DAYS, IDLE_DAYS } from '~/server/utils/session'
 import { rows } from '~/server/models/database'
 import { news } from '~/server/services/news'
+import { hashSecret } from '~/server/utils/secret'
+import { isOver } from '~/server/utils/session'
 import type { PresenceBoard } from './presence'
 import type { LiveServer, LiveSocket } from './types'
 
 /** Everyone who follows a production. */
 export const roomOf = (production: string): string => `production:${production}`
 
-const DAY = 24 * 60 * 60 * 1000
 let changes = 0
 /**
  * Rises with every ended session and changed membership. What was read from the database before a rise may no longer
@@ -61,17 +61,20 @@ export function leave(socket: LiveSocket, presence: PresenceBoard): void {
   presence.set(socket.id, null)
 }
 
-/** Sessions also end by growing old, of which there is no news: cuts the sockets of those that did. */
-export async function sweep(io: LiveServer): Promise<void> {
-  const open = [...io.sockets.sockets.values()] as LiveSocket[]
+/**
+ * Sessions also end without news, by growing old or by going on under another token: cuts the sockets whose token opens
+ * none any more.
+ */
+export async function sweep(sockets: Iterable<LiveSocket>): Promise<void> {
+  const open = [...sockets].map((socket) => ({ socket, hash: hashSecret(socket.data.token) }))
   if (open.length === 0) return
-  const before = (days: number) => new Date(Date.now() - days * DAY).toISOString()
-  const alive = await rows<{ id: string }>(
-    `SELECT sessions.id FROM sessions JOIN people ON people.id = sessions.person_id
-      WHERE sessions.id IN (:ids) AND sessions.ended_at IS NULL AND people.disabled_at IS NULL
-        AND sessions.seen_at >= :idle AND sessions.created_at >= :absolute`,
-    { ids: open.map((socket) => socket.data.asker.sessionId), idle: before(IDLE_DAYS), absolute: before(ABSOLUTE_DAYS) },
+  const alive = await rows<{ hash: string; createdAt: string; seenAt: string }>(
+    `SELECT sessions.token_hash AS hash, sessions.created_at AS createdAt, sessions.seen_at AS seenAt
+       FROM sessions JOIN people ON people.id = sessions.person_id
+      WHERE sessions.token_hash IN (:hashes) AND sessions.ended_at IS NULL AND people.disabled_at IS NULL`,
+    { hashes: [...new Set(open.map(({ hash }) => hash))] },
   )
-  const ids = new Set(alive.map((session) => session.id))
-  open.filter((socket) => !ids.has(socket.data.asker.sessionId)).forEach(dismissSession)
+  // Looking is no use of the session: askerOf would make it young again each time.
+  const hashes = new Set(alive.filter((session) => !isOver(session, Date.now())).map(({ hash }) => hash))
+  for (const { socket, hash } of open) if (!hashes.has(hash)) dismissSession(socket)
 }
