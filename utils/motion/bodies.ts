@@ -74,13 +74,9 @@ export function pathShare(subject: PathSubject): number {
   return Math.sin((subject.slope ?? 90) * Math.PI / 180) / (1 + ROLL[subject.roll ?? 'slide'])
 }
 
-/** Three figures at most, no exponent for the sizes that bodies come in. */
+/** Four figures at most, trailing noughts dropped, no exponent for the sizes that bodies come in. */
 export function figure(value: number): string {
-  if (!Number.isFinite(value)) return 'unbounded'
-  const size = Math.abs(value)
-  if (size !== 0 && (size >= 1e6 || size < 1e-3)) return value.toExponential(1)
-  const text = size >= 100 ? value.toFixed(0) : size >= 10 ? value.toFixed(1) : value.toPrecision(2)
-  return text.includes('.') ? text.replace(/\.?0+$/, '') : text
+  return String(Number(value.toPrecision(4)))
 }
 
 /** The subject in words, as it is read after "a claim of": "a rod 38 m tall", "a drop at 80 units per metre". */

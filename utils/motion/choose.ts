@@ -1,11 +1,12 @@
 /** Which story is told, and whether the claimed law is the one to tell it under. */
 import { allowances } from './allowance'
 import { PASSING } from './fit'
-import { MOST_TOGETHER, charge, longestRun, mostMisplaced, pencil, plainFit, strain } from './hypotheses'
+import { MISPLACED_CHARGE, MOST_TOGETHER, badDrawings, charge, longestRun, mostMisplaced, pencil, plainFit, strain } from './hypotheses'
 import type { Care, Story } from './hypotheses'
 import { LAWS } from './laws/index'
 import { shiftedTimes } from './scan'
 import type { Series } from './series'
+import type { Scale } from './size'
 import type { Law } from './types'
 
 /** What one drawing can cost a law at most, nats: beyond this it counts as a lone bad drawing, not as evidence against the law. */
@@ -13,6 +14,8 @@ const MOST_PER_DRAWING = 7
 /** How much better another law must do, nats, before the claimed one is doubted (e⁸ is about three thousand to one). */
 const DOUBT = 8
 const DOUBT_WITH_FAULTS = 3
+/** A pace known to within a factor of two is known well enough to agree with a claim. */
+const SURE = Math.LN2
 /** Misfit under which nobody would doubt the claimed law, whatever else fits. */
 const UNNOTICED = 0.5
 
@@ -49,7 +52,9 @@ const blamed = (story: Story) => story.out.length + (story.shift ? 1 : 0)
 /** The cheapest story that shows. */
 export function cheapest(series: Series, told: readonly Story[], care: Care, sigma: number): Story {
   const simplest = told.reduce((least, story) => (story.breaking === 0 ? Math.min(least, blamed(story)) : least), Infinity)
-  const cost = (story: Story) => charge(story, sigma, series.n) + (blamed(story) > simplest ? NEEDLESS : 0)
+  // A drawing that still breaks will have to be told of too, so it is charged for like the others.
+  const cost = (story: Story) =>
+    charge(story, sigma, series.n) + MISPLACED_CHARGE * story.breaking + (blamed(story) > simplest ? NEEDLESS : 0)
   const ranked = [...told].sort((a, b) => cost(a) - cost(b))
   return ranked.find(story => shows(series, story, care)) ?? (told[0] as Story)
 }
@@ -116,21 +121,25 @@ export type Opinion =
   | { kind: 'wrong-law', reads: Law | null }
 
 /** Keeps to the claimed law, doubts it, or says that the list can't tell. */
-export function opine(series: Series, choice: Choice, care: Care, range: number): Opinion {
+export function opine(series: Series, choice: Choice, care: Care, range: number, scale: Scale): Opinion {
   const { claimed, others, sigma } = choice
   const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
-  const { breaking, out } = claimed.story
-  const acceptable = breaking === 0 && out.length <= mostMisplaced(series.n) && longestRun(out) <= MOST_TOGETHER
+  const off = badDrawings(series, claimed.story, care)
+  const acceptable = off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER
   const rivals = others.filter(fits).sort((a, b) => a.charge - b.charge)
   const steady = others.find(other => other.law === 'steady')
 
   // The claimed law only fits by not curving: what is there is even spacing, if the list is long enough to have shown anything else.
   if (acceptable && steady && steady.misfit <= UNNOTICED && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
+    // At some claimed sizes nothing else could be seen in so short a time: the list agrees with its claim, or can't tell.
+    if (scale.pace !== null && Math.abs(Math.log(scale.pace)) <= scale.spread) {
+      return { kind: scale.spread < SURE ? 'law-holds' : 'too-short' }
+    }
     return range / 4 > Math.max(6 * sigma, care.slop) ? { kind: 'wrong-law', reads: 'steady' } : { kind: 'too-short' }
   }
   const [rival] = rivals
   if (!acceptable) return { kind: 'wrong-law', reads: rival ? simplest(rivals, rival).law : null }
-  const faulted = claimed.story.out.length > 0 || claimed.story.shift !== null
+  const faulted = off.length > 0 || claimed.story.shift !== null
   // A fault under the claimed law has been charged for already; without one, only what could be noticed is held against it.
   const margin = faulted ? DOUBT_WITH_FAULTS : DOUBT
   if ((faulted || claimed.misfit > UNNOTICED) && rival && rival.charge + margin < claimed.charge) return { kind: 'wrong-law', reads: simplest(rivals, rival).law }

@@ -53,7 +53,10 @@ export function jacobi(l: Ladder, u: number, out: Float64Array): void {
   let sn = Math.sin(angle)
   let cn = Math.cos(angle)
   let dn = 1
-  if (sn !== 0) {
+  if (Math.abs(sn) < 1e-150) {
+    // The cotangent would overflow; sn u = u to every digit.
+    sn = u
+  } else {
     let p = cn / sn
     let c = l.mean * p
     for (let i = l.steps - 1; i >= 0; i--) {

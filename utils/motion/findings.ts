@@ -59,12 +59,18 @@ export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number,
 export function wrongScaleFinding(scale: Scale, needed: number, used: number): Finding | null {
   const { size, claimed } = scale
   if (!size || claimed === null) return null
-  const interval = `${figure(size.value)} ${size.unit} (${figure(size.low)}–${figure(size.high)})`
+  const to = placesFor(size.high - size.low)
+  const interval = `${size.value.toFixed(to)} ${size.unit} (${size.low.toFixed(to)}–${size.high.toFixed(to)})`
   const reads = size.unit === 'm' ? `Reads as ${interval}` : `Reads as gravity ${interval} at this scale`
   return {
     kind: 'wrong-scale', frames: [], amount: size.value / claimed,
     text: `${reads}; ${figure(claimed)} ${size.unit} needs ${needed} frames, not ${used}.`,
   }
+}
+
+/** Decimal places that show an interval of this width as an interval: none for metres of doubt, three at most. */
+function placesFor(width: number): number {
+  return width > 0 ? Math.min(3, Math.max(0, Math.ceil(-Math.log10(width / 2)))) : 3
 }
 
 /** What was found about the whole list comes first, then in order of how far off. */

@@ -9,12 +9,12 @@ import type { Effort, Fit } from './fit'
 import { firstFit } from './grow'
 import type { LawModel } from './laws/model'
 import { bestShifts, shiftedTimes, worstDrawings } from './scan'
-import type { Shift } from './scan'
+import type { Candidate, Shift } from './scan'
 import type { Series } from './series'
 import { smoothed } from './smooth'
 
 /** Charge for saying that one particular drawing is off. */
-const MISPLACED_CHARGE = 5
+export const MISPLACED_CHARGE = 5
 /** Charge for a held or skipped drawing, to which the choice of place among 2n is added. */
 const SHIFT_CHARGE = 3
 
@@ -23,9 +23,9 @@ export const MOST_TOGETHER = 3
 /** Never more lone bad drawings than this, however long the list. */
 const MOST_MISPLACED = 40
 
-/** How many drawings may be called misplaced before the law itself is in doubt: a sixth of the list, two at least. */
+/** How many drawings may be called misplaced before the law itself is in doubt: a quarter of the list, two at least. */
 export function mostMisplaced(n: number): number {
-  return Math.min(MOST_MISPLACED, Math.max(2, Math.floor(n / 6)))
+  return Math.min(MOST_MISPLACED, Math.max(2, Math.floor(n / 4)))
 }
 
 export interface Story {
@@ -106,6 +106,12 @@ function extend(series: Series, story: Story, care: Care, most: number): Story {
   return now
 }
 
+/** Drawings that a story calls bad: those set aside and those that break all the same. Sorted indexes. */
+export function badDrawings(series: Series, story: Story, care: Care): number[] {
+  const strained = strain(series, story.fit, care, story.shift)
+  return Array.from(strained.keys()).filter(i => (strained[i] as number) > 1)
+}
+
 /** Length of the longest run of neighbours among sorted indexes. */
 export function longestRun(out: readonly number[]): number {
   let longest = 0
@@ -156,6 +162,36 @@ function typicalGap(series: Series): number {
   return sum / Math.max(1, series.n - 1)
 }
 
+/**
+ * Drawings that break a line which gives way to none of them: a few rounds of least squares, each drawing weighing less the further it
+ * was off in the round before (weights of Cauchy's distribution; common robust practice).
+ */
+function doubted(series: Series, from: Fit, care: Care): number[] {
+  let fit = from
+  for (let round = 0; round < 6; round++) {
+    const strained = strain(series, fit, care)
+    const middle = strained.slice().sort()[series.n >> 1] as number
+    const scale = Math.max(0.3, middle)
+    const weights = strained.map(value => 1 / (1 + (value / scale) ** 2))
+    fit = refine(fit.model, series, series.x, series.y, weights, fit.numbers, { steps: 3, enough: 1e-3 })
+  }
+  const strained = strain(series, fit, care)
+  return Array.from(strained.keys()).filter(i => (strained[i] as number) > 1)
+}
+
+/** Fits the cheapest `most` of the candidates that have not been heard yet and adds them to the stories told. */
+function hear(series: Series, model: LawModel, care: Care, told: Story[], candidates: Candidate[], most: number): void {
+  const known = new Set(told.map(({ shift }) => (shift ? `${shift.at} ${shift.by}` : '')))
+  let heard = 0
+  for (const { shift, numbers } of [...candidates].sort((a, b) => a.cost - b.cost)) {
+    const name = `${shift.at} ${shift.by}`
+    if (known.has(name)) continue
+    if (heard++ >= most) break
+    known.add(name)
+    told.push(tell(series, model, [], shift, numbers, care))
+  }
+}
+
 /** Every story worth hearing under one law. The first is always "nothing happened". */
 export function stories(series: Series, model: LawModel, care: Care): Story[] {
   const { fit, base } = plainFit(series, model, care, THOROUGH)
@@ -182,22 +218,14 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   const sizes = exposures(series).flatMap(by => [by, -by])
   const candidates = bestShifts(series, fit, y, sizes)
   if (!model.linear && offBase.length > 0) candidates.push(...bestShifts(series, base, y, sizes))
-  candidates.sort((a, b) => a.cost - b.cost)
-  const seen = new Set<string>()
-  for (const { shift, numbers } of candidates) {
-    const name = `${shift.at} ${shift.by}`
-    if (seen.has(name) || seen.size >= 4) continue
-    seen.add(name)
-    told.push(tell(series, model, [], shift, numbers, care))
-  }
-  // One step from a bent line may point a key too far; the neighbours of the best place get their own hearing.
-  const place = told.reduce<Story | null>((best, story) => (story.shift && (!best || story.fit.cost < best.fit.cost) ? story : best), null)
-  if (place?.shift) {
-    for (const at of [place.shift.at - 1, place.shift.at + 1]) {
-      const by = place.shift.by
-      if (at < 2 || at > n - 2 || seen.has(`${at} ${by}`)) continue
-      told.push(tell(series, model, [], { at, by }, place.fit.numbers, care))
-    }
+  hear(series, model, care, told, candidates, 4)
+  // One step from a bent line may point a few keys too far. From the best of them, a second look is a straight one.
+  const best = told.reduce<Story | null>((least, story) => (story.shift && (!least || story.fit.cost < least.fit.cost) ? story : least), null)
+  if (best) hear(series, model, care, told, bestShifts(series, best.fit, y, sizes), sizes.length > 2 ? 5 : 3)
+
+  if (!told.some(story => story.breaking === 0)) {
+    const off = doubted(series, fit, care)
+    if (off.length <= Math.min(spare, mostMisplaced(n))) told.push(tell(series, model, off, null, fit.numbers, care))
   }
 
   // The likeliest few may need a lone bad drawing on top.
@@ -209,7 +237,8 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   for (const story of likely) {
     // However well it then fits, one more drawing set aside would already cost more than the best that explains all.
     if (story.breaking === 0 || assumed(story, n) + MISPLACED_CHARGE >= least) continue
-    const longer = extend(series, story, care, most)
+    // A held drawing and bad ones beside it need a list long enough to tell them apart.
+    const longer = extend(series, story, care, story.shift ? Math.min(most, Math.floor(n / 10)) : most)
     told.push(longer)
     if (longer.breaking === 0) least = Math.min(least, charge(longer, sigma, n))
   }

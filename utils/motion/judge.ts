@@ -1,7 +1,7 @@
 /** The judge: a list and its claim in, what holds and what breaks out. Same list, same answer. */
 import { opine, ranked, weigh } from './choose'
 import { backwardFinding, inOrder, misplacedFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
-import { stories } from './hypotheses'
+import { badDrawings, stories } from './hypotheses'
 import type { Care, Story } from './hypotheses'
 import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
 import { ruledList, traceLine } from './line'
@@ -21,6 +21,7 @@ export interface Judgement {
   pace: number | null
 }
 
+const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
 const SCALE_FLOOR = 0.03
 
 /** Judges a list. Expects what the contract lets through (3–2,000 keys, finite readings); then never throws and never answers NaN. */
@@ -39,11 +40,16 @@ export function judgeInDepth(request: CheckRequest): Judgement {
     return undecided(request, `${series.n} keys are too few for ${LAW_WORDS[request.law]}: it takes ${needed} to tell.`)
   }
   const range = Math.max(...series.y) - Math.min(...series.y)
-  if (!(range > 2 * request.slop)) return undecided(request, 'Nothing moves further than the slop, so there is nothing to judge.')
+  if (!(range > 2 * request.slop)) return undecided(request, STILL)
 
   const care: Care = { slop: request.slop, tolerance: request.tolerance, least: roundingSpread(series.y) }
   const choice = weigh(series, request.law, laws, stories(series, model, care), care)
-  const opinion = opine(series, choice, care, range)
+  const { value: drawn } = choice.claimed.story.fit.trace
+  // Pencil alone can spread still drawings over the slop; what has to move is the line.
+  if (!(Math.max(...drawn) - Math.min(...drawn) > 2 * request.slop)) return undecided(request, STILL)
+  const { story } = choice.claimed
+  const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
+  const opinion = opine(series, choice, care, range, scale)
   const readsAs = ranked(choice).map(({ law, misfit }) => ({ law, misfit }))
 
   if (opinion.kind === 'wrong-law') {
@@ -59,11 +65,9 @@ export function judgeInDepth(request: CheckRequest): Judgement {
     }
   }
 
-  const { story } = choice.claimed
   const line = lineOf(request, series, story)
   const trace = traceLine(series, line, series.x)
   const keys = judgeKeys(request, series, trace)
-  const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
   const used = series.spanFrames
   const claim: ClaimFrames | null = scale.pace === null ? null : { frames: Math.round(used / scale.pace), usedFrames: used }
   const ruled = {
@@ -81,7 +85,7 @@ export function judgeInDepth(request: CheckRequest): Judgement {
   }
   const findings = inOrder([
     ...shiftFindings(series, story, keys),
-    ...drawingFindings(request, series, story, keys, trace.rate),
+    ...drawingFindings(request, series, story, keys, trace.rate, care),
     ...scaleFindings(request, scale, claim),
   ], keys)
   const breaks = findings.length > 0 || keys.some(key => key.breaks)
@@ -117,30 +121,32 @@ function shiftFindings(series: Series, story: Story, keys: readonly JudgedKey[])
 
 /** Misplaced drawings and those that run backward: a drawing is told of once. */
 function drawingFindings(
-  request: CheckRequest, series: Series, story: Story, keys: readonly JudgedKey[], rate: Float64Array,
+  request: CheckRequest, series: Series, story: Story, keys: readonly JudgedKey[], rate: Float64Array, care: Care,
 ): Finding[] {
   // A swing turns by its nature, whatever part of it a list shows.
   const way = request.law === 'pendulum' ? 0 : oneWay(keys, rate, request.slop)
   // Rounding alone can add one step to what the slop allows.
-  const least = request.slop + roundingStep(series.y)
+  const least = (request.slop + roundingStep(series.y)) * (1 + 1e-9)
+  const bad = badDrawings(series, story, care)
+  const told = new Set(bad)
+  /** How far key i runs against the motion from the last drawing before it that holds. */
   const backStep = (i: number) => {
+    let before = i - 1
+    while (told.has(before)) before--
     const here = keys[i]
-    const before = keys[i - 1]
-    return way === 0 || !here || !before ? 0 : way * (before.reading - here.reading)
+    const there = keys[before]
+    return way === 0 || !here || !there ? 0 : way * (there.reading - here.reading)
   }
   const found: Finding[] = []
-  const told = new Set(story.out)
-  for (const i of story.out) {
+  for (const i of bad) {
     const key = keys[i]
     if (!key) continue
-    const intoNext = backStep(i + 1)
-    const fromLast = backStep(i)
-    const step = Math.max(told.has(i + 1) ? 0 : intoNext, fromLast)
+    const step = backStep(i)
     found.push(step > least ? backwardFinding(key, step, request.unit) : misplacedFinding(key, request.unit))
   }
   for (let i = 1; i < series.n; i++) {
     const key = keys[i]
-    if (!key || told.has(i) || told.has(i - 1) || i === story.shift?.at) continue
+    if (!key || told.has(i) || i === story.shift?.at) continue
     const step = backStep(i)
     if (step > least) found.push(backwardFinding(key, step, request.unit))
   }

@@ -1,8 +1,11 @@
 /** Every drawing held against the law's line. */
-import { allowances } from './allowance'
+import { allowanceAt, allowances } from './allowance'
 import type { Trace } from './laws/model'
 import type { Series } from './series'
 import type { CheckRequest, JudgedKey } from './types'
+
+/** Where the law's gap is below this share of the slop it stands still for the eye, and an offset is worth no number of frames. */
+const STILL = 0.25
 
 /** Keys as posted, nothing judged: for lists that no law can be held against. */
 export function unjudged(request: CheckRequest): JudgedKey[] {
@@ -27,13 +30,15 @@ export function judgeKeys(request: CheckRequest, series: Series, trace: Trace): 
     const next = trace.value[i + 1]
     const frames = offset / ((trace.rate[i] as number) / series.spanFrames)
     const allowance = allowed[i] as number
+    // The allowance without its slop is the law's own gap here, times the tolerance; taken from the line itself, as that may be 0.
+    const pace = allowanceAt(trace.value, i, series.n, 0, 1)
+    const still = pace <= STILL * request.slop || Math.abs(frames) > series.spanFrames
     return {
       frame: key.frame,
       reading: key.reading,
       law,
       offset,
-      // Where the law all but stands still, an offset is worth no number of frames.
-      offsetFrames: Number.isFinite(frames) && Math.abs(frames) <= series.spanFrames ? frames : null,
+      offsetFrames: Number.isFinite(frames) && !still ? frames : null,
       gap: gapAfter(request, i),
       lawGap: next === undefined ? null : next - law,
       allowance,

@@ -15,7 +15,7 @@ function between(x: Float64Array, y: Float64Array, at: number): number {
 }
 
 /**
- * Returns a copy of y where drawings that jump out of their neighbours' curve are put onto it, worst first. At most a tenth of the
+ * Returns a copy of y where drawings that jump out of their neighbours' curve are put onto it, worst first. At most a sixth of the
  * keys (two at least, forty at most) are touched, none within two keys of an end, and none where the jump is below `floor`.
  */
 export function smoothed(x: Float64Array, y: Float64Array, floor: number): Float64Array {
@@ -26,7 +26,7 @@ export function smoothed(x: Float64Array, y: Float64Array, floor: number): Float
   for (let i = 2; i < n - 2; i++) jump[i] = (y[i] as number) - between(x, out, i)
   // What most keys jump by anyway, from pencil and curvature: one bad drawing among them hardly moves a median.
   const typical = Float64Array.from(jump.subarray(2, n - 2), Math.abs).sort()[(n - 4) >> 1] as number
-  const most = Math.min(40, Math.max(2, Math.floor(n / 10)))
+  const most = Math.min(40, Math.max(2, Math.floor(n / 6)))
   for (let round = 0; round < most; round++) {
     let worst = -1
     for (let i = 2; i < n - 2; i++) if (worst < 0 || Math.abs(jump[i] as number) > Math.abs(jump[worst] as number)) worst = i
