@@ -10,8 +10,8 @@ import type { TestServer } from '../helpers/server'
 
 /** The worker is killed before and after a letter has left, and asked to stop while one is on its way. */
 
-// Everything the worker waits for is counted in this: a lease lasts 4 s, a delivery 3 s.
-const PACE = '2'
+// Everything the worker waits for is counted in this: a lease lasts 8 s, a delivery 6 s.
+const PACE = '4'
 let server: TestServer
 let mail: MailServer
 let leave: (() => Promise<void>) | undefined
@@ -63,7 +63,7 @@ describe('a worker that is killed', () => {
     const [sent] = await lettersOf(ids)
     expect(sent).toMatchObject({ state: 'sent', attempts: 2, leaseBy: null, leaseUntil: null, lastError: null })
     expect(receivedOf([sent!])).toEqual([sent!.messageId])
-  }, 60_000)
+  }, 90_000)
 
   it('between the sending and the mark sends once more, under the same Message-ID', async () => {
     const forgetful = await startForgetfulServer()
@@ -81,7 +81,7 @@ describe('a worker that is killed', () => {
     const [sent] = await lettersOf(ids)
     expect(sent).toMatchObject({ state: 'sent', attempts: 2, messageId: held!.messageId })
     expect([...forgetful.taken, ...receivedOf([sent!])]).toEqual([sent!.messageId, sent!.messageId])
-  }, 60_000)
+  }, 90_000)
 
   it('again and again, at any moment, loses none of twelve letters', async () => {
     await server.restart({ MAIL_URL: mail.url })
@@ -112,7 +112,7 @@ describe('a server that is asked to stop', () => {
     const mute = await startMuteServer()
     await server.stop()
     const ids = await owe(1)
-    await server.restart({ MAIL_URL: mute.url, NUXT_MAIL_PACE_SECONDS: '6' })
+    await server.restart({ MAIL_URL: mute.url, NUXT_MAIL_PACE_SECONDS: '9' })
     await until('the mail server is called', () => mute.calls > 0)
     const ended = await server.stop()
     expect(ended).toMatchObject({ code: 0, forced: false })
@@ -124,7 +124,7 @@ describe('a server that is asked to stop', () => {
     await server.restart({ MAIL_URL: mail.url, NUXT_MAIL_PACE_SECONDS: PACE })
     await until('the letter is sent', () => allSent(ids))
     expect(receivedOf(await lettersOf(ids))).toHaveLength(1)
-  }, 60_000)
+  }, 90_000)
 
   it('finishes a letter that is being taken right now', async () => {
     await server.restart({ MAIL_URL: mail.url })
@@ -137,5 +137,5 @@ describe('a server that is asked to stop', () => {
     await server.restart({ MAIL_URL: mail.url })
     await until('all are sent', () => allSent(ids))
     expect(receivedOf(await lettersOf(ids)).sort()).toEqual((await lettersOf(ids)).map(({ messageId }) => messageId).sort())
-  }, 60_000)
+  }, 90_000)
 })

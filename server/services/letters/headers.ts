@@ -1,8 +1,8 @@
 /** What may stand in a mail header, and the names that letters go by. */
 
 // Control characters (a line break starts the next header), line and paragraph separators, and marks that turn the reading direction.
-const NEVER_IN_A_HEADER = /[\u0000-\u001F\u007F-\u009F\u061C\u200E\u200F\u2028-\u202E\u2066-\u2069]+/g
-const ADDRESS = /^[^\s<>,;:"()[\]\\@\u0000-\u001F\u007F-\u009F]+@[^\s<>,;:"()[\]\\@\u0000-\u001F\u007F-\u009F]+$/
+const NEVER_IN_A_HEADER = /[\p{Cc}\u061C\u200E\u200F\u2028-\u202E\u2066-\u2069]+/gu
+const ADDRESS = /^[^\s<>,;:"()[\]\\@\p{Cc}]+@[^\s<>,;:"()[\]\\@\p{Cc}]+$/u
 
 /** One line, whatever somebody wrote: security.md 1.3.11. */
 export function headerLine(text: string): string {

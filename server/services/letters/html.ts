@@ -6,7 +6,7 @@ export class Html {
 type Filling = string | number | Html | readonly Html[]
 
 const ENTITIES: Record<string, string> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' }
-const CONTROL = /[\u0000-\u0008\u000B-\u001F\u007F-\u009F]/g
+const CONTROL = /(?![\n\t])\p{Cc}/gu
 
 /** Text as it may stand between tags and inside quoted attributes. */
 export function escapeText(text: string): string {
