@@ -15,11 +15,11 @@ export function useAddressFrame(cursor: FrameCursor, take: () => number | null) 
   onMounted(() => {
     watch(cursor.pinned, (frame) => {
       const address = new URL(window.location.href)
-      if (frame === null) address.searchParams.delete('frame')
-      else {
-        address.searchParams.set('frame', String(frame))
+      address.searchParams.delete('frame')
+      if (frame !== null) {
         // A frame alone would mean another drawing once a newer take is there.
         if (take() !== null) address.searchParams.set('take', String(take()))
+        address.searchParams.set('frame', String(frame))
       }
       // The router keeps its own notes in the state: they stay, under the new address.
       window.history.replaceState({ ...window.history.state, current: address.pathname + address.search + address.hash }, '', address)

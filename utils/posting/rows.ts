@@ -31,6 +31,15 @@ export function rowsFromKeys(keys: readonly Key[], firstId = 1): Row[] {
   return keys.map(({ frame, reading }, i) => ({ id: firstId + i, frame: String(frame), reading: cellText(reading) }))
 }
 
+/**
+ * The law's readings as a person would write them: rounded far finer than the slop (a hundredth of it), no longer. Without a
+ * slop, four decimals.
+ */
+export function roundedKeys(keys: readonly Key[], slop: number): Key[] {
+  const decimals = slop > 0 ? Math.min(6, Math.max(1, Math.ceil(2 - Math.log10(slop)))) : 4
+  return keys.map(({ frame, reading }) => ({ frame, reading: Number(reading.toFixed(decimals)) }))
+}
+
 /** Whole rows are keys; empty rows count for nothing; anything else is told at its cell. */
 export function readRows(rows: readonly Row[]): ReadRows {
   const answer: ReadRows = { keys: [], rowOf: [], issues: [] }

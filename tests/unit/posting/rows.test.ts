@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { draftKey, readDraft } from '~/utils/posting/draft'
-import { fillFrames, gapText, joinKeys, nextFrame, readRows, rowsFromKeys, withGap } from '~/utils/posting/rows'
+import { fillFrames, gapText, joinKeys, nextFrame, readRows, roundedKeys, rowsFromKeys, withGap } from '~/utils/posting/rows'
 
 const rows = rowsFromKeys([{ frame: 1, reading: 0 }, { frame: 3, reading: 1 }, { frame: 5, reading: 4 }, { frame: 7, reading: 9 }])
 
@@ -59,6 +59,11 @@ describe('filling and joining', () => {
     const joined = joinKeys([...rows, { id: 77, frame: '', reading: '3' }], [{ frame: 4, reading: 2 }, { frame: 5, reading: 5 }])
     expect(joined.map(({ frame, reading }) => `${frame}:${reading}`)).toEqual(['1:0', '3:1', '4:2', '5:5', '7:9', ':3'])
   })
+})
+
+it('writes the law’s readings no finer than a hundredth of the slop', () => {
+  const keys = [{ frame: 1, reading: 1.5228178400712 }]
+  expect([0.3, 5, 0.02, 0, 1000].map((slop) => roundedKeys(keys, slop)[0]!.reading)).toEqual([1.523, 1.52, 1.5228, 1.5228, 1.5])
 })
 
 describe('the draft', () => {
