@@ -40,11 +40,17 @@ interface MailProblem {
   responseCode?: unknown
 }
 
-/** A 5xx answer is final. Anything else (a 4xx, a line that drops, silence) may go better later. */
+/** Answers about our own sign-in or TLS at the mail server (RFC 4954): the keeper mends a setting, the letter is not to blame. */
+const ABOUT_OURSELVES = new Set([530, 534, 535, 538])
+
+/**
+ * A 5xx answer to a letter is final. Anything else (a 4xx, a line that drops, silence, a mail server that does not let us
+ * in) may go better later.
+ */
 export function outcomeOf(problem: unknown): Outcome {
   const { message, response, responseCode }: MailProblem = problem !== null && typeof problem === 'object' ? problem : {}
   // The server's own words where it spoke.
   const why = headerLine(String(response || message || problem)).slice(0, 480) || 'No reason was given.'
-  const refused = typeof responseCode === 'number' && responseCode >= 500 && responseCode < 600
+  const refused = typeof responseCode === 'number' && responseCode >= 500 && responseCode < 600 && !ABOUT_OURSELVES.has(responseCode)
   return { state: refused ? 'parked' : 'waiting', why }
 }

@@ -101,6 +101,8 @@ describe('an answer of the mail server', () => {
   it.each([
     [Object.assign(new Error('Message failed'), { responseCode: 554, response: '554 5.7.1 No such person here' }), 'parked', '554 5.7.1 No such person here'],
     [Object.assign(new Error('x'), { responseCode: 500, response: '500 No' }), 'parked', '500 No'],
+    // A wrong mail password must not park every letter that is owed: RFC 4954, section 6.
+    [Object.assign(new Error('Invalid login'), { responseCode: 535, response: '535 5.7.8 Authentication failed' }), 'waiting', '535 5.7.8 Authentication failed'],
     [Object.assign(new Error('x'), { responseCode: 451, response: '451 4.3.0 Try\r\nagain' }), 'waiting', '451 4.3.0 Try again'],
     [Object.assign(new Error('Connection closed unexpectedly'), { code: 'ECONNECTION' }), 'waiting', 'Connection closed unexpectedly'],
     [Object.assign(new Error('Timeout'), { code: 'ETIMEDOUT' }), 'waiting', 'Timeout'],
