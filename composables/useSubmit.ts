@@ -1,5 +1,5 @@
-import type { FetchError } from 'ofetch'
-import type { Refusal } from '~/utils/contracts/common'
+import { complaintsOf, refusedBy } from '~/utils/refusal'
+import type { Refused } from '~/utils/refusal'
 
 /**
  * Sending a form: one at a time, what the server says of each field beside that field, and the focus on the first that is
@@ -12,6 +12,8 @@ export function useSubmit() {
   const errors = ref<Record<string, string>>({})
   /** What went wrong with the whole. */
   const problem = ref('')
+  /** After a 409: what stands now, as somebody else left it. */
+  const current = ref<unknown>()
 
   /** Runs `send` and answers what it gave, or undefined after a refusal. @param fields names that the form shows */
   async function submit<T>(send: () => Promise<T>, fields: readonly string[] = []): Promise<T | undefined> {
@@ -19,10 +21,11 @@ export function useSubmit() {
     busy.value = true
     errors.value = {}
     problem.value = ''
+    current.value = undefined
     try {
       return await send()
     } catch (failure) {
-      tell((failure as FetchError<Refusal>).data, fields)
+      tell(refusedBy(failure), fields)
       await nextTick()
       form.value?.querySelector<HTMLElement>('[aria-invalid="true"]')?.focus()
       return undefined
@@ -31,13 +34,12 @@ export function useSubmit() {
     }
   }
 
-  function tell(refusal: Refusal | undefined, fields: readonly string[]) {
-    const issues = refusal?.data?.issues ?? []
-    errors.value = Object.fromEntries(issues.toReversed().map(({ path, message }) => [path, message]))
+  function tell(refused: Refused, fields: readonly string[]) {
+    current.value = refused.current ?? undefined
+    errors.value = complaintsOf(refused.issues)
     // Whatever no field of the form stands for is said for the whole.
-    const homeless = issues.find(({ path }) => !fields.includes(path))
-    if (issues.length > 0 && !homeless) return
-    problem.value = homeless?.message ?? refusal?.message ?? 'The server did not answer. Check the connection, then try again.'
+    const homeless = refused.issues.find(({ path }) => !fields.includes(path))
+    if (refused.issues.length === 0 || homeless) problem.value = homeless?.message ?? refused.message
   }
 
   /** What stands in the form right now, by name: typed, or filled in by a password manager before the page came alive. */
@@ -46,5 +48,5 @@ export function useSubmit() {
     return Object.fromEntries(names.map((name) => [name, String(data.get(name) ?? '')])) as Record<Name, string>
   }
 
-  return { form, busy, errors, problem, submit, filled }
+  return { form, busy, errors, problem, current, submit, filled }
 }
