@@ -48,8 +48,10 @@ describe('who is signed in', () => {
         ),
       )
       expect(asked.map(({ status }) => status).toSorted()).toEqual([201, 409, 409, 409, 409])
-      const people = await inStore(server.dataDir, ({ rows }) => rows<{ keeper: number }>('SELECT keeper FROM people'))
-      expect(people).toEqual([{ keeper: 1 }])
+      const people = await inStore(server.dataDir, ({ rows }) => rows<{ keeper: number; hash: string }>('SELECT keeper, password_hash AS hash FROM people'))
+      expect(people.map(({ keeper }) => keeper)).toEqual([1])
+      // 11.4.2: the cost that an installation uses without being told.
+      expect(people[0]?.hash).toMatch(/^\$scrypt\$n=131072,r=8,p=1\$/)
       expect((await anonymous(server.url).post('/api/first-keeper', KEEPER)).status).toBe(409)
     })
   })

@@ -6,6 +6,9 @@ import type { Client } from './client'
 /** Passwords that nobody else uses; long enough that no rule about them can be met by accident. */
 export const KEEPER = { name: 'Ingrid Vale', email: 'ingrid@harbour.example', password: 'lanterns over wet cobbles' }
 
+/** For tests that sign many people in and out and are not about the cost of a hash: an eighth of it. */
+export const CHEAP_HASH = { NUXT_HASH_SCRYPT_COST: '16384' }
+
 /** An empty installation gets its first keeper, signed in. */
 export async function makeFirstKeeper(url: string): Promise<Client> {
   const client = anonymous(url)
