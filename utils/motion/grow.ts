@@ -24,6 +24,12 @@ function every(series: Series, y: Float64Array, stride: number): Series {
   return { ...series, n: x.length, x, y: y.filter((_, i) => i % stride === 0) }
 }
 
+/** Fit to keys from..to (exclusive) alone, traced over the whole list: where one half is sound, it shows up what is wrong with the other. */
+export function partFit(series: Series, model: LawModel, y: Float64Array, from: number, to: number): Fit {
+  const { numbers } = fitPiece(model, part(series, y, from, to), null, THOROUGH)
+  return refine(model, series, series.x, series.y, new Float64Array(series.n), numbers, { steps: 0, enough: 1 })
+}
+
 /** Best fit over one piece from the law's own beginnings, or from numbers in hand. */
 function fitPiece(model: LawModel, piece: Series, from: Float64Array | null, effort: Effort): Fit {
   const ones = new Float64Array(piece.n).fill(1)

@@ -6,7 +6,7 @@
 import { allowances } from './allowance'
 import { BRIEF, PASSING, THOROUGH, refine } from './fit'
 import type { Effort, Fit } from './fit'
-import { firstFit } from './grow'
+import { firstFit, partFit } from './grow'
 import type { LawModel } from './laws/model'
 import { bestShifts, shiftedTimes, worstDrawings } from './scan'
 import type { Candidate, Shift } from './scan'
@@ -16,7 +16,7 @@ import { smoothed } from './smooth'
 /** Charge for saying that one particular drawing is off. */
 export const MISPLACED_CHARGE = 5
 /** Charge for a held or skipped drawing, to which the choice of place among 2n is added. */
-const SHIFT_CHARGE = 3
+const SHIFT_CHARGE = 1
 
 /** A misplaced drawing is one whose neighbours hold. Three in a row may be three mistakes; more are another motion. */
 export const MOST_TOGETHER = 3
@@ -224,6 +224,12 @@ export function stories(series: Series, model: LawModel, care: Care): Story[] {
   if (best) hear(series, model, care, told, bestShifts(series, best.fit, y, sizes), sizes.length > 2 ? 5 : 3)
 
   if (!told.some(story => story.breaking === 0)) {
+    const half = Math.ceil(n / 2)
+    if (half >= model.size + 2) {
+      for (const [from, to] of [[0, half], [n - half, n]] as const) {
+        hear(series, model, care, told, bestShifts(series, partFit(series, model, y, from, to), y, sizes), 2)
+      }
+    }
     const off = doubted(series, fit, care)
     if (off.length <= Math.min(spare, mostMisplaced(n))) told.push(tell(series, model, off, null, fit.numbers, care))
   }
