@@ -116,8 +116,8 @@ describe('every answer', () => {
   })
 
   it('does not depend on the drawing unit', () => {
-    fc.assert(fc.property(requests, (request) => {
-      if (request.measure !== 'distance' || request.subject) return
+    const straight = requests.filter(request => request.measure === 'distance' && !request.subject)
+    fc.assert(fc.property(straight, (request) => {
       // A power of two scales every number exactly, so the answers may not differ in a single bit.
       const doubled = { ...request, slop: 8 * request.slop, keys: request.keys.map(key => ({ ...key, reading: 8 * key.reading })) }
       const plain = judge(request)
