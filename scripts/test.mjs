@@ -37,9 +37,7 @@ async function lint() {
   const prepared = await step([process.execPath, nuxtBin(root), 'prepare'], 5, usualPlace)
   if (prepared.code !== 0) return failedOnce('Nuxt could not prepare what ESLint reads.')
   const file = freshReport('lint')
-  const [program, ...eslint] = node('eslint/bin/eslint.js', '.', '--format', 'json', '--output-file', file)
-  const preload = new URL('./lib/node20.mjs', import.meta.url).href
-  const { code } = await step([program, '--import', preload, ...eslint], 10, usualPlace)
+  const { code } = await step(node('eslint/bin/eslint.js', '.', '--format', 'json', '--output-file', file), 10, usualPlace)
   const { messages, ...count } = countLint(read(file), code)
   for (const message of messages) console.log(message.replace(`${root}/`, ''))
   return count
