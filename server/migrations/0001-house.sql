@@ -108,27 +108,28 @@ CREATE INDEX shots_in_order ON shots (production_id, sequence_id, position);
 CREATE INDEX shots_by_animator ON shots (animator_id);
 
 CREATE TABLE takes (
+  -- Small columns first, and the sketch before the lists: the wall reads them without walking through a long answer.
   id TEXT PRIMARY KEY,
   client_id TEXT NOT NULL,
   shot_id TEXT NOT NULL REFERENCES shots (id) ON DELETE CASCADE,
   number INTEGER NOT NULL CHECK (number >= 1),
-  keys TEXT NOT NULL CHECK (json_valid(keys)),
+  person_id TEXT NOT NULL REFERENCES people (id),
+  created_at TEXT NOT NULL,
+  withdrawn_at TEXT,
+  verdict TEXT NOT NULL CHECK (verdict IN ('holds', 'breaks', 'undecided')),
+  judge_version TEXT NOT NULL,
   measure TEXT NOT NULL CHECK (measure IN ('angle', 'distance', 'arc')),
   unit TEXT NOT NULL,
   slop REAL NOT NULL CHECK (slop >= 0),
   tolerance REAL NOT NULL CHECK (tolerance BETWEEN 0 AND 1),
   fps REAL NOT NULL CHECK (fps BETWEEN 1 AND 240),
+  -- What a sheet of the wall draws: kept beside the answer so that 400 sheets never parse 400 answers.
+  sketch TEXT NOT NULL CHECK (json_valid(sketch)),
   -- The whole claim as it stood when the list was judged.
   claim TEXT NOT NULL CHECK (json_valid(claim)),
   note TEXT NOT NULL DEFAULT '',
-  person_id TEXT NOT NULL REFERENCES people (id),
-  created_at TEXT NOT NULL,
-  withdrawn_at TEXT,
+  keys TEXT NOT NULL CHECK (json_valid(keys)),
   answer TEXT NOT NULL CHECK (json_valid(answer)),
-  verdict TEXT NOT NULL CHECK (verdict IN ('holds', 'breaks', 'undecided')),
-  judge_version TEXT NOT NULL,
-  -- What a sheet of the wall draws: kept beside the answer so that 400 sheets never parse 400 answers.
-  sketch TEXT NOT NULL CHECK (json_valid(sketch)),
   UNIQUE (shot_id, number),
   UNIQUE (person_id, client_id)
 ) STRICT;

@@ -70,7 +70,6 @@ describe('write', () => {
   })
 
   it('shows a reader what was committed, and nothing half-written', async () => {
-    let seen: string[] | null = null
     let written = () => {}
     let read = () => {}
     const isWritten = new Promise<void>((resolve) => (written = resolve))
@@ -82,7 +81,7 @@ describe('write', () => {
       await put('whole')
     })
     await isWritten
-    seen = await keys()
+    const seen = await keys()
     read()
     await writer
     expect(seen).toEqual([])

@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { v4 } from 'uuid'
-import { Production, Shot, Take } from '~/server/models'
+import { Production, Take } from '~/server/models'
+import type { Shot } from '~/server/models'
 import { row, rows, run, write } from '~/server/models/database'
 import { news } from '~/server/services/news'
 import { reopen, rule } from '~/server/services/rulings'
@@ -15,7 +16,6 @@ import { openEmptyStore, rowCounts } from '../../../helpers/store'
 let close: () => Promise<void>
 let house: House
 let shot: Shot
-let take: Take
 let heard: number[]
 const listen = ({ n }: { n: number }) => heard.push(n)
 
@@ -23,7 +23,7 @@ beforeEach(async () => {
   close = await openEmptyStore()
   house = await seedHouse()
   shot = await addShot(house)
-  take = await addTake(shot, house.people.animator)
+  await addTake(shot, house.people.animator)
   heard = []
   news.on('event', listen)
 })
