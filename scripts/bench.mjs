@@ -16,6 +16,20 @@ const folder = join(root, 'tests', 'bench')
 // Inside node_modules, so that the bundles find the packages and git does not see them.
 const bundles = join(root, 'node_modules', '.cache', 'tiltyard-bench')
 
+/** Helpers find the project's files from their own address, which bundling would change. */
+const keepOwnAddress = {
+  name: 'keep-own-address',
+  setup({ onLoad }) {
+    onLoad({ filter: /\.(ts|mjs)$/ }, async ({ path }) => {
+      if (path.includes('node_modules') && !path.startsWith(bundles)) return undefined
+      const { readFile } = await import('node:fs/promises')
+      const text = await readFile(path, 'utf8')
+      const contents = text.replaceAll('import.meta.url', JSON.stringify(pathToFileURL(path).href))
+      return { contents, loader: path.endsWith('.ts') ? 'ts' : 'js' }
+    })
+  },
+}
+
 await runScript(async () => {
   requireNode(process.versions.node)
   const names = chosen(process.argv.slice(2))
@@ -64,18 +78,4 @@ async function bundle(name) {
     logLevel: 'warning',
   })
   return outfile
-}
-
-/** Helpers find the project's files from their own address, which bundling would change. */
-const keepOwnAddress = {
-  name: 'keep-own-address',
-  setup({ onLoad }) {
-    onLoad({ filter: /\.(ts|mjs)$/ }, async ({ path }) => {
-      if (path.includes('node_modules') && !path.startsWith(bundles)) return undefined
-      const { readFile } = await import('node:fs/promises')
-      const text = await readFile(path, 'utf8')
-      const contents = text.replaceAll('import.meta.url', JSON.stringify(pathToFileURL(path).href))
-      return { contents, loader: path.endsWith('.ts') ? 'ts' : 'js' }
-    })
-  },
 }

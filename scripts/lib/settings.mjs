@@ -173,7 +173,6 @@ function readMailUrl(text) {
 function readMailFrom(text) {
   const from = text.trim()
   // A line break here would let the setting write further mail headers.
-  // eslint-disable-next-line no-control-regex
   if (from === '' || (!/[\u0000-\u001f\u007f]/.test(from) && /^[^@]*[^@\s<]@[^@\s]+$/.test(from))) return from
   throw new PlainStop('MAIL_FROM is not a sender such as Tiltyard <board@studio.example>.')
 }
