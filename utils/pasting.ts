@@ -51,6 +51,8 @@ interface Line {
 
 /** A number as people write it: true minus, decimal comma, a degree sign or a unit behind. Null where it is none. */
 export function readNumber(cell: string): number | null {
+  // Nearly every cell of a long list is this plain.
+  if (/^-?\d{1,15}(?:\.\d{1,15})?$/.test(cell)) return Number(cell)
   const text = cell
     .trim()
     .replace(/^["']|["']$/g, '')

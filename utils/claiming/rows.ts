@@ -7,7 +7,7 @@ export function claimRows(claim: Claim): [string, string][] {
   const withSign = (value: number) => (unit === '°' ? `${roundFigure(value, 4)}°` : `${roundFigure(value, 4)} ${unit}`)
   const rows: [string, string][] = [
     ['Law', lawWords[claim.law]],
-    ['Readings', `${measureWords[claim.measure]}, ${unit}`],
+    ['Readings', `${measureWords[claim.measure]}, in ${unit === '°' ? 'degrees' : unit}`],
   ]
   if (claim.radius !== undefined) rows.push(['Radius of the arc', withSign(claim.radius)])
   if (claim.zeroAt) rows.push(['Reading 0 stands for', `${roundFigure(claim.zeroAt, 4)}°`])

@@ -52,7 +52,7 @@ describe('changing the law', () => {
 
 it('says a claim line by line', () => {
   expect(claimRows(bell)).toEqual([
-    ['Law', 'pendulum'], ['Readings', 'along the arc, mm'], ['Radius of the arc', '420 mm'], ['Reading 0 stands for', '\u221212°'],
+    ['Law', 'pendulum'], ['Readings', 'along the arc, in mm'], ['Radius of the arc', '420 mm'], ['Reading 0 stands for', '\u221212°'],
     ['Body', 'bob on 1.4 m'], ['Slop', '0.5 mm'], ['Tolerance', '10 % of the gap'],
   ])
 })
