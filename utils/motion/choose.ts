@@ -17,7 +17,9 @@ const DOUBT_WITH_FAULTS = 3
 /** A pace known to within a factor of two is known well enough to agree with a claim. */
 const SURE = Math.LN2
 /** Misfit under which nobody would doubt the claimed law, whatever else fits. */
-const UNNOTICED = 0.5
+const UNNOTICED = 0.25
+/** Misfit under which even spacing may stand for a law that curves. */
+const EVEN_ENOUGH = 0.5
 
 export interface Reading {
   law: Law
@@ -130,7 +132,7 @@ export function opine(series: Series, choice: Choice, care: Care, range: number,
   const steady = others.find(other => other.law === 'steady')
 
   // The claimed law only fits by not curving: what is there is even spacing, if the list is long enough to have shown anything else.
-  if (acceptable && steady && steady.misfit <= UNNOTICED && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
+  if (acceptable && steady && steady.misfit <= EVEN_ENOUGH && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
     // At some claimed sizes nothing else could be seen in so short a time: the list agrees with its claim, or can't tell.
     if (scale.pace !== null && Math.abs(Math.log(scale.pace)) <= scale.spread) {
       return { kind: scale.spread < SURE ? 'law-holds' : 'too-short' }
@@ -149,7 +151,7 @@ export function opine(series: Series, choice: Choice, care: Care, range: number,
 /** Even spacing is also a fall without acceleration and a swing without curve: where it does as well, it has the name. */
 function simplest(rivals: readonly Reading[], best: Reading): Reading {
   const steady = rivals.find(rival => rival.law === 'steady')
-  return steady && steady.misfit <= UNNOTICED && steady.charge <= best.charge + DOUBT ? steady : best
+  return steady && steady.misfit <= EVEN_ENOUGH && steady.charge <= best.charge + DOUBT ? steady : best
 }
 
 /** All laws, best first; even spacing first where a freer law does no better than a hair. */

@@ -160,6 +160,9 @@ function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'topple' | 'p
   if (motion.law === 'pendulum' && motion.size !== undefined && Math.sqrt(GRAVITY / motion.size) * longest / paper.fps > 0.75) return null
   if (motion.law === 'topple' && motion.size !== undefined && Math.sqrt(GRAVITY * 1.5 / motion.size) * longest / paper.fps > 0.75) return null
 
+  // Any short stretch of a smooth motion passes for a parabola.
+  if (family === 'topple-as-fall' && (at.length < 10 || (motion.covers ?? 0) < 0.75)) return null
+
   const n = at.length
   const truth: TruthOf = { kind: 'clean', frames: [], size: motion.size, covers: offset > 0 ? 0.9 : motion.covers }
   let delay = (_i: number) => 0
