@@ -60,7 +60,7 @@ export function turned(exposure: Exposure, subject: BodySubject, from: number, t
   const k = Math.sqrt((subject.gravity ?? STANDARD_GRAVITY) / equalLength(subject))
   const taus = seconds(exposure).map((t) => k * t)
   const angle = new Float64Array(taus.length)
-  freeSwing(from * RADIANS, (turn * RADIANS) / k, topples, taus, angle, new Float64Array(taus.length))
+  freeSwing(from * RADIANS, (turn * RADIANS) / k, topples, taus, taus.length, angle, new Float64Array(taus.length))
   const readings = Array.from(angle, (radians) => radians / RADIANS)
   const flat = topples ? readings.findIndex((reading) => reading > 90) : -1
   return drawn(exposure, flat < 0 ? readings : readings.slice(0, flat), pencil)
