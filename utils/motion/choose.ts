@@ -134,7 +134,7 @@ export function opine(series: Series, choice: Choice, care: Care, range: number,
   // The claimed law only fits by not curving: what is there is even spacing, if the list is long enough to have shown anything else.
   if (acceptable && steady && steady.misfit <= EVEN_ENOUGH && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
     // At some claimed sizes nothing else could be seen in so short a time: the list agrees with its claim, or can't tell.
-    if (scale.pace !== null && Math.abs(Math.log(scale.pace)) <= scale.spread) {
+    if (scale.pace !== null && Math.abs(scale.pace * scale.pace - 1) <= scale.reach) {
       return { kind: scale.spread < SURE ? 'law-holds' : 'too-short' }
     }
     return range / 4 > Math.max(6 * sigma, care.slop) ? { kind: 'wrong-law', reads: 'steady' } : { kind: 'too-short' }

@@ -16,11 +16,16 @@ export interface Scale {
   pace: number | null
   /** 95 % half-width of ln(pace). */
   spread: number
+  /**
+   * 95 % half-width of the claim's acceleration over the list's own, in units of the list's own. Where a list hardly curves, its
+   * acceleration is known to within a little while the logarithm of it is not: only this tells whether the claim can be meant.
+   */
+  reach: number
   /** The claimed value in the size's own unit. */
   claimed: number | null
 }
 
-const NOTHING: Scale = { size: null, pace: null, spread: Infinity, claimed: null }
+const NOTHING: Scale = { size: null, pace: null, spread: Infinity, reach: Infinity, claimed: null }
 /** A size known to no better than this factor either way is printed as this factor, so that an interval is always finite. */
 const WIDEST = 1e6
 
@@ -55,6 +60,8 @@ function bodyScale(request: CheckRequest, series: Series, fit: Fit, kept: number
     size: { value, low: value / factor, high: value * factor, unit: 'm' },
     pace: claimed ? Math.sqrt(gravity / equalLength(claimed)) / k : null,
     spread,
+    // The acceleration goes as k².
+    reach: 2 * spread,
     claimed: claimed ? namedSize(claimed) : null,
   }
 }
@@ -74,6 +81,7 @@ function pathScale(request: CheckRequest, series: Series, fit: Fit, kept: number
     },
     pace: perMetre === undefined ? null : Math.sqrt(perMetre * pathAcceleration(path) / a),
     spread: half < a ? -0.5 * Math.log(1 - half / a) : Infinity,
+    reach: half / a,
     claimed: perMetre === undefined ? null : gravityOf(path),
   }
 }
