@@ -1,5 +1,9 @@
 import { z } from 'zod'
 
+// Pages forbid making code from text, and report even the attempt: in a browser, schemas do without. Every file of schemas
+// imports this one, so that it is said before the first of them is made.
+if (typeof window !== 'undefined') z.config({ jitless: true })
+
 /** Sizes that both sides of the wire keep to. Characters, unless a name says otherwise. */
 export const LIMITS = {
   nameChars: 80,
