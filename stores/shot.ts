@@ -128,6 +128,8 @@ export const useShotStore = defineStore('shot', () => {
   return {
     page: computed(() => page.value),
     freshRuling: computed(() => freshRuling.value),
+    /** True while one's own ruling is on its way. */
+    isRuling: computed(() => sending.value !== null),
     accept,
     refetch,
     hear,
