@@ -3,7 +3,7 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { initModels } from '~/server/models'
-import { closeDatabase, openDatabase, row, rows } from '~/server/models/database'
+import { closeDatabase, openDatabase, rows } from '~/server/models/database'
 import { migrate } from '~/server/models/migrate'
 import type { Migration } from '~/server/models/migrate'
 
@@ -35,10 +35,9 @@ export async function openEmptyStore(): Promise<() => Promise<void>> {
 /** How many rows each table has: two of these are equal when nothing was stored in between. */
 export async function rowCounts(except: readonly string[] = []): Promise<Record<string, number>> {
   const tables = await rows<{ name: string }>("SELECT name FROM sqlite_schema WHERE type = 'table' AND name NOT LIKE 'sqlite%' ORDER BY name")
-  const counts: Record<string, number> = {}
-  for (const { name } of tables) {
-    if (except.includes(name)) continue
-    counts[name] = (await row<{ n: number }>(`SELECT count(*) AS n FROM "${name}"`))?.n ?? 0
-  }
-  return counts
+  const counted = tables.map(({ name }) => name).filter((name) => !except.includes(name))
+  const found = await rows<{ name: string; n: number }>(
+    counted.map((name) => `SELECT '${name}' AS name, count(*) AS n FROM "${name}"`).join(' UNION ALL '),
+  )
+  return Object.fromEntries(found.map(({ name, n }) => [name, n]))
 }

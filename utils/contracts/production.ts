@@ -73,7 +73,7 @@ export interface Production {
   sequences: Sequence[]
   members: (PersonName & { role: Role })[]
 }
-/** A stamp: the last ruling that has not been reopened. */
+/** A stamp: the last ruling. There is none while that one is reopened: an older ruling does not come back. */
 export interface Stamp {
   take: number
   decision: Decision
