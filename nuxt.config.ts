@@ -88,6 +88,15 @@ export default defineNuxtConfig({
     tsConfig: { compilerOptions: { paths: { odex: ['../tests/types/odex.d.ts'] } }, exclude: ['../.output*', '../.nuxt-*'] },
   },
   tailwindcss: { cssPath: '~/assets/css/main.css', configPath: 'tailwind.config.ts', viewer: false },
+  hooks: {
+    // nuxt-auth-utils would give every visitor a cookie (for sockets of its own) and answer a second sign-out that our gates
+    // do not guard: sessions are server/utils/session.ts's business alone.
+    'nitro:config'(nitro) {
+      nitro.plugins = nitro.plugins?.filter((plugin) => !/nuxt-auth-utils.*plugins[/\\]ws$/.test(plugin))
+      nitro.handlers = nitro.handlers?.filter((handler) => handler.route !== '/api/_auth/session')
+    },
+  },
   eslint: { config: { stylistic: false } },
-  vite: { build: { target: 'es2022' } },
+  // The development server's own reload socket listens on this machine only, like everything else.
+  vite: { build: { target: 'es2022' }, server: { hmr: { host: '127.0.0.1' } } },
 })

@@ -4,8 +4,8 @@ import type { Sheet, Wall } from '~/utils/contracts/production'
 import { passes, tally } from '~/utils/wall'
 import type { Tally, Viewer, WallFilter } from '~/utils/wall'
 
-/** How many sheets the server paints; the rest follow once the page is alive, so that its payload stays small. */
-export const FIRST_SHEETS = 24
+/** How many sheets the server paints: more than a screenful. The rest follow once the page is alive, so that its payload stays under 100 kB. */
+export const FIRST_SHEETS = 16
 
 /** A wall as the first paint carries it: the first sheets that pass the filter, and figures about all of them. */
 export interface FirstWall extends Omit<Wall, 'sheets'> {
