@@ -2,6 +2,7 @@ import { createHmac, randomBytes, timingSafeEqual } from 'node:crypto'
 import type { H3Event } from 'h3'
 import { getCookie, setCookie } from 'h3'
 import { useRuntimeConfig } from '#imports'
+import { secureCookies } from './session'
 import { settings } from './settings'
 
 /**
@@ -31,7 +32,7 @@ export function rememberBrowser(event: H3Event, email: string): void {
     httpOnly: true,
     sameSite: 'lax',
     path: '/',
-    secure: useRuntimeConfig().session.cookie?.secure === true,
+    secure: secureCookies(),
     maxAge: KEPT_SECONDS,
   })
 }

@@ -57,6 +57,12 @@ export async function askerOf(token: string | undefined): Promise<Asker | null> 
 
 const cookieName = (event: H3Event) => useRuntimeConfig(event).session.name ?? 'tiltyard'
 
+/** Do cookies travel by https only? The start script decides it by the public address. */
+export function secureCookies(): boolean {
+  const { cookie } = useRuntimeConfig().session as { cookie?: { secure?: boolean } }
+  return cookie?.secure === true
+}
+
 /** The token inside the sealed cookie, if there is one. Asking must not set a cookie where none was. */
 export async function sessionToken(event: H3Event): Promise<string | undefined> {
   if (getCookie(event, cookieName(event)) === undefined) return undefined
@@ -104,7 +110,7 @@ export async function closeSession(event: H3Event): Promise<void> {
   if (getCookie(event, cookieName(event)) === undefined) return
   await clearUserSession(event)
   // The package leaves an empty cookie behind: take it away altogether.
-  deleteCookie(event, cookieName(event), { ...useRuntimeConfig(event).session.cookie, path: '/' })
+  deleteCookie(event, cookieName(event), { httpOnly: true, sameSite: 'lax', secure: secureCookies(), path: '/' })
   event.context.asker = undefined
 }
 
