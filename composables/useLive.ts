@@ -19,14 +19,14 @@ export interface LiveHandlers {
  *
  * `state`: `live`; `connecting` for a moment; `offline` when that lasts. `heardAt`: when this page last knew everything
  * (ISO 8601, null before the first time): "offline: showing what was here at 10:42". `lookers`: who has which shot on
- * screen, oneself included. `catchUp()`: asks now, for instance right after a write.
+ * screen, oneself included. `catchUp()`: asks now, for instance right after a write; true when all is known.
  */
 export function useLive(production: MaybeRefOrGetter<string>, handlers: LiveHandlers) {
   const store = useLiveStore()
   const slug = computed(() => toValue(production))
   const ready = computed(() => toValue(handlers.after) !== undefined)
   let stop: (() => void) | null = null
-  let catchUp: (() => Promise<void>) | null = null
+  let catchUp: (() => Promise<boolean>) | null = null
 
   function end() {
     stop?.()
@@ -57,6 +57,6 @@ export function useLive(production: MaybeRefOrGetter<string>, handlers: LiveHand
     state: computed(() => store.state),
     heardAt: computed(() => store.heardAt),
     lookers: computed<Presence['lookers']>(() => store.lookersOf(slug.value)),
-    catchUp: () => catchUp?.() ?? Promise.resolve(),
+    catchUp: () => catchUp?.() ?? Promise.resolve(false),
   }
 }

@@ -53,8 +53,8 @@ export const useLiveStore = defineStore('live', () => {
   const production = () => [...followers].at(-1)?.production
   const lookersOf = (slug: string): Presence['lookers'] => lookers.value[slug] ?? []
 
-  /** Starts following. @returns `stop`, and `catchUp`, which asks at once and resolves when all is known. */
-  function follow(following: Following): { stop: () => void; catchUp: () => Promise<void> } {
+  /** Starts following. @returns `stop`, and `catchUp`, which asks at once and says whether all is known now. */
+  function follow(following: Following): { stop: () => void; catchUp: () => Promise<boolean> } {
     const fetchAfter = (after: number) =>
       $fetch<EventsAnswer>(`/api/productions/${encodeURIComponent(following.production)}/events`, {
         query: { after },

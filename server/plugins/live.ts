@@ -9,6 +9,7 @@ import type { LiveServer } from '~/server/services/live/types'
 import { log } from '~/server/utils/log'
 
 const SWEEP_EVERY = 60_000
+const SIGNALS = ['SIGTERM', 'SIGINT'] as const
 /** Whoever opened a connection says who they are within this time. Milliseconds. */
 const CONNECT_WITHIN = 10_000
 
@@ -38,10 +39,14 @@ export default defineNitroPlugin((nitro) => {
   // Read once, when Nitro's server begins to listen for upgrades, which is after its plugins.
   nitro.h3App.options.websocket = webSocketOptions
   nitro.router.use(SOCKET_PATH, socketHandler(engine))
-  nitro.hooks.hook('close', () => {
+  function hangUp() {
+    for (const signal of SIGNALS) process.off(signal, hangUp)
     clearInterval(sweeping)
     stopCarrying()
     presence.close()
     engine.close()
-  })
+  }
+  // Nitro's own `close` comes only after every connection is gone, and a long poll stays for as long as nobody answers it.
+  for (const signal of SIGNALS) process.once(signal, hangUp)
+  nitro.hooks.hook('close', hangUp)
 })

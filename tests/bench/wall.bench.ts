@@ -87,8 +87,9 @@ async function statementsOf(dataDir: string, id: string): Promise<Statement[]> {
   const production = await Production.findByPk(id)
   if (!production) throw new Error('The production was not stored.')
   const caught: Statement[] = []
-  database().options.logging = (text, options) => {
-    const { bind = {} } = (options ?? {}) as unknown as Partial<Statement>
+  // Sequelize's types hide its options; that it tells every statement to `logging` is documented.
+  const { options } = database() as unknown as { options: { logging: (text: string, query: Partial<Statement>) => void } }
+  options.logging = (text, { bind = {} }) => {
     caught.push({ sql: text.replace(/^Executing \([^)]*\): /, ''), bind })
   }
   const { sheets } = await wall(production)

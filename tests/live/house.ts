@@ -73,12 +73,12 @@ export class House {
   }
 
   /** One more session of somebody, in another browser as it were. */
-  async session(personId: string, { seenAt = new Date(), createdAt = seenAt } = {}): Promise<SignedIn> {
+  async session(personId: string, { seenAt = new Date(), createdAt }: { seenAt?: Date; createdAt?: Date } = {}): Promise<SignedIn> {
     const id = randomUUID()
     const token = randomBytes(32).toString('base64url')
     await this.run(
       'INSERT INTO sessions (id, token_hash, person_id, created_at, seen_at) VALUES (?, ?, ?, ?, ?)',
-      ...[id, createHash('sha256').update(token).digest('base64url'), personId, createdAt.toISOString(), seenAt.toISOString()],
+      ...[id, createHash('sha256').update(token).digest('base64url'), personId, (createdAt ?? seenAt).toISOString(), seenAt.toISOString()],
     )
     const cookie = await sealedCookie(token, sessionSecret(this.server.dataDir))
     return { sessionId: id, cookie, client: anonymous(this.server.url, cookie) }
