@@ -59,11 +59,11 @@ describe('a day on the clock tower', () => {
     await visible(office.page.getByText('looking now'))
 
     // A flag from the finding on frame 61, and a question in the margin at that frame.
-    const finding = office.page.getByRole('listitem').filter({ hasText: 'Frame 61' }).filter({ has: office.page.getByRole('button', { name: 'Flag' }) })
+    const finding = office.page.getByRole('article', { name: 'Take 1' }).getByRole('listitem').filter({ hasText: 'Frame 61' }).filter({ has: office.page.getByRole('button', { name: 'Flag' }) })
     await finding.getByRole('button', { name: 'Flag' }).click()
     await office.page.getByRole('button', { name: 'Flag it' }).click()
     await shows(office.page.getByRole('region', { name: 'Flags' }), 'Frame 61')
-    await finding.getByRole('button', { name: '61' }).click()
+    await finding.getByRole('button', { name: 'Go to frame 61' }).click()
     await office.page.getByLabel('Start a thread').fill('Is the jump at 61 the bell breaking loose, or a *slip*?')
     await office.page.getByRole('button', { name: 'Start the thread' }).click()
 
@@ -99,8 +99,9 @@ describe('a day on the clock tower', () => {
     await starts.first().click()
     await shows(desk.page.getByRole('region', { name: 'The judge’s answer' }), 'Holds')
     await desk.page.getByRole('button', { name: 'Post take 2' }).click()
-    await visible(office.page.getByRole('link', { name: 'Take 2' }))
-    await office.page.getByRole('link', { name: 'Take 2' }).first().click()
+    const second = office.page.getByRole('navigation', { name: 'Takes' }).getByRole('link', { name: 'Take 2' })
+    await visible(second)
+    await second.click()
     await office.page.getByText('Stands', { exact: true }).click()
     await office.page.getByRole('button', { name: 'Rule, and send the letters' }).click()
     await visible(stamp(wall.page, 'Stands'))
