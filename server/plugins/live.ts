@@ -37,7 +37,7 @@ export default defineNitroPlugin((nitro) => {
   sweeping.unref()
 
   // Read once, when Nitro's server begins to listen for upgrades, which is after its plugins.
-  nitro.h3App.options.websocket = webSocketOptions
+  Object.assign(nitro.h3App.options, { websocket: webSocketOptions })
   nitro.router.use(SOCKET_PATH, socketHandler(engine))
   function hangUp() {
     for (const signal of SIGNALS) process.off(signal, hangUp)
