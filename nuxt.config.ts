@@ -1,4 +1,5 @@
 import { basename } from 'node:path'
+import type { NitroConfig } from 'nitropack'
 import { fileURLToPath } from 'node:url'
 import type { Nuxt } from 'nuxt/schema'
 
@@ -39,6 +40,8 @@ export default defineNuxtConfig({
   css: ['~/assets/css/main.css'],
   components: [{ path: '~/components', pathPrefix: true }],
   imports: { dirs: ['stores', 'composables'] },
+  // Nothing here changes between two builds of one start: no page needs to ask which build is served.
+  experimental: { appManifest: false },
   app: {
     head: {
       htmlAttrs: { lang: 'en' },
@@ -64,7 +67,14 @@ export default defineNuxtConfig({
   },
   runtimeConfig: {
     // Each is set at run time by NUXT_…; scripts/start.mjs fills them from the settings in README.md.
-    session: { password: '', name: 'tiltyard', maxAge: 60 * 60 * 24 * 30, cookie: { sameSite: 'lax', secure: false } },
+    session: {
+      password: '',
+      name: 'tiltyard',
+      maxAge: 60 * 60 * 24 * 30,
+      // The cookie and nothing else: a header of another name would be a second way in.
+      sessionHeader: false as const,
+      cookie: { sameSite: 'lax' as const, secure: false },
+    },
     dataDir: '.data',
     baseUrl: '',
     demo: 'on',
@@ -91,9 +101,9 @@ export default defineNuxtConfig({
   hooks: {
     // nuxt-auth-utils would give every visitor a cookie (for sockets of its own) and answer a second sign-out that our gates
     // do not guard: sessions are server/utils/session.ts's business alone.
-    'nitro:config'(nitro) {
-      nitro.plugins = nitro.plugins?.filter((plugin) => !/nuxt-auth-utils.*plugins[/\\]ws$/.test(plugin))
-      nitro.handlers = nitro.handlers?.filter((handler) => handler.route !== '/api/_auth/session')
+    'nitro:config'(nitro: NitroConfig) {
+      nitro.plugins = nitro.plugins?.filter((plugin) => !/nuxt-auth-utils.*plugins[/\\]ws$/.test(plugin ?? ''))
+      nitro.handlers = nitro.handlers?.filter((handler) => handler?.route !== '/api/_auth/session')
     },
   },
   eslint: { config: { stylistic: false } },

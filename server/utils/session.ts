@@ -55,7 +55,7 @@ export async function askerOf(token: string | undefined): Promise<Asker | null> 
   return { id: found.id, name: found.name, email: found.email, keeper: found.keeper === 1, sessionId: found.sessionId }
 }
 
-const cookieName = (event: H3Event) => useRuntimeConfig(event).session.name ?? 'tiltyard'
+const cookieName = () => useRuntimeConfig().session.name ?? 'tiltyard'
 
 /** Do cookies travel by https only? The start script decides it by the public address. */
 export function secureCookies(): boolean {
@@ -65,7 +65,7 @@ export function secureCookies(): boolean {
 
 /** The token inside the sealed cookie, if there is one. Asking must not set a cookie where none was. */
 export async function sessionToken(event: H3Event): Promise<string | undefined> {
-  if (getCookie(event, cookieName(event)) === undefined) return undefined
+  if (getCookie(event, cookieName()) === undefined) return undefined
   return (await getUserSession(event)).secure?.token
 }
 
@@ -99,7 +99,11 @@ export async function startSession(event: H3Event, personId: string, device: str
 /** The same session under a new token: a copy of the cookie that somebody took before is worth nothing from here on. */
 export async function renewSession(event: H3Event, sessionId: string): Promise<void> {
   const token = newSecret()
-  await write(() => run('UPDATE sessions SET token_hash = :hash WHERE id = :id', { id: sessionId, hash: hashSecret(token) }))
+  await write(async () => {
+    await run('UPDATE sessions SET token_hash = :hash WHERE id = :id', { id: sessionId, hash: hashSecret(token) })
+    // Whoever holds a copy of the old cookie loses the line at once; the person's own page comes back with the new one.
+    afterCommit(() => news.emit('sessionEnded', { sessionId }))
+  })
   await putInCookie(event, token)
 }
 
@@ -107,10 +111,10 @@ export async function renewSession(event: H3Event, sessionId: string): Promise<v
 export async function closeSession(event: H3Event): Promise<void> {
   const token = await sessionToken(event)
   if (token) await write(() => endSessions('token_hash = :hash', { hash: hashSecret(token) }))
-  if (getCookie(event, cookieName(event)) === undefined) return
+  if (getCookie(event, cookieName()) === undefined) return
   await clearUserSession(event)
   // The package leaves an empty cookie behind: take it away altogether.
-  deleteCookie(event, cookieName(event), { httpOnly: true, sameSite: 'lax', secure: secureCookies(), path: '/' })
+  deleteCookie(event, cookieName(), { httpOnly: true, sameSite: 'lax', secure: secureCookies(), path: '/' })
   event.context.asker = undefined
 }
 

@@ -28,7 +28,8 @@ const sheetOnWall = (page: Page) => page.getByRole('article', { name: CODE })
 
 describe('a day on the clock tower', () => {
   it('goes from the first list to the stamp that stands, and to everybody’s mail', async () => {
-    const [animator, supervisor, coordinator, keeper] = await Promise.all(['animator', 'supervisor', 'coordinator', 'keeper'].map((role) => as(server.url, role)))
+    const { url } = server
+    const [animator, supervisor, coordinator, keeper] = await Promise.all([as(url, 'animator'), as(url, 'supervisor'), as(url, 'coordinator'), as(url, 'keeper')])
     const desk = await openPage({ url: server.url, path: SHOT, as: animator })
     const office = await openPage({ url: server.url, path: `/p/${PRODUCTION}?words=${CODE}`, as: supervisor })
     const wall = await openPage({ url: server.url, path: `/p/${PRODUCTION}?words=${CODE}`, as: coordinator })
