@@ -3,6 +3,7 @@ import { opine, ranked, weigh } from './choose'
 import { backwardFinding, inOrder, misplacedFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
 import { badDrawings, stories } from './hypotheses'
 import type { Care, Story } from './hypotheses'
+import { ruledFromRest } from './fromRest'
 import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
@@ -61,7 +62,7 @@ export function judgeInDepth(request: CheckRequest): Judgement {
     const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
     return {
       line, pace: null,
-      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: null } },
+      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: ruledFromRest(request, series) } },
     }
   }
 

@@ -1,0 +1,36 @@
+/** What the claim's own size would do on these frames, where the posted list is no help: under another law altogether. */
+import { isBody, pathAcceleration } from './bodies'
+import { RADIAN } from './series'
+import type { Series } from './series'
+import { freeSwing } from './swing'
+import { paceOf } from './times'
+import type { CheckRequest, Key } from './types'
+
+/**
+ * The claimed body from rest at the first posted reading, on the list's own frames, in reading units. Null where the claim
+ * names no size, or where nothing would start by itself (balance, hanging rest, a steady move).
+ */
+export function ruledFromRest(request: CheckRequest, series: Series): Key[] | null {
+  const readings = claimedReadings(request, series)
+  return readings && request.keys.map((key, i) => ({ frame: key.frame, reading: readings[i] as number }))
+}
+
+function claimedReadings({ law, subject }: CheckRequest, series: Series): Float64Array | null {
+  if (!subject || law === 'steady') return null
+  const { y, n } = series
+  const first = y[0] as number
+  const times = series.x.map(x => x * series.span)
+  if (law === 'odd-rule') {
+    if (isBody(subject) || subject.unitsPerMetre === undefined) return null
+    const pull = Math.sign((y[n - 1] as number) - first) * subject.unitsPerMetre * pathAcceleration(subject)
+    return times.map(t => first + pull * t * t / 2)
+  }
+  if (!isBody(subject)) return null
+  const start = series.zero + first / series.perRadian
+  // Less than a hundredth of a degree off balance is balance: no drawing shows it, and the fall would never come.
+  if (Math.abs(Math.sin(start)) < 0.01 * RADIAN) return null
+  const k = paceOf(subject)
+  const angle = new Float64Array(n)
+  freeSwing(start, 0, law === 'topple', times.map(t => k * t), n, angle, new Float64Array(n))
+  return angle.map(a => (a - series.zero) * series.perRadian)
+}
