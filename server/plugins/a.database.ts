@@ -42,5 +42,7 @@ async function refuseOldSqlite(): Promise<void> {
 async function shippedMigrations(): Promise<Migration[]> {
   const files = useStorage('assets:migrations')
   const names = (await files.getKeys()).filter((name) => name.endsWith('.sql'))
+  // Without this an empty database would stay empty, and one with data would be taken for a newer version's.
+  if (names.length === 0) throw new Error('this build holds no migrations; build it again.')
   return Promise.all(names.map(async (name) => ({ name, sql: String(await files.getItemRaw(name)) })))
 }
