@@ -2,26 +2,16 @@ import type { H3Event } from 'h3'
 import { getHeader, getQuery, getRouterParams, readRawBody } from 'h3'
 import type { z } from 'zod'
 import { LIMITS } from '~/utils/contracts/common'
-import type { Issue } from '~/utils/contracts/common'
+import { plainIssues } from '~/utils/contracts/issues'
 import { fail } from './fail'
 
 const MAX_ISSUES = 20
-
-/** `['keys', 3, 'frame']` → `keys[3].frame`. */
-function pathOf(parts: readonly PropertyKey[]): string {
-  return parts.reduce<string>(
-    (path, part) => (typeof part === 'number' ? `${path}[${part}]` : path ? `${path}.${String(part)}` : String(part)),
-    '',
-  )
-}
 
 /** @throws 422 with every field that is wrong, by path. */
 export function parse<T>(schema: z.ZodType<T>, value: unknown): T {
   const result = schema.safeParse(value)
   if (result.success) return result.data
-  const issues: Issue[] = result.error.issues
-    .slice(0, MAX_ISSUES)
-    .map((issue) => ({ path: pathOf(issue.path), message: issue.message }))
+  const issues = plainIssues(result.error.issues.slice(0, MAX_ISSUES))
   const first = issues[0]
   return fail(422, first ? `${first.path ? `${first.path}: ` : ''}${first.message}` : 'This is not valid.', { issues })
 }

@@ -22,6 +22,17 @@ export const LIMITS = {
 // Tab, line feed and carriage return are the only control characters that prose may carry.
 const CONTROL_IN_LINE = /[\u0000-\u001F\u007F-\u009F\u2028\u2029]/
 const CONTROL_IN_PROSE = /[\u0000-\u0008\u000B\u000C\u000E-\u001F\u007F-\u009F]/
+/** Turn the reading direction of whatever stands after them on the same line: another's words, a file's ending. */
+const TURNS_THE_LINE = /[\u202A-\u202E\u2066-\u2069]/
+/** Half a character: no store and no mail could keep it, so it would come back as something else. */
+const HALF_CHARACTER = /\p{Surrogate}/u
+const SEEN = /[^\p{White_Space}\p{Control}\p{Default_Ignorable_Code_Point}]/u
+
+const isWhole = (text: string) => !HALF_CHARACTER.test(text)
+const NOT_WHOLE = 'Half a character stands here, perhaps of an emoji that was cut in two.'
+/** Nothing, or something that can be seen: a name of invisible characters is nobody's. */
+const isEmptyOrSeen = (text: string) => text === '' || SEEN.test(text)
+const NOTHING_SEEN = 'Write something here.'
 
 /** One line of text: trimmed, no control characters (so nothing can start a new mail header). */
 export const line = (max: number, min = 1) =>
@@ -31,6 +42,9 @@ export const line = (max: number, min = 1) =>
     .min(min, min === 1 ? 'Write something here.' : `At least ${min} characters.`)
     .max(max, `At most ${max} characters.`)
     .refine((text) => !CONTROL_IN_LINE.test(text), 'Control characters and line breaks are not allowed here.')
+    .refine((text) => !TURNS_THE_LINE.test(text), 'Marks that turn the reading direction are not allowed here.')
+    .refine(isWhole, NOT_WHOLE)
+    .refine(isEmptyOrSeen, NOTHING_SEEN)
 
 /** Several lines of text, markdown source included. Kept as written apart from surrounding space. */
 export const prose = (max: number, min = 0) =>
@@ -40,6 +54,8 @@ export const prose = (max: number, min = 0) =>
     .min(min, 'Write something here.')
     .max(max, `At most ${max} characters.`)
     .refine((text) => !CONTROL_IN_PROSE.test(text), 'Control characters are not allowed here.')
+    .refine(isWhole, NOT_WHOLE)
+    .refine(isEmptyOrSeen, NOTHING_SEEN)
 
 /** An id that the client makes, so that sending the same thing twice stores it once. */
 export const clientId = z.uuid('An id is a UUID.')
@@ -54,6 +70,8 @@ export const password = z
   .string()
   .min(LIMITS.passwordMinChars, `At least ${LIMITS.passwordMinChars} characters.`)
   .max(LIMITS.passwordMaxChars, `At most ${LIMITS.passwordMaxChars} characters.`)
+  // Every half character hashes alike, so that two different passwords would open the same door.
+  .refine(isWhole, NOT_WHOLE)
 /** A password offered for checking: any length that could ever have been set, so that old rules still sign in. */
 export const offeredPassword = z.string().min(1, 'Write your password.').max(LIMITS.passwordMaxChars)
 export const slug = z
