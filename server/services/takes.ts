@@ -5,6 +5,7 @@ import { row, rows } from '~/server/models/database'
 import { fail, notFound } from '~/server/utils/fail'
 import { usedElsewhere } from '~/server/utils/made'
 import type { Made } from '~/server/utils/made'
+import { sameFinding } from '~/utils/contracts/take'
 import type { FindingName, Flag, newTake, Take as TakeWire, TakeLine, Waiver } from '~/utils/contracts/take'
 import { deskOf } from '~/utils/desk'
 import { judge } from '~/utils/motion'
@@ -94,9 +95,6 @@ export async function requireUnruled(take: Take): Promise<void> {
 export function hasFinding(take: Take, name: FindingName): boolean {
   return take.answer.findings.some((finding) => sameFinding(finding, name))
 }
-
-export const sameFinding = (one: FindingName, other: FindingName) =>
-  one.kind === other.kind && one.frames.length === other.frames.length && one.frames.every((frame, i) => frame === other.frames[i])
 
 interface NoteRow {
   id: string

@@ -22,6 +22,9 @@ export type FindingKind = (typeof findingKinds)[number]
 /** Which finding of the judge's answer is meant: its kind and the frames it names. */
 const findingName = z.strictObject({ kind: z.enum(findingKinds), frames: z.array(frame).max(2_000) })
 export type FindingName = z.infer<typeof findingName>
+/** Do both mean the same finding of one answer? */
+export const sameFinding = (one: FindingName, other: FindingName): boolean =>
+  one.kind === other.kind && one.frames.length === other.frames.length && one.frames.every((frame, i) => frame === other.frames[i])
 
 export const newFlag = z
   .strictObject({

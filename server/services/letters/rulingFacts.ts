@@ -1,6 +1,6 @@
 import { Flag, Person, Production, Shot, Take, Waiver } from '~/server/models'
 import type { Ruling } from '~/server/models'
-import type { FindingName } from '~/utils/contracts/take'
+import { sameFinding } from '~/utils/contracts/take'
 import type { Finding } from '~/utils/motion/types'
 import type { RulingFacts } from './rulingLetter'
 
@@ -8,11 +8,6 @@ import type { RulingFacts } from './rulingLetter'
 const MOST_FLAGS = 60
 const MOST_SENTENCES = 4
 const MOST_FINDINGS = 8
-
-const sameFinding = (finding: Finding, name: FindingName) =>
-  finding.kind === name.kind &&
-  finding.frames.length === name.frames.length &&
-  finding.frames.every((frame, i) => frame === name.frames[i])
 
 /** The findings that a flag speaks of: the one it names, else those that touch its frames. */
 export function findingsOfFlag(flag: Pick<Flag, 'fromFrame' | 'toFrame' | 'finding'>, findings: Finding[]): Finding[] {
