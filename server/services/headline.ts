@@ -30,8 +30,11 @@ function breakingDrawings({ keys }: CheckResult): string {
   return breaking.length === 1 ? `Frame ${breaking[0]!.frame} is off the line` : `${breaking.length} drawings are off the line`
 }
 
-const sized = (value: number, unit: string, digits = 2) =>
-  unit === 'm' ? metres(value, digits) : `${roundFigure(value, digits)} ${unit}`
+/** A size as a person says it; a fall drawn to scale has no size of its own, it reads as a gravity. */
+function sized(value: number, unit: string, digits = 2): string {
+  if (unit === 'm') return metres(value, digits)
+  return `${unit === 'm/s²' ? 'gravity ' : ''}${roundFigure(value, digits)} ${unit}`
+}
 
 /** The judge's sentence up to where it goes into detail. */
 const shorten = (sentence: string) => sentence.split(/\s*\(|[;:]|, (?:and|so) |\.$/)[0]!.trim()
