@@ -4,7 +4,7 @@ import type { z } from 'zod'
 import { write } from '~/server/models/database'
 import type { Production, Shot, Take, Thread } from '~/server/models'
 import { may, routes } from '~/utils/permissions'
-import type { Facts, Role, RouteName } from '~/utils/permissions'
+import type { Facts, Need, Role, RouteName } from '~/utils/permissions'
 import { Failure, fail, forbidden } from './fail'
 import { log } from './log'
 import { isOwnOrigin } from './origin'
@@ -88,7 +88,7 @@ export function route<Params = undefined, Query = undefined, Body = undefined, A
     const query = spec.query ? parseQuery(event, spec.query) : (undefined as Query)
     const body = spec.body ? await parseBody(event, spec.body) : (undefined as Body)
 
-    async function gatesAndAct(): Promise<Answer> {
+    async function gatesAndAct(person: Asker | null): Promise<Answer> {
       const scope = person ? await loadScope(person, (params ?? {}) as object) : {}
       let facts: Facts = {}
       if (need === 'keeper') {
@@ -100,7 +100,9 @@ export function route<Params = undefined, Query = undefined, Body = undefined, A
       }
       return spec.act(new Ask(event, person, params, query, body, scope, facts))
     }
-    return reads || spec.transaction === false ? gatesAndAct() : write(gatesAndAct)
+    if (reads || spec.transaction === false) return gatesAndAct(person)
+    // It may have waited for its turn: a session that ended meanwhile, or an account that was closed, writes nothing any more.
+    return write(async () => gatesAndAct(person && (await findPersonAgain(event, need))))
   }
 
   return defineEventHandler(async (event) => {
@@ -113,6 +115,11 @@ export function route<Params = undefined, Query = undefined, Body = undefined, A
       return refusal(event, problem)
     }
   })
+}
+
+async function findPersonAgain(event: H3Event, need: Need): Promise<Asker | null> {
+  event.context.asker = undefined
+  return need === 'anyone' ? findPerson(event) : requirePerson(event)
 }
 
 function refuse(name: RouteName, person: Asker): never {
