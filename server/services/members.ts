@@ -78,7 +78,7 @@ async function requireAnotherManager(production: Production, exceptPersonId: str
   const others = await rows<{ id: string }>(
     `SELECT people.id FROM memberships JOIN people ON people.id = memberships.person_id
       WHERE memberships.production_id = :production AND memberships.role IN (:managers)
-        AND people.disabled_at IS NULL AND people.id <> :exceptPersonId LIMIT 1`,
+        AND people.disabled_at IS NULL AND people.password_hash IS NOT NULL AND people.id <> :exceptPersonId LIMIT 1`,
     { production: production.id, managers, exceptPersonId },
   )
   if (others.length === 0) fail(409, 'Nobody else here may manage the members: give somebody that role first.')

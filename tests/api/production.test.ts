@@ -311,7 +311,7 @@ describe('shots and sequences', () => {
 describe('members', () => {
   const members = (who: Cast) => ok<Member[]>(as[who].get(`${here}/members`), 200)
 
-  it('see each other’s names and roles; addresses only who manages them (15.3.1)', async () => {
+  it('see each other’s names and roles; addresses only who manages them (8.2.3, 15.3.1)', async () => {
     for (const who of ['guest', 'animator'] as const) for (const member of await members(who)) expect(member.email).toBeNull()
     for (const who of ['supervisor', 'coordinator'] as const)
       expect((await members(who)).find(({ id }) => id === house.people.guest.id)?.email).toBe(emailOf('guest'))
@@ -360,6 +360,13 @@ describe('members', () => {
     await ok(as.outsider.patch(`${far}/${alone}`, { role: 'animator', version: 1 }), 409)
     expect(await rows('SELECT * FROM memberships ORDER BY person_id')).toEqual(before)
     await ok(as.outsider.patch(`${far}/${alone}`, { role: 'coordinator', version: 1 }), 200)
+    // Somebody who is only named, and never signs in, is nobody to leave the members to.
+    await write(async () => {
+      const named = { id: v4(), at: new Date().toISOString(), production: house.elsewhere.id }
+      await run("INSERT INTO people (id, email, name, created_at) VALUES (:id, 'named@pier.example', 'Named Only', :at)", { id: named.id, at: named.at })
+      await run("INSERT INTO memberships (production_id, person_id, role, created_at) VALUES (:production, :id, 'supervisor', :at)", named)
+    })
+    await ok(as.outsider.delete(`${far}/${alone}`), 409)
     await ok(as.outsider.post(far, { email: emailOf('guest'), role: 'supervisor' }), 201)
     await ok(as.outsider.patch(`${far}/${alone}`, { role: 'guest', version: 2 }), 200)
   })
