@@ -1,4 +1,4 @@
-import { limit } from '~/server/utils/limits'
+import { limitJudging } from '~/server/utils/limits'
 import { route } from '~/server/utils/route'
 import { checkRequest } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
@@ -8,7 +8,7 @@ export default route('POST /api/check', {
   body: checkRequest,
   transaction: false,
   act: async ({ event, body }) => {
-    await limit(event, 'check')
+    await limitJudging(event, body.keys)
     return judge(body)
   },
 })

@@ -25,7 +25,7 @@ import { findPerson } from './session'
  * | link-use       | all               | 30 in 15 minutes   |                                                    |
  * | own-password   | all               |                    | 10 in 15 minutes, per session                      |
  * | invite         | all               |                    | 60 in an hour                                      |
- * | check          | all               | 900 in a minute    | 300 in a minute                                    |
+ * | check, a take  | each 250 keys     | 900 in a minute    | 300 in a minute                                    |
  *
  * Nobody can lock another out: what is counted against an account from elsewhere only ever makes a try wait, and a
  * browser that the person has used before is not counted with strangers, not even with those at the same address.
@@ -89,9 +89,9 @@ const networkOfEvent = (event: H3Event) => networkOf(remoteAddress(event.node.re
 const short = (text: string) => createHash('sha256').update(text).digest('base64url').slice(0, 22)
 
 /** @throws 429 with Retry-After. */
-async function take(event: H3Event, from: RateLimiterMemory, key: string, what: string): Promise<void> {
+async function take(event: H3Event, from: RateLimiterMemory, key: string, what: string, cost = 1): Promise<void> {
   try {
-    await from.consume(key)
+    await from.consume(key, cost)
   } catch (problem) {
     if (!(problem instanceof RateLimiterRes)) throw problem
     const seconds = Math.max(1, Math.ceil(problem.msBeforeNext / 1000))
@@ -106,14 +106,20 @@ function inWords(seconds: number): string {
   return `${Math.ceil(seconds / 60)} minutes`
 }
 
-/** Counts this request against the allowances of the table above. @throws 429 with Retry-After when they are used up. */
-export async function limit(event: H3Event, what: Limited): Promise<void> {
+/**
+ * Counts this request against the allowances of the table above, as `cost` of them. @throws 429 with Retry-After when they
+ * are used up.
+ */
+export async function limit(event: H3Event, what: Limited, cost = 1): Promise<void> {
   const byAddress = counters.get(`${what}:address`)
-  if (byAddress) await take(event, byAddress, networkOfEvent(event), what)
+  if (byAddress) await take(event, byAddress, networkOfEvent(event), what, cost)
   const byPerson = counters.get(`${what}:person`)
   const person = byPerson && (await findPerson(event))
-  if (byPerson && person) await take(event, byPerson, person.id, what)
+  if (byPerson && person) await take(event, byPerson, person.id, what, cost)
 }
+
+/** Counts a list that is about to be judged: the longest takes a third of a second, in which nobody else is served. @throws 429 */
+export const limitJudging = (event: H3Event, keys: readonly unknown[]) => limit(event, 'check', Math.ceil(keys.length / 250))
 
 /** Counts a try at the current password by somebody who is signed in. Per session: a stolen one locks out itself only. */
 export async function limitOwnPassword(event: H3Event): Promise<void> {

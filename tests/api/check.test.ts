@@ -68,4 +68,13 @@ describe('POST /api/check', () => {
     expect(last).toMatchObject({ statusCode: 429, message: expect.stringMatching(/\S/) })
     expect((await animator.post('/api/check', ramp)).status).toBe(200)
   })
+
+  it('2.4.1: a long list counts as several, for it takes as long', async () => {
+    const keys = Array.from({ length: 2000 }, (_, i) => ({ frame: i, reading: i }))
+    const supervisor = await signIn(animator.url, emailOf('supervisor'), SEED_PASSWORD)
+    const answers: number[] = []
+    while (answers.length < 50 && answers.at(-1) !== 429) answers.push((await supervisor.post('/api/check', { ...ramp, keys })).status)
+    // 300 in a minute at eight for each list.
+    expect(answers).toEqual([...Array.from({ length: 37 }, () => 200), 429])
+  })
 })

@@ -1,4 +1,5 @@
 import { postTake } from '~/server/services/takes'
+import { limitJudging } from '~/server/utils/limits'
 import { answerMade } from '~/server/utils/made'
 import { route } from '~/server/utils/route'
 import { shotParams } from '~/utils/contracts/production'
@@ -8,5 +9,8 @@ import { newTake } from '~/utils/contracts/take'
 export default route('POST /api/productions/:production/shots/:code/takes', {
   params: shotParams,
   body: newTake,
-  act: async (ask) => answerMade(ask.event, await postTake(ask, ask.body)),
+  act: async (ask) => {
+    await limitJudging(ask.event, ask.body.keys)
+    return answerMade(ask.event, await postTake(ask, ask.body))
+  },
 })
