@@ -124,7 +124,7 @@ describe('a membership', () => {
   })
 
   // ASVS 5.0.0 8.3.2
-  it('that changes its role is told at once, to the sockets on that production only', async () => {
+  it('that changes its role takes the sockets on that production out of the room at once, and those only', async () => {
     const [onPier, inHarbour, bystander] = [await follow(), await follow(person.cookie, 'harbour'), await follow(supervisor.cookie)]
     const { body } = await supervisor.client.get<Member[]>('/api/productions/pier/members')
     const { version } = body.find(({ id }) => id === person.id)!
@@ -133,7 +133,14 @@ describe('a membership', () => {
     expect(onPier.dismissals).toEqual([{ reason: 'role', production: 'pier' }])
     await pause(100)
     expect([...inHarbour.dismissals, ...bystander.dismissals]).toEqual([])
-    expect(onPier.socket.connected).toBe(true)
+    const before = onPier.heard.length
+    await somethingHappens()
+    await until(() => bystander.heard.length > 1, 'the news for the others')
+    expect(onPier.heard.length).toBe(before)
+    // The line itself stays: the person is still signed in, and asks again with the role they have now.
+    expect(await onPier.watch('pier')).toEqual({ ok: true })
+    await somethingHappens()
+    await until(() => onPier.heard.length > before, 'the news after asking again')
   })
 
   it('that is removed while `watch` is under way does not leave the socket in the room', async () => {

@@ -43,7 +43,7 @@ export function carryNews(io: LiveServer, presence: PresenceBoard): () => void {
     for (const socket of all()) {
       if (socket.data.asker.id !== personId || socket.data.production !== production) continue
       socket.emit('dismissed', { reason: role === null ? 'membership' : 'role', production })
-      if (role !== null) continue
+      // With another role, too: what is heard from here on is heard by who asks again.
       leave(socket, presence)
     }
   }
