@@ -295,9 +295,11 @@ describe('1.3.1: words are kept as they were written and come back as they were'
       return answer
     }
     const many = `${text}\n\n* one\n* two`
+    // A line takes no marks that turn what stands after it; prose keeps them.
+    const inOneLine = text.replace(/[\u202C\u202E]/g, '')
     const page = async () => isJson(await supervisor.get<ShotPage>(base)).body as ShotPage
 
-    expect((await supervisor.patch(base, { title: text, brief: many, version: 1 })).status).toBe(200)
+    expect((await supervisor.patch(base, { title: inOneLine, brief: many, version: 1 })).status).toBe(200)
     expect((await supervisor.post(`${base}/takes/1/flags`, { clientId: v4(), fromFrame: 1001, toFrame: 1003, reason: many })).status).toBe(201)
     expect((await supervisor.post(`${base}/takes/1/waivers`, { clientId: v4(), finding: { kind: 'misplaced', frames: [1015] }, reason: many })).status).toBe(201)
     expect((await animator.post(`${base}/threads/${thread.id}/comments`, { clientId: v4(), body: many })).status).toBe(201)
@@ -306,7 +308,7 @@ describe('1.3.1: words are kept as they were written and come back as they were'
     expect((await supervisor.post(`${base}/reopen`, { reason: many, version: (await page()).version })).status).toBe(200)
 
     const { title, brief, takes, threads } = await page()
-    expect({ title, brief }).toEqual({ title: text, brief: many })
+    expect({ title, brief }).toEqual({ title: inOneLine, brief: many })
     expect(takes[1]).toMatchObject({ note: many, ruling: { note: many, reopened: { reason: many } } })
     expect(threads[0]?.comments.at(-1)?.body).toBe(many)
     const first = isJson(await supervisor.get<TakeWire>(`${base}/takes/1`)).body as TakeWire
@@ -317,9 +319,9 @@ describe('1.3.1: words are kept as they were written and come back as they were'
   })
 
   it('1.3.11: control characters and line breaks can’t enter a line, control characters no prose', async () => {
-    for (const title of ['a\r\nBcc: x@evil.example', 'a\nb', 'a\u0000b', 'a\u2028b', '\u001b[2J'])
+    for (const title of ['a\r\nBcc: x@evil.example', 'a\nb', 'a\u0000b', 'a\u2028b', '\u001b[2J', 'a\u202eb', '\u2067a', 'a\ud83d', '\u200b'])
       await refused(() => supervisor.patch(base, { title, version: 1 }), 422, 'title')
-    for (const body of ['a\u0000b', '\u0007', 'a\u009bb', '', '   '])
+    for (const body of ['a\u0000b', '\u0007', 'a\u009bb', '', '   ', 'a\udc00', '\u2060'])
       await refused(() => animator.post(`${base}/threads/${thread.id}/comments`, { clientId: v4(), body }), 422, 'body')
     await refused(() => animator.post(`${base}/threads/${thread.id}/comments`, { clientId: v4(), body: 'x'.repeat(4001) }), 422, 'body')
   })
