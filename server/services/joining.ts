@@ -75,11 +75,17 @@ export async function acceptInvitation(event: H3Event, wanted: { token: string; 
   return write(async () => {
     await useUp(link)
     const person = await newPerson({ name: wanted.name, email: link.email, passwordHash, keeper: link.keeper === 1 })
-    if (link.productionId && link.role) await join(link.productionId, person.id, link.role)
+    if (link.productionId && link.role && (await stillManages(link.productionId, link.madeBy))) await join(link.productionId, person.id, link.role)
     log.info('invitation accepted', { person: person.id, invitation: link.id })
     await openSession(event, person)
     return person.id
   })
+}
+
+/** Whoever left the production, or may not let anybody in any more, does not do so by an invitation of before. */
+async function stillManages(productionId: string, personId: string | null): Promise<boolean> {
+  if (personId === null) return false
+  return may((await Membership.findOne({ where: { productionId, personId } }))?.role, 'members.manage')
 }
 
 async function join(productionId: string, personId: string, role: Role): Promise<void> {

@@ -112,12 +112,13 @@ interface OpenLink extends LinkAnswer {
   productionId: string | null
   role: Role | null
   personId: string | null
+  madeBy: string | null
 }
 
 /** The open link that this secret belongs to. @throws 410 for every other secret. */
 export async function findLink(token: string, kind?: LinkAnswer['kind']): Promise<OpenLink> {
   const found = await row<OpenLink>(
-    `SELECT id, kind, email, name, keeper, production_id AS productionId, role, person_id AS personId
+    `SELECT id, kind, email, name, keeper, production_id AS productionId, role, person_id AS personId, made_by AS madeBy
        FROM links WHERE token_hash = :hash AND ${OPEN}`,
     { hash: hashSecret(token), now: new Date().toISOString() },
   )

@@ -159,6 +159,20 @@ describe('invitations', () => {
       expect(stored).toEqual([])
     })
 
+    it('lets nobody in once its maker may not any more: an account, and no production', async () => {
+      const leaving = await newColleague(keeper, { keeper: true, production: 'harbour-lights', role: 'coordinator' })
+      const sent = await Promise.all(['in-time', 'demoted', 'left'].map((who) =>
+        leaving.client.post<MadeLink>('/api/invitations', { email: `${who}@harbour.example`, name: who, production: 'harbour-lights', role: 'supervisor' }),
+      ))
+      const [inTime, demoted, left] = sent.map(({ body }) => tokenOf(body)) as [string, string, string]
+      const member = `/api/productions/harbour-lights/members/${leaving.id}`
+      expect((await accept(inTime)).answer.body.me?.memberships).toHaveLength(1)
+      expect((await keeper.patch(member, { role: 'animator', version: 1 })).status).toBe(200)
+      expect((await accept(demoted)).answer).toMatchObject({ status: 201, body: { me: { memberships: [] } } })
+      expect((await keeper.delete(member)).status).toBe(204)
+      expect((await accept(left)).answer).toMatchObject({ status: 201, body: { me: { memberships: [] } } })
+    })
+
     it('a production’s short name is its own, and well-formed', async () => {
       expect((await keeper.post('/api/productions', { slug: 'harbour-lights', title: 'Again' })).status).toBe(422)
       for (const slug of ['Harbour', '-a', 'a b', '../x', 'x'.repeat(41), ''])
