@@ -35,10 +35,14 @@ export const useWallStore = defineStore('wall', () => {
   const first = shallowRef<FirstWall | null>(null)
   const whole = shallowRef<Wall | null>(null)
 
-  /** Takes what the first paint brought; it is whole already when no sheet was left out. */
+  /**
+   * Takes what the first paint brought; it is whole already when no sheet was left out. A wall that was whole before stays on
+   * screen until `complete` has fetched it again: on the way back from a shot the page keeps its height, and so its place.
+   */
   function accept(brought: FirstWall): void {
     first.value = brought
-    whole.value = brought.sheets.length === brought.total ? brought : null
+    if (brought.sheets.length === brought.total) whole.value = brought
+    else if (whole.value?.production.slug !== brought.production.slug) whole.value = null
   }
 
   /** Fetches every sheet. */
