@@ -86,8 +86,9 @@ async function requireAnotherManager(production: Production, exceptPersonId: str
 
 /** Written down for everybody; told at once to the live connection, which cuts what the old role had opened. */
 async function announce(production: Production, byId: string, personId: string, role: Role | null): Promise<void> {
-  await appendEvent(production, { kind: 'member', personId: byId })
+  // The rights first: who is out does not hear of the event any more, and asks for nothing that would be refused.
   afterCommit(() => news.emit('membership', { production: production.slug, personId, role }))
+  await appendEvent(production, { kind: 'member', personId: byId })
 }
 
 const memberWire = (person: Person, { role, version }: Membership): Member => ({

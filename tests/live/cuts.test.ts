@@ -114,6 +114,8 @@ describe('a membership', () => {
     expect(onPier.dismissals).toEqual([{ reason: 'membership', production: 'pier' }])
     await until(() => watcher.presences.at(-1)?.lookers.length === 0, 'the person to be gone')
     const before = onPier.heard.length
+    // Not even of their own going: the page would ask for it, and be refused.
+    expect(before).toBe(watcher.heard.length - 1)
     await somethingHappens()
     await until(() => watcher.heard.length > 1, 'the news for the others')
     expect(onPier.heard.length).toBe(before)
