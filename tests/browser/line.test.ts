@@ -55,10 +55,8 @@ it('shows a comment, and who is looking, without a reload', async () => {
 
 it('keeps what is written while the server is down, says so, and sends it once when it is back', async () => {
   const { page } = await openPage({ url: server.url, as: animator, expected: [/./] })
-  // Nuxt fetches its list of pages a second after the first paint: that it could not is none of this story.
-  const manifest = page.waitForResponse(/\/builds\/meta\//)
   await page.goto(path)
-  await Promise.all([manifest, becomesLive(page)])
+  await becomesLive(page)
   await server.kill('SIGKILL')
   await page.getByText('Offline.').waitFor({ timeout: 20_000 })
   await answer(page, 'Written on a dead line.')
