@@ -3,7 +3,7 @@ import { opine, ranked, weigh } from './choose'
 import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
 import { badDrawings, stories } from './hypotheses'
 import type { Care, Story } from './hypotheses'
-import { CAN_REST, fromRest, fullNumbers } from './laws/fromRest'
+import { fromRest, fullNumbers } from './laws/fromRest'
 import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
 import type { LawModel } from './laws/model'
 import { letGoFrames } from './letGo'
@@ -14,6 +14,7 @@ import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
 import { scaleOf } from './size'
 import type { Scale } from './size'
+import { canRest } from './standstill'
 import { alreadyMoving } from './start'
 import type { Considered } from './start'
 import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Law } from './types'
@@ -40,8 +41,7 @@ export function judgeInDepth(request: CheckRequest): Judgement {
   const model = LAWS[request.law]
   const laws = lawsFor(request.measure)
   if (!laws.includes(request.law)) return undecided(request, `A ${request.measure} can't be held against ${LAW_WORDS[request.law]}.`)
-  const { law } = request
-  const resting = request.start === 'rest' && law !== 'steady' && CAN_REST.includes(law) ? law : null
+  const resting = request.start === 'rest' && canRest(request.law) ? request.law : null
   // A speed that is given need not be found.
   const needed = model.size + (resting ? 1 : 2)
   if (series.n < needed) {

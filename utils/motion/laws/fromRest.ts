@@ -8,9 +8,6 @@ import type { LawModel, Trace } from './model'
 import { oddRule } from './oddRule'
 import { beginSwing, traceSwing } from './swinging'
 
-/** Laws whose motion has a standstill in it; even spacing has none. */
-export const CAN_REST: readonly Law[] = ['odd-rule', 'topple', 'pendulum']
-
 /** Numbers: weights of 1 and x² − 1/3; x is 0 at the first key, so the apex lies there. */
 const fallFromRest: LawModel = {
   law: 'odd-rule',
