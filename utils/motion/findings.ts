@@ -58,7 +58,7 @@ export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number,
 
 /** `before`: frames before the first drawing at which the line stands still, null where it never does; `moving`: it isn't waiting for a later start. */
 export function notAtRestFinding(first: JudgedKey, before: number | null, used: number, moving: boolean): Finding {
-  const finding = { kind: 'not-at-rest', frames: [first.frame], amount: before ?? 0 } as const
+  const finding: Omit<Finding, 'text'> = { kind: 'not-at-rest', frames: [first.frame], amount: before ?? 0 }
   if (before === null) return { ...finding, text: 'Already moving at the first drawing: too fast ever to have been at rest.' }
   // A start further back than the whole list is long is not known to the frame.
   if (before > used) return { ...finding, text: 'Already moving at the first drawing: reads as let go long before it.' }
