@@ -4,6 +4,7 @@ import { memberChange, signIn } from '~/utils/contracts/people'
 import { eventsQuery, newShot } from '~/utils/contracts/production'
 import { newFlag } from '~/utils/contracts/take'
 import { plainIssues } from '~/utils/contracts/issues'
+import { claim } from '~/utils/contracts/production'
 
 const list = { law: 'topple', fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys: [1, 2, 3].map((frame) => ({ frame, reading: frame })) }
 const issuesOf = (change: object) => {
@@ -30,6 +31,21 @@ describe('faults by field', () => {
   })
   it('names the choices', () => {
     expect(issuesOf({ law: 'magic' })).toEqual([{ path: 'law', message: 'One of: odd-rule, topple, pendulum, steady.' }])
+  })
+  it.each(['rest', 'any'])('takes a start %s from every law that can stand still', (start) => {
+    for (const law of ['topple', 'pendulum', 'odd-rule']) expect(issuesOf({ law, start })).toEqual([])
+  })
+  it('refuses a rest that even spacing never has, in a check and in a claim', () => {
+    const refused = [{ path: 'start', message: 'Even spacing never stands still: it can’t start from rest.' }]
+    expect(issuesOf({ law: 'steady', start: 'rest' })).toEqual(refused)
+    expect(issuesOf({ law: 'steady', start: 'any' })).toEqual([])
+    const { fps: _fps, keys: _keys, ...said } = list
+    const read = claim.safeParse({ ...said, law: 'steady', start: 'rest' })
+    expect(read.success ? [] : plainIssues(read.error.issues)).toEqual(refused)
+    expect(claim.parse({ ...said, start: 'rest' }).start).toBe('rest')
+  })
+  it('names the starts', () => {
+    expect(issuesOf({ start: 'asleep' })).toEqual([{ path: 'start', message: 'One of: rest, any.' }])
   })
   it('names unknown fields', () => {
     expect(issuesOf({ weight: 3 })).toEqual([{ path: '', message: 'Unknown field: weight.' }])

@@ -1,6 +1,7 @@
 import { plainIssues } from '~/utils/contracts/issues'
 import { claim as claimSchema } from '~/utils/contracts/production'
 import type { Claim } from '~/utils/contracts/production'
+import { canRest } from '~/utils/motion/standstill'
 import type { Law, Measure, Roll, Shape, Subject } from '~/utils/motion/types'
 import { readNumber } from '~/utils/pasting'
 
@@ -11,6 +12,8 @@ export interface ClaimForm {
   unit: string
   radius: string
   zeroAt: string
+  /** The motion starts from rest at the first key; kept, and left unsaid, under a law that never rests. */
+  fromRest: boolean
   slop: string
   /** Percent of a gap. */
   tolerance: string
@@ -91,6 +94,7 @@ export function formOf(claim: Claim | null): ClaimForm {
     unit: claim && claim.measure !== 'angle' ? claim.unit : 'px',
     radius: text(claim?.radius),
     zeroAt: text(claim?.zeroAt),
+    fromRest: claim?.start === 'rest',
     slop: text(claim?.slop ?? 0.3),
     tolerance: text(claim ? Number((claim.tolerance * 100).toPrecision(6)) : 10),
     body: body?.shape ?? 'none',
@@ -137,6 +141,7 @@ export function readForm(form: ClaimForm): ClaimReading {
   // Where nothing turns, no angle stands for anything.
   const zeroAt = turns(form.law) ? number('zeroAt', form.zeroAt) : undefined
   if (zeroAt) draft.zeroAt = zeroAt
+  if (form.fromRest && canRest(form.law)) draft.start = 'rest'
   const subject = subjectOf(form, number)
   if (subject) draft.subject = subject
   const read = claimSchema.safeParse(draft)

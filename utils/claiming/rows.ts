@@ -11,6 +11,7 @@ export function claimRows(claim: Claim): [string, string][] {
   ]
   if (claim.radius !== undefined) rows.push(['Radius of the arc', withSign(claim.radius)])
   if (claim.zeroAt) rows.push(['Reading 0 stands for', `${roundFigure(claim.zeroAt, 4)}°`])
+  if (claim.start === 'rest') rows.push(['Start', 'from rest'])
   rows.push(['Body', bodyInWords(claim.subject, claim.unit) || 'left open'])
   if (claim.subject?.gravity !== undefined) rows.push(['Gravity', `${roundFigure(claim.subject.gravity, 4)} m/s²`])
   rows.push(['Slop', withSign(claim.slop)], ['Tolerance', `${roundFigure(claim.tolerance * 100, 3)} % of the gap`])

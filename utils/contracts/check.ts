@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { canRest } from '../motion/standstill'
 import type { CheckRequest, CheckResult, Subject } from '../motion/types'
 import { frame, line } from './common'
 
@@ -9,6 +10,7 @@ export const CHECK_LIMITS = { minKeys: 3, maxKeys: 2_000, minFps: 1, maxFps: 240
 
 export const laws = ['odd-rule', 'topple', 'pendulum', 'steady'] as const
 export const measures = ['angle', 'distance', 'arc'] as const
+export const starts = ['rest', 'any'] as const
 export const rolls = ['slide', 'ball', 'cylinder', 'shell', 'hoop'] as const
 
 export const law = z.enum(laws)
@@ -73,6 +75,7 @@ export const readingRules = {
   unit: line(16),
   radius: z.number().positive().max(1e6).optional(),
   zeroAt: z.number().min(-360).max(360).optional(),
+  start: z.enum(starts).optional(),
   slop: z.number().min(0, 'Slop is zero or more.').max(1e6),
   tolerance: z.number().min(0).max(1, 'Tolerance is a share between 0 and 1.'),
   subject: subject.optional(),
@@ -82,10 +85,11 @@ interface Measured {
   law: (typeof laws)[number]
   measure: (typeof measures)[number]
   radius?: number
+  start?: (typeof starts)[number]
   subject?: z.infer<typeof subject>
 }
 
-/** A law that turns needs an angle; an arc needs its radius; a body that turns is no use to a distance. */
+/** A law that turns needs an angle; an arc needs its radius; a body that turns is no use to a distance; only what can rest starts from rest. */
 export function refineMeasure(value: Measured, context: z.RefinementCtx): void {
   const turning = value.law === 'topple' || value.law === 'pendulum'
   const refuse = (path: string[], message: string) => context.addIssue({ code: 'custom', path, message })
@@ -95,6 +99,8 @@ export function refineMeasure(value: Measured, context: z.RefinementCtx): void {
     refuse(['radius'], 'Readings along an arc need the radius of the arc.')
   if (value.measure !== 'arc' && value.radius !== undefined)
     refuse(['radius'], 'Only readings along an arc have a radius.')
+  if (value.start === 'rest' && !canRest(value.law))
+    refuse(['start'], 'Even spacing never stands still: it can’t start from rest.')
   const body = value.subject
   if (!body) return
   if ('shape' in body && value.measure === 'distance')

@@ -17,7 +17,7 @@ export const waiverParams = z.strictObject({ ...takeParams.shape, waiver: server
 /** A posting: the list itself. Law, measure, unit, slop and tolerance come from the shot's claim. */
 export const newTake = z.strictObject({ clientId, keys, note: prose(LIMITS.noteChars).default('') })
 
-export const findingKinds = ['misplaced', 'held', 'skipped', 'wrong-law', 'wrong-scale', 'backward'] as const
+export const findingKinds = ['misplaced', 'held', 'skipped', 'wrong-law', 'wrong-scale', 'not-at-rest', 'backward'] as const
 export type FindingKind = (typeof findingKinds)[number]
 /** Which finding of the judge's answer is meant: its kind and the frames it names. */
 const findingName = z.strictObject({ kind: z.enum(findingKinds), frames: z.array(frame).max(2_000) })

@@ -4,7 +4,7 @@ import type { CheckResult, SizeReading } from '~/utils/motion/types'
 
 /** The sentence at the head of a take: what the list is, what it reads as, what to do about it. */
 
-type SaidClaim = Pick<Claim, 'law' | 'subject' | 'unit'>
+type SaidClaim = Pick<Claim, 'law' | 'subject' | 'unit' | 'start'>
 
 /** "8.2 m (7.8–8.6)". */
 export function sizeWithInterval(size: SizeReading): string {
@@ -44,10 +44,12 @@ export function verdictInWords(answer: CheckResult, claim: SaidClaim): { word: s
   const word = `${verdictWords[answer.verdict]}.`
   if (answer.verdict === 'holds') {
     const size = answer.size && answer.size.unit === 'm' ? ` of ${sizeWithInterval(answer.size)}` : ''
-    return { word, rest: `Every drawing sits inside its allowance: it reads as ${lawAsMotion(claim)}${size}.` }
+    return { word, rest: `Every drawing sits inside its allowance: it reads as ${lawAsMotion(claim)}${size}${claim.start === 'rest' ? ', from rest' : ''}.` }
   }
   if (answer.findings.some(({ kind }) => kind === 'wrong-law')) return { word, rest: answer.findings.find(({ kind }) => kind === 'wrong-law')!.text }
-  if (answer.findings.some(({ kind }) => kind === 'wrong-scale')) return { word, rest: wrongScale(answer, claim) }
+  // Where the motion is under way before the list begins, that comes before its size.
+  const startsWrong = answer.findings.some(({ kind }) => kind === 'not-at-rest')
+  if (!startsWrong && answer.findings.some(({ kind }) => kind === 'wrong-scale')) return { word, rest: wrongScale(answer, claim) }
   const [first, ...others] = answer.findings
   if (!first) {
     const count = brokenCount(answer)

@@ -217,6 +217,7 @@ export const findingWords: Record<FindingKind, string> = {
   backward: 'runs backward',
   'wrong-law': 'another law',
   'wrong-scale': 'another size',
+  'not-at-rest': 'not at rest',
 }
 
 /** "2.7 frames early", "on the line"; empty where the law stands still. */

@@ -12,12 +12,12 @@ import type { Law } from './types'
 /** What one drawing can cost a law at most, nats: beyond this it counts as a lone bad drawing, not as evidence against the law. */
 const MOST_PER_DRAWING = 7
 /** How much better another law must do, nats, before the claimed one is doubted (e⁸ is about three thousand to one). */
-const DOUBT = 8
-const DOUBT_WITH_FAULTS = 3
+export const DOUBT = 8
+export const DOUBT_WITH_FAULTS = 3
 /** A pace known to within a factor of two is known well enough to agree with a claim. */
 const SURE = Math.LN2
 /** Misfit under which nobody would doubt the claimed law, whatever else fits. */
-const UNNOTICED = 0.25
+export const UNNOTICED = 0.25
 /** Misfit under which even spacing may stand for a law that curves. */
 const EVEN_ENOUGH = 0.5
 
@@ -51,6 +51,11 @@ const NEEDLESS = 6
 
 const blamed = (story: Story) => story.out.length + (story.shift ? 1 : 0)
 
+/** What a story costs with its law's free numbers and the drawings that it leaves broken, nats: for comparing stories of two laws. */
+export function storyCost(story: Story, sigma: number, n: number): number {
+  return charge(story, sigma, n) + MISPLACED_CHARGE * story.breaking + 0.5 * story.fit.model.size * Math.log(n)
+}
+
 /** The cheapest story that shows. */
 export function cheapest(series: Series, told: readonly Story[], care: Care, sigma: number): Story {
   const simplest = told.reduce((least, story) => (story.breaking === 0 ? Math.min(least, blamed(story)) : least), Infinity)
@@ -78,7 +83,7 @@ function readingOf(series: Series, law: Law, story: Story, care: Care, cost: num
   let breaking = 0
   for (let i = 0; i < series.n; i++) if ((strained[i] as number) > 1 && !story.out.includes(i)) breaking++
   return {
-    law, story, charge: cost + 0.5 * LAWS[law].size * Math.log(series.n),
+    law, story, charge: cost + 0.5 * story.fit.model.size * Math.log(series.n),
     misfit: rootMean(strained, story.out), breaking: breaking / series.n,
   }
 }

@@ -56,6 +56,23 @@ export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number,
   return { kind: 'wrong-law', frames: [], amount: misfit, text }
 }
 
+/** `before`: frames before the first drawing at which the line stands still, null where it never does; `moving`: it isn't waiting for a later start. */
+export function notAtRestFinding(first: JudgedKey, before: number | null, used: number, moving: boolean): Finding {
+  const finding: Omit<Finding, 'text'> = { kind: 'not-at-rest', frames: [first.frame], amount: before ?? 0 }
+  if (before === null) return { ...finding, text: 'Already moving at the first drawing: too fast ever to have been at rest.' }
+  // A start further back than the whole list is long is not known to the frame.
+  if (before > used) return { ...finding, text: 'Already moving at the first drawing: reads as let go long before it.' }
+  const when = inFrames(Math.abs(before))
+  if (!moving) return { ...finding, text: `Not yet moving at the first drawing: reads as let go ${when} after it.` }
+  const rest = before > 0 ? `reads as let go ${when} before it` : `reads as at rest ${when} after it`
+  return { ...finding, text: `Already moving at the first drawing: ${rest}.` }
+}
+
+/** "half a frame", "1.5 frames". */
+function inFrames(count: number): string {
+  return count.toFixed(1) === '0.5' ? 'half a frame' : frames(count)
+}
+
 export function wrongScaleFinding(scale: Scale, needed: number, used: number): Finding | null {
   const { size, claimed } = scale
   if (!size || claimed === null) return null
@@ -75,7 +92,7 @@ function placesFor(width: number): number {
 
 /** What was found about the whole list comes first, then in order of how far off. */
 export function inOrder(findings: Finding[], keys: readonly JudgedKey[]): Finding[] {
-  const rank: Record<Finding['kind'], number> = { 'wrong-law': 0, 'held': 1, 'skipped': 1, 'wrong-scale': 2, 'backward': 3, 'misplaced': 4 }
+  const rank: Record<Finding['kind'], number> = { 'wrong-law': 0, 'not-at-rest': 1, 'held': 2, 'skipped': 2, 'wrong-scale': 3, 'backward': 4, 'misplaced': 5 }
   const strain = (finding: Finding) => {
     const key = keys.find(one => one.frame === finding.frames[0])
     return key?.offset === null || key?.offset === undefined || !key.allowance ? 0 : Math.abs(key.offset) / key.allowance

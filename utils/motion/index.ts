@@ -3,6 +3,7 @@ export { judge, judgeInDepth } from './judge'
 export type { Judgement } from './judge'
 export { lawCurve } from './line'
 export type { Line } from './line'
+export { canRest } from './standstill'
 export { allowanceAt, allowances } from './allowance'
 export {
   STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,

@@ -1,18 +1,24 @@
 /** The judge: a list and its claim in, what holds and what breaks out. Same list, same answer. */
 import { opine, ranked, weigh } from './choose'
-import { backwardFinding, inOrder, misplacedFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
+import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
 import { badDrawings, stories } from './hypotheses'
 import type { Care, Story } from './hypotheses'
-import { ruledFromRest } from './fromRest'
+import { fromRest, fullNumbers } from './laws/fromRest'
 import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
+import type { LawModel } from './laws/model'
+import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
 import { judgeKeys, unjudged } from './perKey'
+import { ruledFromRest } from './ruledFromRest'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
 import { scaleOf } from './size'
 import type { Scale } from './size'
-import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey } from './types'
+import { canRest } from './standstill'
+import { alreadyMoving } from './start'
+import type { Considered } from './start'
+import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Law } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -36,7 +42,9 @@ export function judgeInDepth(request: CheckRequest): Judgement {
   const model = LAWS[request.law]
   const laws = lawsFor(request.measure)
   if (!laws.includes(request.law)) return undecided(request, `A ${request.measure} can't be held against ${LAW_WORDS[request.law]}.`)
-  const needed = model.size + 2
+  const resting = request.start === 'rest' && canRest(request.law) ? request.law : null
+  // A speed that is given need not be found.
+  const needed = model.size + (resting ? 1 : 2)
   if (series.n < needed) {
     return undecided(request, `${series.n} keys are too few for ${LAW_WORDS[request.law]}: it takes ${needed} to tell.`)
   }
@@ -44,19 +52,31 @@ export function judgeInDepth(request: CheckRequest): Judgement {
   if (!(range > 2 * request.slop)) return undecided(request, STILL)
 
   const care: Care = { slop: request.slop, tolerance: request.tolerance, least: roundingSpread(series.y) }
-  const choice = weigh(series, request.law, laws, stories(series, model, care), care)
-  const { value: drawn } = choice.claimed.story.fit.trace
+  const free = consider(request, series, model, laws, care, range)
+  const { value: drawn } = free.choice.claimed.story.fit.trace
   // Pencil alone can spread still drawings over the slop; what has to move is the line.
   if (!(Math.max(...drawn) - Math.min(...drawn) > 2 * request.slop)) return undecided(request, STILL)
+  const atRest = resting && consider(request, series, fromRest(resting, free.choice.plain.fit.numbers), laws, care, range)
+  if (atRest && alreadyMoving(series, atRest, free, care)) return notAtRest(request, series, atRest, free, care)
+  return answer(request, series, atRest ?? free, care)
+}
+
+/** Holds a law, as it is or as it starts from rest, against a list beside every other that the measure can take. */
+function consider(request: CheckRequest, series: Series, model: LawModel, laws: readonly Law[], care: Care, range: number): Considered {
+  const choice = weigh(series, request.law, laws, stories(series, model, care), care)
   const { story } = choice.claimed
   const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
-  const opinion = opine(series, choice, care, range, scale)
+  return { choice, scale, opinion: opine(series, choice, care, range, scale) }
+}
+
+function answer(request: CheckRequest, series: Series, { choice, scale, opinion }: Considered, care: Care): Judgement {
+  const { story } = choice.claimed
   const readsAs = ranked(choice).map(({ law, misfit }) => ({ law, misfit }))
 
   if (opinion.kind === 'wrong-law') {
     // Stories told to save the claimed law mean nothing once it is given up: the line is its plain best.
     const plain = choice.plain
-    const line: Line = { law: request.law, numbers: Array.from(plain.fit.numbers), lag: 0 }
+    const line = lineFrom(request.law, plain, 0)
     const keys = judgeKeys(request, series, traceLine(series, line, series.x))
     const amount = readsAs.find(({ law }) => law === request.law)?.misfit ?? 0
     const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
@@ -69,12 +89,8 @@ export function judgeInDepth(request: CheckRequest): Judgement {
   const line = lineOf(request, series, story)
   const trace = traceLine(series, line, series.x)
   const keys = judgeKeys(request, series, trace)
-  const used = series.spanFrames
-  const claim: ClaimFrames | null = scale.pace === null ? null : { frames: Math.round(used / scale.pace), usedFrames: used }
-  const ruled = {
-    fit: ruledList(series, line, request),
-    claim: scale.pace === null ? null : ruledList(series, line, request, scale.pace),
-  }
+  const claim = claimFrames(series, scale)
+  const ruled = ruledBy(request, series, line, scale)
   if (opinion.kind === 'too-short') {
     return {
       line, pace: scale.pace,
@@ -84,16 +100,61 @@ export function judgeInDepth(request: CheckRequest): Judgement {
       },
     }
   }
-  const findings = inOrder([
-    ...shiftFindings(series, story, keys),
-    ...drawingFindings(request, series, story, keys, trace.rate, care),
-    ...scaleFindings(request, scale, claim),
-  ], keys)
+  const findings = inOrder(faultFindings(request, series, story, scale, keys, trace.rate, care), keys)
   const breaks = findings.length > 0 || keys.some(key => key.breaks)
   return {
     line, pace: scale.pace,
     result: { verdict: breaks ? 'breaks' : 'holds', reason: null, keys, findings, readsAs, size: scale.size, claim, ruled },
   }
+}
+
+/**
+ * The list is the claimed law's, but under way before its first drawing. The line is the best that does start from rest there; what else
+ * is wrong, and the size, are read off the motion as it was drawn, or one fault would be told as many.
+ */
+function notAtRest(request: CheckRequest, series: Series, atRest: Considered, free: Considered, care: Care): Judgement {
+  const { story } = free.choice.claimed
+  const line = lineFrom(request.law, atRest.choice.plain, 0)
+  const keys = judgeKeys(request, series, traceLine(series, line, series.x))
+  const drawn = traceLine(series, lineOf(request, series, story), series.x)
+  const drawnKeys = judgeKeys(request, series, drawn)
+  const numbers = fullNumbers(story.fit.model, story.fit.numbers)
+  const before = letGoFrames(request.law, series, numbers)
+  const first = keys[0] as JudgedKey
+  const [still = first.reading] = story.fit.model.trace(series, numbers, Float64Array.of(-(before ?? 0) / series.spanFrames), false).value
+  const moving = Math.abs(first.reading - still) > request.slop
+  // Drawings that wait for a late start sit off the motion's line for that very reason.
+  const waits = (frame: number) => !moving && before !== null && frame < first.frame - before
+  const findings = inOrder([
+    notAtRestFinding(first, before, series.spanFrames, moving || before === null || before > 0),
+    ...faultFindings(request, series, story, free.scale, drawnKeys, drawn.rate, care).filter(({ frames }) => !frames.some(waits)),
+  ], drawnKeys)
+  return {
+    line, pace: atRest.scale.pace,
+    result: {
+      verdict: 'breaks', reason: null, keys, findings, readsAs: ranked(free.choice).map(({ law, misfit }) => ({ law, misfit })),
+      size: free.scale.size, claim: claimFrames(series, free.scale), ruled: ruledBy(request, series, line, atRest.scale),
+    },
+  }
+}
+
+function claimFrames({ spanFrames }: Series, { pace }: Scale): ClaimFrames | null {
+  return pace === null ? null : { frames: Math.round(spanFrames / pace), usedFrames: spanFrames }
+}
+
+function ruledBy(request: CheckRequest, series: Series, line: Line, { pace }: Scale): CheckResult['ruled'] {
+  return { fit: ruledList(series, line, request), claim: pace === null ? null : ruledList(series, line, request, pace) }
+}
+
+/** What is wrong with a list that keeps its law, in no order. */
+function faultFindings(
+  request: CheckRequest, series: Series, story: Story, scale: Scale, keys: readonly JudgedKey[], rate: Float64Array, care: Care,
+): Finding[] {
+  return [
+    ...shiftFindings(series, story, keys),
+    ...drawingFindings(request, series, story, keys, rate, care),
+    ...scaleFindings(request, scale, claimFrames(series, scale)),
+  ]
 }
 
 function undecided(request: CheckRequest, reason: string): Judgement {
@@ -108,9 +169,13 @@ function undecided(request: CheckRequest, reason: string): Judgement {
 
 /** The line runs with the longer side of a held or skipped drawing, so that as few drawings as possible are called off. */
 function lineOf(request: CheckRequest, series: Series, story: Story): Line {
-  const { shift, fit } = story
+  const { shift } = story
   const lag = shift && series.n - shift.at > shift.at ? shift.by : 0
-  return { law: request.law, numbers: Array.from(fit.numbers), lag }
+  return lineFrom(request.law, story, lag)
+}
+
+function lineFrom(law: Law, { fit }: Story, lag: number): Line {
+  return { law, numbers: Array.from(fullNumbers(fit.model, fit.numbers)), lag }
 }
 
 function shiftFindings(series: Series, story: Story, keys: readonly JudgedKey[]): Finding[] {

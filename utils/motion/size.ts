@@ -1,6 +1,7 @@
 /** What size a list's timing reads as, and how far that is from the claim. */
 import { equalLength, gravityOf, isBody, namedSize, pathAcceleration, pathShare, sizeForLength } from './bodies'
 import type { Fit } from './fit'
+import { fullNumbers } from './laws/fromRest'
 import { accelerationOf } from './laws/oddRule'
 import type { Series } from './series'
 import { inverseRow } from './solve'
@@ -68,9 +69,13 @@ function bodyScale(request: CheckRequest, series: Series, fit: Fit, kept: number
 
 function pathScale(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
   const path: PathSubject = request.subject && !isBody(request.subject) ? request.subject : { gravity: gravityOf(request.subject) }
-  const a = Math.abs(accelerationOf(fit.numbers, series.span))
-  const { error, t } = standardError(fit, 2, kept, least)
-  const half = Math.min(a * WIDEST, Math.abs(accelerationOf(Float64Array.of(0, 0, error * t), series.span)))
+  const a = Math.abs(accelerationOf(fullNumbers(fit.model, fit.numbers), series.span))
+  // The acceleration is the last free number, whether the fall starts from rest or not.
+  const last = fit.model.size - 1
+  const { error, t } = standardError(fit, last, kept, least)
+  const off = new Float64Array(fit.model.size)
+  off[last] = error * t
+  const half = Math.min(a * WIDEST, Math.abs(accelerationOf(fullNumbers(fit.model, off), series.span)))
   const perMetre = path.unitsPerMetre
   const unit = perMetre === undefined ? pathAcceleration(path) : perMetre * pathShare(path)
   if (!(unit > 0) || !(a > 0)) return NOTHING

@@ -6,6 +6,9 @@
 /** The laws a list can claim. */
 export type Law = 'odd-rule' | 'topple' | 'pendulum' | 'steady'
 
+/** What a claim says of the first key: the motion starts from rest there, or may already be under way. */
+export type Start = 'rest' | 'any'
+
 /** What the readings count: degrees, drawing units along a straight path, or drawing units along an arc of known radius. */
 export type Measure = 'angle' | 'distance' | 'arc'
 
@@ -64,12 +67,14 @@ export interface CheckRequest {
   radius?: number
   /** Degrees: the angle that reading 0 stands for. */
   zeroAt?: number
+  /** Whether the motion starts from rest at its first key; 'any' when left out. Even spacing never rests. */
+  start?: Start
   subject?: Subject
 }
 
 export type Verdict = 'holds' | 'breaks' | 'undecided'
 
-export type FindingKind = 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'backward'
+export type FindingKind = 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'not-at-rest' | 'backward'
 
 /** One key as judged. `null` stands where a number would have no meaning (no law fitted, law at a standstill, no gap after the last). */
 export interface JudgedKey {
@@ -96,7 +101,8 @@ export interface Finding {
   frames: number[]
   /**
    * How much, in the kind's own measure. misplaced and backward: reading units; held and skipped: frames late or early;
-   * wrong-law: misfit of the claimed law (1 is at the edge of notice); wrong-scale: size read over size claimed.
+   * wrong-law: misfit of the claimed law (1 is at the edge of notice); wrong-scale: size read over size claimed;
+   * not-at-rest: frames before the first drawing at which it reads as let go, negative where after it, 0 where it never stands still.
    */
   amount: number
   /** One plain sentence. */

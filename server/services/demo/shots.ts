@@ -94,11 +94,11 @@ export const demoSequences: DemoSequence[] = [
       },
       {
         code: 'BRK-070', title: 'Barrel rolls down the slip', range: [1, 40], dueIn: 6, animator: 'nagisa', supervisor: 'supervisor',
-        brief: 'Full barrel: it rolls as a solid.', claim: onPaper('odd-rule', slip),
+        brief: 'Full barrel: it rolls as a solid, and wakes up on screen.', claim: { ...onPaper('odd-rule', slip), start: 'rest' },
         takes: [
           {
             by: 'nagisa', daysAgo: 4, keys: fallen(twos(16), slip, 0, 90, pixels(31)),
-            ruling: { decision: 'goes-back', by: 'supervisor', note: 'The law holds, but it is already moving at the first key. It has to wake up *on* screen.', daysAgo: 3 },
+            ruling: { decision: 'goes-back', by: 'supervisor', note: 'The gaps are a barrel’s, but it is already moving at the first key. It has to wake up *on* screen.', daysAgo: 3 },
           },
         ],
         threads: [{ take: 1, says: [['nagisa', 2.6, 'Starting it from rest adds six drawings. Is there room?'], ['coordinator', 2.2, 'There is until 40.']] }],

@@ -13,10 +13,11 @@ const pole: Claim = {
   law: 'topple', measure: 'angle', unit: 'deg', slop: 0, tolerance: 0,
   subject: { shape: 'pole', height: 3, mass: 4, headMass: 6, headHeight: 2.8 },
 }
+const slip: Claim = { law: 'odd-rule', measure: 'distance', unit: 'px', start: 'rest', slop: 1, tolerance: 0.1 }
 const walk: Claim = { law: 'steady', measure: 'distance', unit: 'px', slop: 1, tolerance: 0.1 }
 
 describe('a claim through its form', () => {
-  it.each([['tower', tower], ['barrel', barrel], ['bell', bell], ['pole', pole], ['walk', walk]])('%s comes back as it was', (_, claim) => {
+  it.each([['tower', tower], ['barrel', barrel], ['bell', bell], ['pole', pole], ['slip', slip], ['walk', walk]])('%s comes back as it was', (_, claim) => {
     expect(readForm(formOf(claim))).toEqual({ claim, complaints: {} })
   })
   it('reads decimal commas', () => {
@@ -45,6 +46,11 @@ describe('changing the law', () => {
   it('never says a body of a law that has none', () => {
     expect(readForm(withLaw(formOf(tower), 'steady')).claim).toEqual({ law: 'steady', measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1 })
   })
+  it('never says a start from rest of even spacing, and says it again on coming back', () => {
+    const even = withLaw(formOf(slip), 'steady')
+    expect(readForm(even).claim).not.toHaveProperty('start')
+    expect(readForm(withLaw(even, 'odd-rule')).claim?.start).toBe('rest')
+  })
   it('leaves the sizes where they are, for coming back', () => {
     expect(withLaw(withLaw(formOf(tower), 'steady'), 'topple').sizes.height).toBe('38')
   })
@@ -55,4 +61,10 @@ it('says a claim line by line', () => {
     ['Law', 'pendulum'], ['Readings', 'along the arc, in mm'], ['Radius of the arc', '420 mm'], ['Reading 0 stands for', '\u221212°'],
     ['Body', 'bob on 1.4 m'], ['Slop', '0.5 mm'], ['Tolerance', '10 % of the gap'],
   ])
+})
+
+it('says a start from rest, and nothing of any other', () => {
+  const starts = (claim: Claim) => claimRows(claim).filter(([what]) => what === 'Start')
+  expect(starts(slip)).toEqual([['Start', 'from rest']])
+  expect(starts({ ...slip, start: 'any' })).toEqual([])
 })

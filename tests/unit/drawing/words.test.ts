@@ -19,7 +19,7 @@ import {
   tellingFrames,
   withUnit,
 } from '~/utils/drawing/words'
-import type { CheckResult } from '~/utils/motion/types'
+import type { CheckResult, Finding } from '~/utils/motion/types'
 
 describe('figures', () => {
   it('has a true minus, and none on a zero', () => {
@@ -112,6 +112,12 @@ describe('the verdict in a sentence', () => {
       word: 'Breaks.',
       rest: 'The shape is a topple, but it reads as 8.2 m (7.8–8.6), not 38 m: that size needs 182 frames, this takes 85.',
     })
+  })
+  it('says a start under way before the size, and from rest where that was claimed and holds', () => {
+    const moving: Finding = { kind: 'not-at-rest', frames: [1], amount: 0.5, text: 'Already moving at the first drawing: reads as let go half a frame before it.' }
+    const scale: Finding = { kind: 'wrong-scale', frames: [], amount: 0.22, text: 'unused' }
+    expect(verdictInWords({ ...answer, verdict: 'breaks', size, findings: [moving, scale] }, claim).rest).toBe(`${moving.text} One more finding below.`)
+    expect(verdictInWords(answer, { ...claim, start: 'rest' }).rest).toBe('Every drawing sits inside its allowance: it reads as a topple, from rest.')
   })
   it('gives the reason where nothing can be told', () => {
     expect(verdictInWords({ ...answer, verdict: 'undecided', reason: 'Four keys are too few.' }, claim).rest).toBe('Four keys are too few.')

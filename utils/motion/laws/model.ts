@@ -20,6 +20,8 @@ export interface LawModel {
   readonly linear: boolean
   /** Traces the line for times x (0 to 1 is the list's span; outside it the law is carried on). */
   trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace
+  /** Told where the numbers are not the law's own: those that the law without any restriction counts the same line by. Linear in them for linear laws. */
+  full?(numbers: Float64Array): Float64Array
   /** Places to begin a search from, best guess first. `y` is the list with its lone bad drawings smoothed over. */
   begin(series: Series, y: Float64Array): Float64Array[]
 }

@@ -8,6 +8,7 @@ import type { FindingKind } from '~/utils/motion/types'
 const faults: Record<string, FindingKind[]> = {
   'BRK-020': ['misplaced'],
   'BRK-055': ['held'],
+  'BRK-070': ['not-at-rest'],
   'BRK-110': ['skipped'],
   'CHN-010 take 1': ['misplaced'],
   'CHN-040': ['wrong-law'],

@@ -32,6 +32,13 @@ describe('the headline of a sheet', () => {
     expect(headline(judged(steady, fall(20)), steady)).toBe('Reads as odd rule, not steady')
   })
 
+  it('says that a start claimed at rest is under way', () => {
+    const claim: Claim = { ...fallClaim, start: 'rest' }
+    const late = fall(20).slice(6)
+    expect(headline(judged(fallClaim, late), fallClaim)).toMatch(/^Holds/)
+    expect(headline(judged(claim, late), claim)).toBe('Already moving at the first drawing')
+  })
+
   it('says why a list can’t be told', () => {
     expect(headline(judged(fallClaim, fall(3)), fallClaim)).toMatch(/^3 keys are too few for /)
   })

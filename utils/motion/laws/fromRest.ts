@@ -1,0 +1,50 @@
+/**
+ * The laws with their speed at the first key held at nothing: one free number fewer. Their numbers can be told as the free law's own
+ * (`full`), so that a line that starts from rest is kept, sent and drawn like any other.
+ */
+import type { Series } from '../series'
+import type { Law } from '../types'
+import type { LawModel, Trace } from './model'
+import { oddRule } from './oddRule'
+import { beginSwing, traceSwing } from './swinging'
+
+/** Numbers: weights of 1 and x² − 1/3; x is 0 at the first key, so the apex lies there. */
+const fallFromRest: LawModel = {
+  law: 'odd-rule',
+  size: 2,
+  linear: true,
+  // x = (z + 1)/2, so x² − 1/3 = z/2 + (z² − 1/3)/4.
+  full: ([c = 0, a = 0]) => Float64Array.of(c, a / 2, a / 4),
+  trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace {
+    const { value, rate } = oddRule.trace(series, fallFromRest.full?.(numbers) ?? numbers, x, false)
+    return { value, rate, columns: withColumns ? [new Float64Array(x.length).fill(1), x.map(at => at * at - 1 / 3)] : [] }
+  },
+  begin: () => [new Float64Array(2)],
+}
+
+/** Numbers: ln κ and the angle at the first key, radians. `near`: numbers of the free law's fit, as one more place to begin. */
+function swingFromRest(law: 'topple' | 'pendulum', near: Float64Array): LawModel {
+  const fromTop = law === 'topple'
+  const full = ([log = 0, angle = 0]: Float64Array) => Float64Array.of(log, angle, 0)
+  return {
+    law,
+    size: 2,
+    linear: false,
+    full,
+    trace(series, numbers, x, withColumns) {
+      const trace = traceSwing(series, full(numbers), x, withColumns, fromTop)
+      return { ...trace, columns: trace.columns.slice(0, 2) }
+    },
+    begin: (series, y) => [near.slice(0, 2), ...beginSwing(series, y, fromTop).map(numbers => numbers.slice(0, 2))],
+  }
+}
+
+/** The law as it starts from rest at the first key. `near`: the free law's fit. */
+export function fromRest(law: Exclude<Law, 'steady'>, near: Float64Array): LawModel {
+  return law === 'odd-rule' ? fallFromRest : swingFromRest(law, near)
+}
+
+/** A fit's numbers as the free law counts them. */
+export function fullNumbers(model: LawModel, numbers: Float64Array): Float64Array {
+  return model.full ? model.full(numbers) : numbers
+}

@@ -1,0 +1,39 @@
+/** When a motion that is already under way was let go. */
+import { incompleteF, ladder } from './elliptic'
+import type { Series } from './series'
+import type { Law } from './types'
+
+/**
+ * Frames before the first key at which the law's line stands still: negative where that comes after it. Of several standstills the
+ * nearest. Null where the motion has none: even spacing, or a body so fast that it goes over the top.
+ * `numbers`: the free law's own.
+ */
+export function letGoFrames(law: Law, series: Series, numbers: Float64Array): number | null {
+  const spans = law === 'odd-rule' ? apexBefore(numbers) : law === 'steady' ? null : standstillBefore(numbers, law === 'topple')
+  if (spans === null) return null
+  const frames = spans * series.spanFrames
+  return Number.isFinite(frames) ? frames : null
+}
+
+/** Speed over acceleration at the first key, z = −1: (2c₁ − 4c₂)/8c₂ spans. */
+function apexBefore([, c1 = 0, c2 = 0]: Float64Array): number | null {
+  return c2 === 0 ? null : (c1 / c2 - 2) / 4
+}
+
+/** A swing stands still wherever its phase is an odd number of quarters: cn = 0. */
+function standstillBefore([log = 0, start = 0, turn = 0]: Float64Array, fromTop: boolean): number | null {
+  const kappa = Math.exp(log)
+  const v = (fromTop ? -turn : turn) / kappa / 2
+  let s = fromTop ? Math.cos(start / 2) : Math.sin(start / 2)
+  let c = fromTop ? Math.sin(start / 2) : Math.cos(start / 2)
+  if (c < 0) {
+    s = -s
+    c = -c
+  }
+  if (Math.abs(v) >= c) return null
+  const m1 = (c - Math.abs(v)) * (c + Math.abs(v))
+  const { quarter } = ladder(m1)
+  const phase = incompleteF(s, v, m1)
+  const before = phase > 0 ? phase - quarter : phase + quarter
+  return before / kappa
+}
