@@ -1,0 +1,149 @@
+import type { Page } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { openPage } from '../helpers/browser'
+import type { Client } from '../helpers/client'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { counts, shows, visible } from './seen'
+import { as, hangTower, PRODUCTION } from './tower'
+
+/** The bench: planned by keyboard, sent as an address, set going, and carried into a take. */
+
+const BENCH = `/p/${PRODUCTION}/bench`
+const CODE = 'CLK-117'
+let server: TestServer
+let animator: Client
+let guest: Client
+
+beforeAll(async () => {
+  server = await startServer()
+  await hangTower(server.url, CODE)
+  ;[animator, guest] = [await as(server.url, 'animator'), await as(server.url, 'guest')]
+})
+afterAll(async () => {
+  await server.stop()
+})
+
+const said = (page: Page, what: string) => page.locator(`[data-test="${what}"]`)
+async function type(page: Page, label: string | RegExp, value: string): Promise<void> {
+  const field = page.getByLabel(label)
+  await field.focus()
+  await page.keyboard.press('Control+A')
+  await page.keyboard.type(value)
+}
+const open = async (as: Client, path: string, reducedMotion: 'reduce' | 'no-preference' = 'reduce') => {
+  const window = await openPage({ url: server.url, as, path, reducedMotion })
+  await window.page.waitForLoadState('networkidle')
+  return window.page
+}
+const poses = (page: Page) => said(page, 'pose').evaluateAll((paths) => paths.map((path) => path.getAttribute('d')).join(' '))
+
+describe('the bench', () => {
+  it('plans by keyboard, and the address opens the same in another window', async () => {
+    const page = await open(animator, BENCH)
+    await page.getByRole('navigation', { name: 'Places' }).getByRole('link', { name: 'Bench' }).and(page.locator('[aria-current="page"]')).waitFor()
+    await type(page, 'Height, m', '1')
+    await shows(said(page, 'frames'), '32.8 frames')
+    await shows(said(page, 'seconds'), '1.37 s')
+    await shows(said(page, 'drawings'), '17 drawings')
+    await type(page, 'Height, m', '4')
+    await shows(said(page, 'frames'), '65.7 frames')
+    await shows(page.getByRole('table', { name: /Spacing list/ }), /\b65\b/)
+
+    // What can't be read is told, and changes nothing.
+    await type(page, 'Lean, degrees', 'steep')
+    await visible(page.getByText('This is not a number.'))
+    await shows(said(page, 'frames'), '65.7 frames')
+    await type(page, 'Lean, degrees', '2')
+    await shows(said(page, 'frames'), '57.0 frames')
+
+    await page.getByRole('radio', { name: 'Moon' }).focus()
+    await page.keyboard.press('Space')
+    await shows(said(page, 'frames'), '140.2 frames')
+    await type(page, /^Or: frames I have/, '57')
+    await shows(said(page, 'reads'), /^0\.66/)
+    await type(page, 'The same at, m', '1 16')
+    await counts(page.getByRole('table', { name: 'Frames that each size needs' }).locator('tbody tr'), 3)
+    await page.waitForURL((address) => address.searchParams.get('beside') === '1,16')
+    const address = new URL(page.url())
+    expect(Object.fromEntries(address.searchParams)).toEqual({ law: 'topple', body: 'rod', height: '4', lean: '2', gravity: 'moon', have: '57', beside: '1,16' })
+
+    const other = await open(guest, address.pathname + address.search)
+    for (const what of ['frames', 'seconds', 'drawings', 'reads']) expect(await said(other, what).innerText()).toBe(await said(page, what).innerText())
+    expect(await other.getByRole('table').allInnerTexts()).toEqual(await page.getByRole('table').allInnerTexts())
+    await counts(other.getByRole('button', { name: /Start a take/ }), 0)
+  })
+
+  it('an address that nobody can read opens a bench all the same', async () => {
+    const page = await open(animator, `${BENCH}?law=gallop&height=tall&fps=-1&on=9`)
+    await shows(said(page, 'frames'), '46.4 frames')
+  })
+
+  it('moves by itself, stops when less motion is asked for, and goes again when asked', async () => {
+    const page = await open(animator, `${BENCH}?law=topple&body=rod&height=4&lean=1&on=1&beside=1`, 'no-preference')
+    await visible(page.getByRole('button', { name: 'Stop', exact: true }))
+    const before = await poses(page)
+    await expect.poll(() => poses(page), { timeout: 10_000 }).not.toBe(before)
+
+    await page.emulateMedia({ reducedMotion: 'reduce' })
+    const play = page.getByRole('button', { name: 'Play', exact: true })
+    await visible(play)
+    const still = await poses(page)
+    await page.waitForTimeout(600)
+    expect(await poses(page)).toBe(still)
+
+    await play.focus()
+    await page.keyboard.press('Space')
+    await visible(page.getByRole('button', { name: 'Stop', exact: true }))
+    await expect.poll(() => poses(page), { timeout: 10_000 }).not.toBe(still)
+  })
+
+  it('waits under reduced motion; Space and arrows go by keyboard', async () => {
+    const page = await open(animator, `${BENCH}?law=topple&body=rod&height=1&lean=1&on=2`)
+    const slider = page.getByRole('slider', { name: 'Frame of the motion' })
+    await page.waitForTimeout(400)
+    expect(await slider.inputValue()).toBe('0')
+    await slider.focus()
+    for (let i = 0; i < 3; i++) await page.keyboard.press('ArrowRight')
+    await shows(said(page, 'now'), /frame 4 /)
+    expect(await slider.getAttribute('aria-valuetext')).toBe('frame 4 of 34, 0.13 seconds')
+    await page.keyboard.press('ArrowLeft')
+    await shows(said(page, 'now'), /frame 3 /)
+    // The other drawings follow to the drawing that is held.
+    await expect.poll(() => page.getByRole('slider', { name: 'Strip, frame by frame' }).getAttribute('aria-valuenow')).toBe('3')
+    await page.keyboard.press('End')
+    await shows(said(page, 'now'), /frame 34 /)
+    await page.keyboard.press('Space')
+    await visible(page.getByRole('button', { name: 'Stop', exact: true }))
+    await page.keyboard.press('Space')
+    await visible(page.getByRole('button', { name: 'Play', exact: true }))
+  })
+
+  it('starts a take: the list lands in the posting form, and a draft goes only when told to', async () => {
+    const page = await open(animator, `${BENCH}?law=topple&body=block&height=38&width=6&lean=1.5`)
+    const count = Number((await said(page, 'drawings').innerText()).split(' ')[0])
+    expect(count).toBeGreaterThan(60)
+    const start = async () => {
+      await page.getByRole('button', { name: /Start a take with this/ }).focus()
+      await page.keyboard.press('Enter')
+      await page.getByLabel('Shot', { exact: true }).selectOption(CODE)
+      await shows(page.getByRole('dialog'), `${count} drawings, from frame 1`)
+    }
+    await start()
+    await page.getByRole('button', { name: 'Carry the list over' }).click()
+    await page.waitForURL(new RegExp(`/shots/${CODE}/post$`))
+    await shows(page.getByRole('form', { name: 'The list' }), `${count} keys`)
+    await shows(page.getByLabel('The judge’s answer'), /Holds/)
+
+    await page.goto(`${BENCH}?law=topple&body=block&height=38&width=6&lean=1.5`)
+    await page.waitForLoadState('networkidle')
+    await start()
+    const carry = page.getByRole('button', { name: 'Carry the list over' })
+    await visible(page.getByText(`with ${count} rows`))
+    expect(await carry.isDisabled()).toBe(true)
+    await page.getByRole('checkbox', { name: /Replace it/ }).check()
+    expect(await carry.isDisabled()).toBe(false)
+    await page.keyboard.press('Escape')
+    await counts(page.getByRole('dialog'), 0)
+  })
+})
