@@ -1,10 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { checkRequest } from '~/utils/contracts/check'
 import { memberChange, signIn } from '~/utils/contracts/people'
-import { eventsQuery, newShot } from '~/utils/contracts/production'
+import { claim, eventsQuery, newShot } from '~/utils/contracts/production'
 import { newFlag } from '~/utils/contracts/take'
 import { plainIssues } from '~/utils/contracts/issues'
-import { claim } from '~/utils/contracts/production'
 
 const list = { law: 'topple', fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys: [1, 2, 3].map((frame) => ({ frame, reading: frame })) }
 const issuesOf = (change: object) => {
