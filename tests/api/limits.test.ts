@@ -54,9 +54,7 @@ describe('6.3.1, 6.1.1, 2.4.1: limits', () => {
     const strangers = await Promise.all(Array.from({ length: 12 }, () => tryIn(email, 'wrong every time', office)))
     expect(strangers.filter(({ status }) => status === 429)).toHaveLength(2)
     expect((await tryIn(email, password, office)).status).toBe(429)
-    const began = performance.now()
     expect((await tryIn(email, password, office, client)).status).toBe(200)
-    expect(performance.now() - began).toBeLessThan(1_000)
     // What it remembers is good for this account only.
     const other = await newColleague(keeper)
     await Promise.all(Array.from({ length: 10 }, () => tryIn(other.email, 'wrong every time', office)))
