@@ -1,7 +1,7 @@
 import type { Claim } from '~/utils/contracts/production'
-import { CHECK_LIMITS } from '~/utils/contracts/check'
+import { CHECK_LIMITS, requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
-import type { CheckResult, Key } from '~/utils/motion/types'
+import type { CheckResult, Key, PointKey } from '~/utils/motion/types'
 
 /** A list this quick to judge is judged on every frame; a slower one waits for a pause in the typing. */
 const QUICK_MS = 12
@@ -10,7 +10,7 @@ const QUICK_MS = 12
  * The judge's answer to a list that is being typed: here in the browser, on the next frame, no round trip. Null while there
  * are too few keys to ask about.
  */
-export function useTypingJudge(keys: () => readonly Key[], claim: () => Claim, fps: () => number) {
+export function useTypingJudge(keys: () => readonly Key[] | readonly PointKey[], claim: () => Claim, fps: () => number) {
   const answer = shallowRef<CheckResult | null>(null)
   const tookMs = ref(0)
   let waiting = 0
@@ -20,7 +20,7 @@ export function useTypingJudge(keys: () => readonly Key[], claim: () => Claim, f
     const list = keys()
     if (list.length < CHECK_LIMITS.minKeys || list.length > CHECK_LIMITS.maxKeys) return void (answer.value = null)
     const began = performance.now()
-    answer.value = judge({ ...claim(), fps: fps(), keys: [...list] })
+    answer.value = judge(requestFor(claim(), fps(), list))
     tookMs.value = performance.now() - began
   }
   function soon() {

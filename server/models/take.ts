@@ -2,7 +2,7 @@ import { DataTypes, Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
 import type { Claim } from '~/utils/contracts/production'
 import type { TakeSketch } from '~/utils/contracts/take'
-import type { CheckResult, Key } from '~/utils/motion/types'
+import type { CheckResult, Key, PointKey } from '~/utils/motion/types'
 import { jsonColumn } from './json'
 
 /** A numbered, immutable posting of a spacing list, with the answer that the judge gave it. */
@@ -11,8 +11,7 @@ export class Take extends Model<InferAttributes<Take>, InferCreationAttributes<T
   declare clientId: string
   declare shotId: string
   declare number: number
-  declare keys: Key[]
-  declare measure: Claim['measure']
+  declare keys: Key[] | PointKey[]
   declare unit: string
   declare slop: number
   declare tolerance: number
@@ -36,7 +35,6 @@ export function initTake(sequelize: Sequelize): void {
       shotId: { type: DataTypes.TEXT, allowNull: false },
       number: { type: DataTypes.INTEGER, allowNull: false },
       keys: jsonColumn('keys'),
-      measure: { type: DataTypes.TEXT, allowNull: false },
       unit: { type: DataTypes.TEXT, allowNull: false },
       slop: { type: DataTypes.REAL, allowNull: false },
       tolerance: { type: DataTypes.REAL, allowNull: false },

@@ -2,9 +2,10 @@ import { v7 as uuid } from 'uuid'
 import type { z } from 'zod'
 import { Take } from '~/server/models'
 import { row, rows } from '~/server/models/database'
-import { fail, notFound } from '~/server/utils/fail'
+import { fail, invalid, notFound } from '~/server/utils/fail'
 import { usedElsewhere } from '~/server/utils/made'
 import type { Made } from '~/server/utils/made'
+import { keysSuit, requestFor } from '~/utils/contracts/check'
 import { sameFinding } from '~/utils/contracts/take'
 import type { FindingName, Flag, newTake, Take as TakeWire, TakeLine, Waiver } from '~/utils/contracts/take'
 import { deskOf } from '~/utils/desk'
@@ -31,14 +32,15 @@ export async function postTake({ production, shot, person }: OnShot, body: z.inf
   if (deskOf(shot.createdAt, postings(lines)).desk === 'settled')
     fail(409, 'This shot is settled: a supervisor reopens it before another take is posted.')
   const number = (lines.at(-1)?.number ?? 0) + 1
-  const answer = judge({ ...claim, fps: shot.fps, keys: body.keys })
+  if (!keysSuit(claim, body.keys))
+    invalid('keys[0]', claim.measure === 'point' ? 'This shot is judged by points: every key has a frame, x and y.' : 'This shot is judged by readings: every key has a frame and a reading.')
+  const answer = judge(requestFor(claim, shot.fps, body.keys))
   const take = await Take.create({
     id: uuid(),
     clientId: body.clientId,
     shotId: shot.id,
     number,
     keys: body.keys,
-    measure: claim.measure,
     unit: claim.unit,
     slop: claim.slop,
     tolerance: claim.tolerance,

@@ -1,6 +1,6 @@
 /** The judge's score table and speed over freshly made lists. Bundle and run; no test runner needed. */
 import { judge } from '../../utils/motion'
-import type { CheckRequest } from '../../utils/motion'
+import type { ReadingCheck } from '../../utils/motion'
 import { makeLists } from './lists/make'
 import { scoreLists } from './judgeScore'
 import type { Score } from './judgeScore'
@@ -18,7 +18,7 @@ export interface JudgeBench {
 
 const percent = (part: number, whole: number) => `${(100 * part / Math.max(1, whole)).toFixed(1)} %`
 
-function longList(faulty: boolean): CheckRequest {
+function longList(faulty: boolean): ReadingCheck {
   // A pendulum over many swings, from the small-swing sum: what counts here is its length.
   const keys = Array.from({ length: 2000 }, (_, i) => {
     const shown = faulty && i >= 900 ? i - 1 : i

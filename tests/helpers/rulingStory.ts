@@ -96,7 +96,6 @@ export async function postTake(shot: Shot, by: Person, number: number, findings:
     shotId: shot.id,
     number,
     keys: [{ frame: 1001, reading: 0 }, { frame: 1003, reading: 1 }, { frame: 1005, reading: 4 }],
-    measure: 'angle',
     unit: 'deg',
     slop: 0.3,
     tolerance: 0.1,

@@ -5,6 +5,7 @@ import { takeNumber } from '~/server/services/events'
 import { makeSketch } from '~/server/services/sketch'
 import { write } from '~/server/models/database'
 import type { Claim, Decision } from '~/utils/contracts/production'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 import type { Key } from '~/utils/motion/types'
 import type { Role } from '~/utils/permissions'
@@ -110,7 +111,7 @@ export interface TakeWishes {
 /** A take judged by the real judge, put straight into the store. */
 export function addTake(shot: Shot, by: Person, { number = 1, keys = brokenFall(), withdrawn = false }: TakeWishes = {}): Promise<Take> {
   const claim = shot.claim ?? fallClaim
-  const answer = judge({ ...claim, fps: shot.fps, keys })
+  const answer = judge(requestFor(claim, shot.fps, keys))
   const at = now()
   return Take.create({
     id: uuid(),
@@ -118,7 +119,6 @@ export function addTake(shot: Shot, by: Person, { number = 1, keys = brokenFall(
     shotId: shot.id,
     number,
     keys,
-    measure: claim.measure,
     unit: claim.unit,
     slop: claim.slop,
     tolerance: claim.tolerance,

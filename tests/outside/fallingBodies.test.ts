@@ -1,7 +1,7 @@
 /** Falling: Galileo's own distances, and a free fall in inches. */
 import { describe, expect, it } from 'vitest'
 import { judge, plannedList } from '../../utils/motion'
-import type { CheckRequest } from '../../utils/motion'
+import type { ReadingCheck } from '../../utils/motion'
 
 /**
  * Folio 107v of Galileo's notes on motion: distances in points at equal times 1 to 8 of a ball on a grooved ramp.
@@ -9,7 +9,7 @@ import type { CheckRequest } from '../../utils/motion'
  */
 const FOLIO = [33, 130, 298, 526, 824, 1192, 1620, 2104]
 
-function folio(last: number): CheckRequest {
+function folio(last: number): ReadingCheck {
   const readings = [0, ...FOLIO.slice(0, -1), last]
   // Slop: Galileo read whole points off a ruler; two and a half allow for the groove. The mark of one time unit is not a frame, but
   // one frame a second makes it one.

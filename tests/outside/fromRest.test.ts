@@ -1,15 +1,15 @@
 /** A start from rest by school algebra: the sums of the odd numbers are the squares; half a frame later the gaps are the even ones. */
 import { describe, expect, it } from 'vitest'
 import { judge } from '../../utils/motion'
-import type { CheckRequest } from '../../utils/motion'
+import type { ReadingCheck } from '../../utils/motion'
 
-function fall(gaps: readonly number[], unit: number, more: Partial<CheckRequest> = {}): CheckRequest {
+function fall(gaps: readonly number[], unit: number, more: Partial<ReadingCheck> = {}): ReadingCheck {
   const every = 1
   let reading = 0
   const keys = [{ frame: 1, reading }, ...gaps.map((gap, i) => ({ frame: 1 + (i + 1) * every, reading: (reading += gap * unit) }))]
   return { law: 'odd-rule', fps: 24, measure: 'distance', unit: 'px', slop: 0.3, tolerance: 0.1, keys, start: 'rest', ...more }
 }
-const onTwos = (request: CheckRequest): CheckRequest => ({ ...request, keys: request.keys.map(({ frame, reading }) => ({ frame: 2 * frame - 1, reading })) })
+const onTwos = (request: ReadingCheck): ReadingCheck => ({ ...request, keys: request.keys.map(({ frame, reading }) => ({ frame: 2 * frame - 1, reading })) })
 
 const odd = (count: number) => Array.from({ length: count }, (_, i) => 2 * i + 1)
 const even = (count: number) => Array.from({ length: count }, (_, i) => 2 * i + 2)

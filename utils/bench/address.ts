@@ -1,8 +1,8 @@
 import { gravityNames } from '~/utils/bench/gravities'
-import { exposures, freshSetup, MOST_BESIDE, ranges, within } from '~/utils/bench/setup'
+import { benchLaws, exposures, freshSetup, MOST_BESIDE, ranges, within } from '~/utils/bench/setup'
 import type { BenchSetup, NumberField } from '~/utils/bench/setup'
 import { shapeFields, shapesFor, turns } from '~/utils/claiming/form'
-import { laws, rolls } from '~/utils/contracts/check'
+import { rolls } from '~/utils/contracts/check'
 
 /** The bench in the address bar: plain words and numbers, so that it can be read, sent and typed. */
 
@@ -37,7 +37,7 @@ function fieldsOf(setup: BenchSetup): NumberField[] {
 /** Reads an address. Whatever can't be read, or lies out of range, is as on a fresh bench. */
 export function readBench(query: Query): BenchSetup {
   const fresh = freshSetup()
-  const law = oneOf(laws, textIn(query, 'law'), fresh.law)
+  const law = oneOf(benchLaws, textIn(query, 'law'), fresh.law)
   const shapes = shapesFor[law]
   const setup: BenchSetup = {
     ...fresh,

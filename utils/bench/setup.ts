@@ -4,11 +4,11 @@ import { shapeFields, shapesFor, turns } from '~/utils/claiming/form'
 import type { SizeField } from '~/utils/claiming/form'
 import { CHECK_LIMITS } from '~/utils/contracts/check'
 import { namedSize } from '~/utils/motion'
-import type { BodySubject, Law, Roll, Shape } from '~/utils/motion/types'
+import type { BodySubject, Roll, Shape } from '~/utils/motion/types'
 
 /** What lies on the bench: whole numbers and metres, never half-typed text. The form keeps what is being typed to itself. */
 export interface BenchSetup extends Record<SizeField, number> {
-  law: Law
+  law: BenchLaw
   /** The body that turns; of no matter to what moves on a path. */
   body: Shape
   /** Degrees past balance, let go at rest. */
@@ -37,6 +37,9 @@ export interface BenchSetup extends Record<SizeField, number> {
   /** Named sizes, metres, that stand beside the planned one. */
   beside: number[]
 }
+
+export const benchLaws = ['odd-rule', 'topple', 'pendulum', 'steady'] as const
+export type BenchLaw = (typeof benchLaws)[number]
 
 export const exposures = [1, 2, 3, 4] as const
 /** Planned body and its neighbours: four are what a phone can still show side by side. */
@@ -76,7 +79,7 @@ export function freshSetup(): BenchSetup {
 }
 
 /** Another law takes another body where the old one can't do it: what swings hangs, what goes over stands. */
-export function withBenchLaw(setup: BenchSetup, law: Law): BenchSetup {
+export function withBenchLaw(setup: BenchSetup, law: BenchLaw): BenchSetup {
   const shapes = shapesFor[law]
   return { ...setup, law, body: turns(law) && !shapes.includes(setup.body) ? shapes[0]! : setup.body, beside: [] }
 }

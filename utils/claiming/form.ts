@@ -1,6 +1,7 @@
 import { plainIssues } from '~/utils/contracts/issues'
 import { claim as claimSchema } from '~/utils/contracts/production'
 import type { Claim } from '~/utils/contracts/production'
+import { MEASURES } from '~/utils/motion/laws/words'
 import { canRest } from '~/utils/motion/standstill'
 import type { Law, Measure, Roll, Shape, Subject } from '~/utils/motion/types'
 import { readNumber } from '~/utils/pasting'
@@ -42,21 +43,28 @@ export const shapeFields: Record<Shape, readonly SizeField[]> = {
 export const shapesFor: Record<Law, readonly Shape[]> = {
   topple: ['rod', 'block', 'cylinder', 'pole', 'custom'],
   pendulum: ['bob', 'hung-rod', 'custom'],
+  'over-edge': ['rod', 'block', 'cylinder', 'pole'],
+  'swing-decay': ['bob', 'hung-rod', 'custom'],
   'odd-rule': [],
+  'slow-in': [],
   steady: [],
+  spin: [],
+  bounce: [],
+  flight: [],
 }
-export const measuresFor: Record<Law, readonly Measure[]> = {
-  'odd-rule': ['distance', 'arc', 'angle'],
-  topple: ['angle', 'arc'],
-  pendulum: ['angle', 'arc'],
-  steady: ['distance', 'arc', 'angle'],
-}
+export { MEASURES as measuresFor } from '~/utils/motion/laws/words'
 
 export const lawSentences: Record<Law, string> = {
   'odd-rule': 'Falls, throws and ramps: gaps grow 1 : 3 : 5 : 7 from the apex.',
   topple: 'Stands, leans and goes over: hardly moves at first, then all at once. The taller, the slower.',
   pendulum: 'Swings from a pivot: slow in and slow out at the ends, fastest at the bottom.',
   steady: 'The same gap on every drawing: nothing pushes, nothing brakes.',
+  'slow-in': 'Slides or rolls to a stop: the odd rule backwards, with the stop in the list.',
+  'swing-decay': 'Swings that die away: every swing loses the same share of the one before.',
+  spin: 'Turns at a constant rate; readings may count on past a full turn or begin again.',
+  bounce: 'Drops and comes back: every bounce gives back the same share of the speed.',
+  flight: 'Thrown: steady sideways, odd rule downward, one gravity for both.',
+  'over-edge': 'Tips off a brink: turns on the arc, lets go, then flies and turns on evenly.',
 }
 export const shapeWords: Record<Shape, string> = {
   rod: 'Thin rod on its foot',
@@ -109,12 +117,14 @@ export function formOf(claim: Claim | null): ClaimForm {
 
 /** Another law keeps what still fits and drops what it can't take: a swing has no distance, a fall no block. */
 export function withLaw(form: ClaimForm, law: Law): ClaimForm {
-  const measure = measuresFor[law].includes(form.measure) ? form.measure : measuresFor[law][0]!
+  const measure = MEASURES[law].includes(form.measure) ? form.measure : MEASURES[law][0]!
   const body = form.body !== 'none' && !shapesFor[law].includes(form.body) ? 'none' : form.body
   return { ...form, law, measure, body }
 }
 
-export const turns = (law: Law) => law === 'topple' || law === 'pendulum'
+const turning: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay']
+/** Where a body turns about a pivot under gravity, and so has a size. */
+export const turns = (law: Law) => turning.includes(law)
 /** Where a drawing scale, a slope and a way of rolling mean something. */
 export const takesPath = (form: Pick<ClaimForm, 'law' | 'measure'>) => form.law === 'odd-rule' && form.measure !== 'angle'
 

@@ -1,15 +1,20 @@
 import { z } from 'zod'
+import { LAW_WORDS, MEASURES } from '../motion/laws/words'
 import { canRest } from '../motion/standstill'
-import type { CheckRequest, CheckResult, Subject } from '../motion/types'
+import type { CheckRequest, CheckResult, Key, Law, Measure, PathKind, Place, PointKey, Span, Subject, YAxis } from '../motion/types'
 import { frame, line } from './common'
 
 export type { CheckRequest, CheckResult, Subject }
 
 /** Bounds of what the judge takes: motion.md, "The check call". */
-export const CHECK_LIMITS = { minKeys: 3, maxKeys: 2_000, minFps: 1, maxFps: 240, maxReading: 1e6 } as const
+export const CHECK_LIMITS = { minKeys: 3, maxKeys: 2_000, minFps: 1, maxFps: 240, maxReading: 1e6, maxSpans: 4 } as const
 
-export const laws = ['odd-rule', 'topple', 'pendulum', 'steady'] as const
-export const measures = ['angle', 'distance', 'arc'] as const
+export const laws = [
+  'odd-rule', 'slow-in', 'steady', 'bounce', 'flight', 'topple', 'over-edge', 'pendulum', 'swing-decay', 'spin',
+] as const
+export const measures = ['angle', 'distance', 'arc', 'point'] as const
+export const pathKinds = ['line', 'circle', 'parabola'] as const
+export const yAxes = ['down', 'up'] as const
 export const starts = ['rest', 'any'] as const
 export const rolls = ['slide', 'ball', 'cylinder', 'shell', 'hoop'] as const
 
@@ -50,68 +55,151 @@ export const subject = z.discriminatedUnion('shape', [
   }),
 ]) as unknown as z.ZodType<Subject>
 
-export const keys = z
-  .array(z.strictObject({ frame, reading }))
-  .min(CHECK_LIMITS.minKeys, `A list has at least ${CHECK_LIMITS.minKeys} keys.`)
-  .max(CHECK_LIMITS.maxKeys, `A list has at most ${CHECK_LIMITS.maxKeys} keys.`)
+const coordinate = z
+  .number('A coordinate is a number.')
+  .min(-CHECK_LIMITS.maxReading, 'A coordinate lies within ±1,000,000.')
+  .max(CHECK_LIMITS.maxReading, 'A coordinate lies within ±1,000,000.')
+
+/** As many keys as a list may have, frames upwards. */
+const ordered = <Each extends z.ZodType<{ frame: number }>>(list: z.ZodArray<Each>) =>
+  list
+    .min(CHECK_LIMITS.minKeys, `A list has at least ${CHECK_LIMITS.minKeys} keys.`)
+    .max(CHECK_LIMITS.maxKeys, `A list has at most ${CHECK_LIMITS.maxKeys} keys.`)
+    .superRefine((entries, context) => {
+      for (let i = 1; i < entries.length; i++) {
+        const [before, here] = [entries[i - 1]!.frame, entries[i]!.frame]
+        if (here > before) continue
+        context.addIssue({
+          code: 'custom',
+          path: [i, 'frame'],
+          message: here === before ? `Frame ${here} stands twice.` : `Frame ${here} comes after frame ${before}: frames go upwards.`,
+        })
+      }
+    })
+
+export const keys = ordered(z.array(z.strictObject({ frame, reading })))
+
+/** Points as keys: drawing units from wherever the drawing counts them. */
+export const pointKeys = ordered(z.array(z.strictObject({ frame, x: coordinate, y: coordinate })))
+
+/** Either kind of list, told apart by its first key: the claim says later which one it wants. */
+export const anyKeys = z.unknown().transform((value, context): Key[] | PointKey[] => {
+  const first: unknown = Array.isArray(value) ? value[0] : undefined
+  const points = typeof first === 'object' && first !== null && ('x' in first || 'y' in first)
+  const read = (points ? pointKeys : keys).safeParse(value)
+  if (read.success) return read.data
+  for (const issue of read.error.issues) context.addIssue({ ...issue } as Parameters<typeof context.addIssue>[0])
+  return z.NEVER
+})
+
+const span = z.strictObject({
+  from: frame, to: frame, law, contact: z.boolean().optional(), start: z.enum(starts).optional(), subject: subject.optional(),
+})
+/** Two to four stretches, end to end. */
+export const spans = z
+  .array(span)
+  .min(2, 'One law needs no spans: at least two.')
+  .max(CHECK_LIMITS.maxSpans, `At most ${CHECK_LIMITS.maxSpans} spans.`)
   .superRefine((list, context) => {
-    for (let i = 1; i < list.length; i++) {
-      if (list[i]!.frame > list[i - 1]!.frame) continue
-      context.addIssue({
-        code: 'custom',
-        path: [i, 'frame'],
-        message:
-          list[i]!.frame === list[i - 1]!.frame
-            ? `Frame ${list[i]!.frame} stands twice.`
-            : `Frame ${list[i]!.frame} comes after frame ${list[i - 1]!.frame}: frames go upwards.`,
-      })
-    }
+    list.forEach(({ from, to }, i) => {
+      const before = list[i - 1]
+      if (to <= from) context.addIssue({ code: 'custom', path: [i, 'to'], message: 'The span ends before it begins.' })
+      if (before && before.to !== from)
+        context.addIssue({ code: 'custom', path: [i, 'from'], message: `A span begins where the one before it ends: at frame ${before.to}.` })
+    })
   })
 
-/** How readings are taken and how closely they are held: shared by a claim and a check. */
-export const readingRules = {
+/** How closely drawings are held, and what moves: shared by every claim and check. */
+const rules = {
   law,
-  measure,
   unit: line(16),
-  radius: z.number().positive().max(1e6).optional(),
-  zeroAt: z.number().min(-360).max(360).optional(),
   start: z.enum(starts).optional(),
   slop: z.number().min(0, 'Slop is zero or more.').max(1e6),
   tolerance: z.number().min(0).max(1, 'Tolerance is a share between 0 and 1.'),
   subject: subject.optional(),
 }
-
-interface Measured {
-  law: (typeof laws)[number]
-  measure: (typeof measures)[number]
-  radius?: number
-  start?: (typeof starts)[number]
-  subject?: z.infer<typeof subject>
+const ofReadings = {
+  ...rules,
+  measure: z.enum(['angle', 'distance', 'arc']),
+  radius: z.number().positive().max(1e6).optional(),
+  zeroAt: z.number().min(-360).max(360).optional(),
+}
+const ofPoints = {
+  ...rules,
+  measure: z.literal('point'),
+  yAxis: z.enum(yAxes).optional(),
+  path: z.enum(pathKinds).optional(),
+  pivot: z.strictObject({ x: coordinate, y: coordinate }).optional(),
 }
 
-/** A law that turns needs an angle; an arc needs its radius; a body that turns is no use to a distance; only what can rest starts from rest. */
-export function refineMeasure(value: Measured, context: z.RefinementCtx): void {
-  const turning = value.law === 'topple' || value.law === 'pendulum'
-  const refuse = (path: string[], message: string) => context.addIssue({ code: 'custom', path, message })
-  if (turning && value.measure === 'distance')
-    refuse(['measure'], `A ${value.law} is read as an angle, or as an arc with its radius.`)
+type Measured = Pick<CheckRequest, 'law' | 'measure' | 'start' | 'subject' | 'spans'> & { radius?: number; path?: string; pivot?: object }
+
+/** A law takes only some measures; an arc needs its radius; a body that turns is no use to a distance; only what can rest starts from rest. */
+function refineMeasure(value: Measured, context: z.RefinementCtx): void {
+  const refuse = (path: (string | number)[], message: string) => context.addIssue({ code: 'custom', path, message })
+  refineLaw(value, value.measure, refuse)
   if (value.measure === 'arc' && value.radius === undefined)
     refuse(['radius'], 'Readings along an arc need the radius of the arc.')
   if (value.measure !== 'arc' && value.radius !== undefined)
     refuse(['radius'], 'Only readings along an arc have a radius.')
-  if (value.start === 'rest' && !canRest(value.law))
-    refuse(['start'], 'Even spacing never stands still: it can’t start from rest.')
-  const body = value.subject
+  if (!Array.isArray(value.spans)) return
+  if (value.spans[0] && value.spans[0].law !== value.law) refuse(['law'], 'The law is that of the first span.')
+  value.spans.forEach((each, i) => refineLaw(each, value.measure, (path, message) => refuse(['spans', i, ...path], message)))
+}
+
+function refineLaw(
+  { law, start, subject: body }: Pick<Measured, 'law' | 'start' | 'subject'>, measure: Measure,
+  refuse: (path: (string | number)[], message: string) => void,
+): void {
+  const turning = turningLaws.includes(law)
+  if (!MEASURES[law].includes(measure)) refuse(['measure'], `${capital(LAW_WORDS[law])} is read as ${MEASURES[law].map(one => measureNames[one]).join(', or ')}.`)
+  if (start === 'rest' && !canRest(law)) refuse(['start'], `${capital(LAW_WORDS[law])} never stands still at its first key: it can’t start from rest.`)
   if (!body) return
-  if ('shape' in body && value.measure === 'distance')
-    refuse(['subject', 'shape'], 'Distances take a drawing scale or a slope, not a turning body.')
-  if (!('shape' in body) && turning && (body.unitsPerMetre !== undefined || body.roll !== undefined || body.slope !== undefined))
-    refuse(['subject'], `A ${value.law} takes a body: rod, block, cylinder, pole, bob, hung rod or an equal length.`)
+  if ('shape' in body && !turning) refuse(['subject', 'shape'], 'Distances take a drawing scale or a slope, not a turning body.')
+  if (!('shape' in body) && turning && (body.unitsPerMetre !== undefined || body.roll !== undefined || body.slope !== undefined) && measure !== 'point')
+    refuse(['subject'], `${capital(LAW_WORDS[law])} takes a body: rod, block, cylinder, pole, bob, hung rod or an equal length.`)
   if ('shape' in body && body.shape === 'pole' && body.headHeight > body.height * 2)
     refuse(['subject', 'headHeight'], 'The head sits on the pole, not far above it.')
 }
 
-export const checkRequest = z.strictObject({ fps, ...readingRules, keys }).superRefine(refineMeasure)
+const turningLaws: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
+const measureNames: Record<Measure, string> = { angle: 'an angle', distance: 'a distance', arc: 'an arc with its radius', point: 'points' }
+const capital = (words: string) => words[0]!.toUpperCase() + words.slice(1)
+
+/** What a shot claims: a check without its list and rate. Radius and zeroAt belong to readings; yAxis, path and pivot to points. */
+export interface Claim extends Pick<CheckRequest, 'law' | 'unit' | 'slop' | 'tolerance' | 'start' | 'subject'> {
+  measure: Measure
+  radius?: number
+  zeroAt?: number
+  yAxis?: YAxis
+  path?: PathKind
+  pivot?: Place
+  spans?: Span[]
+}
+
+export const claim = z
+  .discriminatedUnion('measure', [
+    z.strictObject({ ...ofReadings, spans: spans.optional() }),
+    z.strictObject({ ...ofPoints, spans: spans.optional() }),
+  ])
+  .superRefine(refineMeasure) as unknown as z.ZodType<Claim>
+
+/** True where the list is of the kind that the claim judges. */
+export const keysSuit = (claim: Pick<Claim, 'measure'>, list: readonly (Key | PointKey)[]) =>
+  (claim.measure === 'point') === (list[0] !== undefined && 'x' in list[0])
+
+/** A claim with a list of its own kind (see `keysSuit`), as the judge takes it. */
+export const requestFor = (claim: Claim, fps: number, list: readonly Key[] | readonly PointKey[]) =>
+  ({ ...claim, fps, keys: [...list] }) as CheckRequest
+
+
+const checkSpans = z.union([z.literal('find'), spans]).optional()
+export const checkRequest = z
+  .discriminatedUnion('measure', [
+    z.strictObject({ fps, ...ofReadings, spans: checkSpans, keys }),
+    z.strictObject({ fps, ...ofPoints, spans: checkSpans, keys: pointKeys }),
+  ])
+  .superRefine(refineMeasure)
 /** Keeps the schema and the judge's own types from drifting apart: fails to compile when they do. */
 type Agrees<A extends B, B> = A
 export type CheckBody = Agrees<z.infer<typeof checkRequest>, CheckRequest>

@@ -1,5 +1,6 @@
 import { z } from 'zod'
-import { fps, readingRules, refineMeasure } from './check'
+import { claim, fps } from './check'
+import type { Claim } from './check'
 import { clientId, day, frame, line, LIMITS, prose, sequenceCode, serverId, shotCode, slug, version } from './common'
 import type { Day, Time } from './common'
 import type { PersonName } from './people'
@@ -14,8 +15,8 @@ export const decisions = ['stands', 'stands-with-notes', 'goes-back'] as const
 export type Decision = (typeof decisions)[number]
 
 /** What the shot says it shows: motion.md. The unit of slop is the unit of the readings. */
-export const claim = z.strictObject(readingRules).superRefine(refineMeasure)
-export type Claim = z.infer<typeof claim>
+export { claim }
+export type { Claim }
 
 export const productionParams = z.strictObject({ production: slug })
 export const shotParams = z.strictObject({ production: slug, code: shotCode })

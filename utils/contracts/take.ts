@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import type { CheckResult } from './check'
-import { keys } from './check'
+import { anyKeys } from './check'
 import { clientId, frame, line, LIMITS, prose, serverId, shotCode, slug, version } from './common'
 import type { Time } from './common'
 import type { PersonName } from './people'
@@ -15,9 +15,12 @@ export const flagParams = z.strictObject({ ...takeParams.shape, flag: serverId }
 export const waiverParams = z.strictObject({ ...takeParams.shape, waiver: serverId })
 
 /** A posting: the list itself. Law, measure, unit, slop and tolerance come from the shot's claim. */
-export const newTake = z.strictObject({ clientId, keys, note: prose(LIMITS.noteChars).default('') })
+export const newTake = z.strictObject({ clientId, keys: anyKeys, note: prose(LIMITS.noteChars).default('') })
 
-export const findingKinds = ['misplaced', 'held', 'skipped', 'wrong-law', 'wrong-scale', 'not-at-rest', 'backward'] as const
+export const findingKinds = [
+  'misplaced', 'held', 'skipped', 'wrong-law', 'wrong-scale', 'not-at-rest', 'backward',
+  'broken-joint', 'off-path', 'wrong-release',
+] as const
 export type FindingKind = (typeof findingKinds)[number]
 /** Which finding of the judge's answer is meant: its kind and the frames it names. */
 const findingName = z.strictObject({ kind: z.enum(findingKinds), frames: z.array(frame).max(2_000) })

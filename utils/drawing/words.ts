@@ -9,8 +9,14 @@ export const lawWords: Record<Law, string> = {
   topple: 'topple',
   pendulum: 'pendulum',
   steady: 'steady',
+  'slow-in': 'slow in',
+  'swing-decay': 'dying swing',
+  spin: 'spin',
+  bounce: 'bounce',
+  flight: 'flight',
+  'over-edge': 'over the edge',
 }
-export const measureWords: Record<Measure, string> = { angle: 'angle', distance: 'distance', arc: 'along the arc' }
+export const measureWords: Record<Measure, string> = { angle: 'angle', distance: 'distance', arc: 'along the arc', point: 'points' }
 export const decisionWords: Record<Decision, string> = {
   stands: 'Stands',
   'stands-with-notes': 'Stands with notes',
@@ -218,6 +224,9 @@ export const findingWords: Record<FindingKind, string> = {
   'wrong-law': 'another law',
   'wrong-scale': 'another size',
   'not-at-rest': 'not at rest',
+  'broken-joint': 'broken joint',
+  'off-path': 'off the path',
+  'wrong-release': 'lets go wrongly',
 }
 
 /** "2.7 frames early", "on the line"; empty where the law stands still. */

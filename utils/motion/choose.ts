@@ -7,7 +7,7 @@ import { LAWS } from './laws/index'
 import { shiftedTimes } from './scan'
 import type { Series } from './series'
 import type { Scale } from './size'
-import type { Law } from './types'
+import type { Law, ReadingLaw } from './types'
 
 /** What one drawing can cost a law at most, nats: beyond this it counts as a lone bad drawing, not as evidence against the law. */
 const MOST_PER_DRAWING = 7
@@ -97,7 +97,7 @@ export interface Choice {
 }
 
 /** Fits every law that the measure can take and picks the claimed law's story. */
-export function weigh(series: Series, law: Law, laws: readonly Law[], told: readonly Story[], care: Care): Choice {
+export function weigh(series: Series, law: ReadingLaw, laws: readonly ReadingLaw[], told: readonly Story[], care: Care): Choice {
   const others = laws.filter(other => other !== law).map((other) => {
     const { fit } = plainFit(series, LAWS[other], care, PASSING)
     return { law: other, story: { out: [], shift: null, fit, breaking: 0 } satisfies Story }

@@ -92,7 +92,9 @@ function placesFor(width: number): number {
 
 /** What was found about the whole list comes first, then in order of how far off. */
 export function inOrder(findings: Finding[], keys: readonly JudgedKey[]): Finding[] {
-  const rank: Record<Finding['kind'], number> = { 'wrong-law': 0, 'not-at-rest': 1, 'held': 2, 'skipped': 2, 'wrong-scale': 3, 'backward': 4, 'misplaced': 5 }
+  const rank: Record<Finding['kind'], number> = {
+    'wrong-law': 0, 'broken-joint': 0, 'wrong-release': 0, 'not-at-rest': 1, 'held': 2, 'skipped': 2, 'wrong-scale': 3, 'backward': 4, 'off-path': 5, 'misplaced': 5,
+  }
   const strain = (finding: Finding) => {
     const key = keys.find(one => one.frame === finding.frames[0])
     return key?.offset === null || key?.offset === undefined || !key.allowance ? 0 : Math.abs(key.offset) / key.allowance

@@ -1,6 +1,6 @@
 /** The judge and what the screens need around it. */
 export { judge, judgeInDepth } from './judge'
-export type { Judgement } from './judge'
+export type { Judgement } from './readings'
 export { lawCurve } from './line'
 export type { Line } from './line'
 export { canRest } from './standstill'
@@ -8,7 +8,7 @@ export { allowanceAt, allowances } from './allowance'
 export {
   STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
 } from './bodies'
-export { LAW_WORDS, lawsFor } from './laws/index'
+export { LAW_WORDS, MEASURES, lawsFor } from './laws/index'
 export { edgeRatio, leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
 export { framesFor, plannedList, secondsFor } from './plan'
 export type { Plan, PlannedList } from './plan'

@@ -3,10 +3,10 @@ import { LAWS } from './laws/index'
 import type { Trace } from './laws/model'
 import { seriesOf } from './series'
 import type { Series } from './series'
-import type { CheckRequest, Key, Law } from './types'
+import type { ReadingCheck, Key, ReadingLaw } from './types'
 
 export interface Line {
-  law: Law
+  law: ReadingLaw
   /** The law's free numbers over the list's span (see the law's own file). */
   numbers: number[]
   /** Spans by which the line runs behind the numbers' own clock: not 0 where most of a list is one exposure late or early. */
@@ -22,7 +22,7 @@ export function traceLine(series: Series, line: Line, x: Float64Array, rate = 1)
  * The law's reading at each of `frames` (whole or not, inside the list or beyond it), reading units.
  * `rate` > 1 runs the same motion faster; the claim's own size runs at `paceOfClaim`. Empty for fewer than two keys.
  */
-export function lawCurve(line: Line, request: CheckRequest, frames: readonly number[], rate = 1): number[] {
+export function lawCurve(line: Line, request: ReadingCheck, frames: readonly number[], rate = 1): number[] {
   const series = seriesOf(request)
   const first = request.keys[0]
   if (!first || series.spanFrames === 0) return []
@@ -31,7 +31,7 @@ export function lawCurve(line: Line, request: CheckRequest, frames: readonly num
 }
 
 /** The line's readings on the list's own frames. */
-export function ruledList(series: Series, line: Line, request: CheckRequest, rate = 1): Key[] {
+export function ruledList(series: Series, line: Line, request: ReadingCheck, rate = 1): Key[] {
   const { value } = traceLine(series, line, series.x, rate)
   return request.keys.map((key, i) => ({ frame: key.frame, reading: value[i] as number }))
 }

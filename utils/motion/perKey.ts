@@ -2,27 +2,27 @@
 import { allowanceAt, allowances } from './allowance'
 import type { Trace } from './laws/model'
 import type { Series } from './series'
-import type { CheckRequest, JudgedKey } from './types'
+import type { ReadingCheck, JudgedKey } from './types'
 
 /** Where the law's gap is below this share of the slop it stands still for the eye, and an offset is worth no number of frames. */
 const STILL = 0.25
 
 /** Keys as posted, nothing judged: for lists that no law can be held against. */
-export function unjudged(request: CheckRequest): JudgedKey[] {
+export function unjudged(request: ReadingCheck): JudgedKey[] {
   return request.keys.map((key, i) => ({
     frame: key.frame, reading: key.reading, law: null, offset: null, offsetFrames: null,
     gap: gapAfter(request, i), lawGap: null, allowance: null, breaks: false,
   }))
 }
 
-function gapAfter(request: CheckRequest, i: number): number | null {
+function gapAfter(request: ReadingCheck, i: number): number | null {
   const here = request.keys[i]
   const next = request.keys[i + 1]
   return here && next ? next.reading - here.reading : null
 }
 
 /** `trace` holds the line at the list's own keys. */
-export function judgeKeys(request: CheckRequest, series: Series, trace: Trace): JudgedKey[] {
+export function judgeKeys(request: ReadingCheck, series: Series, trace: Trace): JudgedKey[] {
   const allowed = allowances(trace.value, request.slop, request.tolerance)
   return request.keys.map((key, i) => {
     const law = trace.value[i] as number

@@ -4,18 +4,18 @@ import { RADIAN } from './series'
 import type { Series } from './series'
 import { freeSwing } from './swing'
 import { paceOf } from './times'
-import type { CheckRequest, Key } from './types'
+import type { ReadingCheck, Key } from './types'
 
 /**
  * The claimed body from rest at the first posted reading, on the list's own frames, in reading units. Null where the claim
  * names no size, or where nothing would start by itself (balance, hanging rest, a steady move).
  */
-export function ruledFromRest(request: CheckRequest, series: Series): Key[] | null {
+export function ruledFromRest(request: ReadingCheck, series: Series): Key[] | null {
   const readings = claimedReadings(request, series)
   return readings && request.keys.map((key, i) => ({ frame: key.frame, reading: readings[i] as number }))
 }
 
-function claimedReadings({ law, subject }: CheckRequest, series: Series): Float64Array | null {
+function claimedReadings({ law, subject }: ReadingCheck, series: Series): Float64Array | null {
   if (!subject || law === 'steady') return null
   const { y, n } = series
   const first = y[0] as number

@@ -1,5 +1,5 @@
 /** A posted list in the judge's own measures: time runs from 0 at the first key to 1 at the last, readings stay in drawing units. */
-import type { CheckRequest } from './types'
+import type { ReadingCheck } from './types'
 
 export const RADIAN = Math.PI / 180
 
@@ -20,7 +20,7 @@ export interface Series {
 }
 
 /** Takes a request apart. Keys need at least two entries; radius must be given for an arc. */
-export function seriesOf(request: CheckRequest): Series {
+export function seriesOf(request: ReadingCheck): Series {
   const { keys } = request
   const first = keys[0]?.frame ?? 0
   const spanFrames = (keys[keys.length - 1]?.frame ?? first) - first

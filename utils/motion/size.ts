@@ -6,7 +6,7 @@ import { accelerationOf } from './laws/oddRule'
 import type { Series } from './series'
 import { inverseRow } from './solve'
 import { student95 } from './student'
-import type { BodySubject, CheckRequest, PathSubject, SizeReading } from './types'
+import type { BodySubject, ReadingCheck, PathSubject, SizeReading } from './types'
 
 export interface Scale {
   size: SizeReading | null
@@ -40,13 +40,13 @@ function standardError(fit: Fit, index: number, kept: number, least: number): { 
 }
 
 /** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
-export function scaleOf(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+export function scaleOf(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
   if (request.law === 'topple' || request.law === 'pendulum') return bodyScale(request, series, fit, kept, least)
   if (request.law === 'odd-rule' && request.measure !== 'angle') return pathScale(request, series, fit, kept, least)
   return NOTHING
 }
 
-function bodyScale(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
   const { subject } = request
   const claimed = subject && isBody(subject) ? subject : null
   // With no body named, a topple is read as a rod on its foot and a swing as a bob on a cord: the plainest of either.
@@ -67,7 +67,7 @@ function bodyScale(request: CheckRequest, series: Series, fit: Fit, kept: number
   }
 }
 
-function pathScale(request: CheckRequest, series: Series, fit: Fit, kept: number, least: number): Scale {
+function pathScale(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
   const path: PathSubject = request.subject && !isBody(request.subject) ? request.subject : { gravity: gravityOf(request.subject) }
   const a = Math.abs(accelerationOf(fullNumbers(fit.model, fit.numbers), series.span))
   // The acceleration is the last free number, whether the fall starts from rest or not.

@@ -1,7 +1,7 @@
-import { CHECK_LIMITS } from '~/utils/contracts/check'
+import { CHECK_LIMITS, requestFor } from '~/utils/contracts/check'
 import type { Claim } from '~/utils/contracts/production'
 import { judgeInDepth, lawCurve } from '~/utils/motion'
-import type { Key } from '~/utils/motion/types'
+import type { Key, ReadingCheck } from '~/utils/motion/types'
 
 /**
  * The same motion at the claim's own size, over as many frames as that size needs and at the list's own exposure: on the
@@ -10,7 +10,7 @@ import type { Key } from '~/utils/motion/types'
  * @returns readings in the claim's unit; null where the claim names no size, or the list would get longer than a list may be
  */
 export function claimedList(claim: Claim, fps: number, keys: readonly Key[]): Key[] | null {
-  const request = { ...claim, fps, keys: [...keys] }
+  const request = requestFor(claim, fps, keys) as ReadingCheck
   const { line, pace, result } = judgeInDepth(request)
   const first = keys[0]?.frame
   if (!line || pace === null || !result.claim || first === undefined) return null

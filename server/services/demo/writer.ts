@@ -7,6 +7,7 @@ import { makeSketch } from '~/server/services/sketch'
 import { JUDGE_VERSION } from '~/server/services/takes'
 import type { EventKind } from '~/utils/contracts/event'
 import type { Claim } from '~/utils/contracts/production'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 import type { DemoShot, DemoTake, DemoThread } from './shots'
 
@@ -61,12 +62,12 @@ export class DemoWriter {
   private async take(shot: Shot, demo: DemoTake, number: number): Promise<Take> {
     if (!shot.claim) throw new Error(`The demo's ${shot.code} has a take and no claim.`)
     const claim: Claim = shot.claim
-    const answer = judge({ ...claim, fps: shot.fps, keys: demo.keys })
+    const answer = judge(requestFor(claim, shot.fps, demo.keys))
     const createdAt = daysFromNow(-demo.daysAgo)
     const personId = this.person(demo.by)
-    const { measure, unit, slop, tolerance } = claim
+    const { unit, slop, tolerance } = claim
     const take = await Take.create({
-      id: uuid(), clientId: uuid(), shotId: shot.id, number, keys: demo.keys, measure, unit, slop, tolerance, fps: shot.fps, claim,
+      id: uuid(), clientId: uuid(), shotId: shot.id, number, keys: demo.keys, unit, slop, tolerance, fps: shot.fps, claim,
       note: demo.note ?? '', personId, createdAt, answer, verdict: answer.verdict, judgeVersion: JUDGE_VERSION,
       sketch: makeSketch(number, answer, claim), withdrawnAt: demo.takenBack ? daysFromNow(0.02 - demo.daysAgo) : null,
     })

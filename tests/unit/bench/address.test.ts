@@ -2,8 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { readBench, sameBench, writeBench } from '~/utils/bench/address'
 import { gravityNames } from '~/utils/bench/gravities'
-import { exposures, freshSetup, ranges, withBenchLaw } from '~/utils/bench/setup'
-import { laws, rolls } from '~/utils/contracts/check'
+import { benchLaws, exposures, freshSetup, ranges, withBenchLaw } from '~/utils/bench/setup'
+import { rolls } from '~/utils/contracts/check'
 import { shapesFor, turns } from '~/utils/claiming/form'
 
 describe('the address of a bench', () => {
@@ -34,7 +34,7 @@ describe('the address of a bench', () => {
       fc.double({ min: ranges[field].low, max: ranges[field].high, noNaN: true }).map((value) => Math.max(ranges[field].low, Number(value.toPrecision(6))))
     const setups = fc
       .record({
-        law: fc.constantFrom(...laws), shape: fc.nat(), roll: fc.constantFrom(...rolls), gravity: fc.constantFrom(...gravityNames), on: fc.constantFrom(...exposures),
+        law: fc.constantFrom(...benchLaws), shape: fc.nat(), roll: fc.constantFrom(...rolls), gravity: fc.constantFrom(...gravityNames), on: fc.constantFrom(...exposures),
         height: number('height'), width: number('width'), lean: number('lean'), amplitude: number('amplitude'), way: number('way'), slope: number('slope'),
         speed: number('speed'), scale: number('scale'), ownGravity: number('ownGravity'), fps: number('fps'),
         have: fc.option(fc.integer({ min: 1, max: 5000 })), beside: fc.uniqueArray(fc.integer({ min: 1, max: 1000 }), { maxLength: 3 }),

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { comparedIn, claimIn, flatAngle, listIn, motionIn, outcomeIn, pencilStep, planKeysIn, problemIn, sizeForFrames } from '~/utils/bench/planning'
 import { atSize, freshSetup, sizeIn } from '~/utils/bench/setup'
 import type { BenchSetup } from '~/utils/bench/setup'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 
 const bench = (part: Partial<BenchSetup>): BenchSetup => ({ ...freshSetup(), ...part })
@@ -83,7 +84,7 @@ describe('frames → size', () => {
 describe('the list', () => {
   it('holds before the judge, and reads as the planned size', () => {
     const setup = bench({ body: 'block', width: 6, height: 38, lean: 1.5 })
-    const answer = judge({ ...claimIn(setup), fps: setup.fps, keys: listIn(setup) })
+    const answer = judge(requestFor(claimIn(setup), setup.fps, listIn(setup)))
     expect(answer.verdict).toBe('holds')
     expect(answer.size!.low).toBeLessThan(38)
     expect(answer.size!.high).toBeGreaterThan(38)

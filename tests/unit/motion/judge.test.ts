@@ -1,15 +1,15 @@
 /** The judge's own sentences and edges, on lists small enough to follow by eye. */
 import { describe, expect, it } from 'vitest'
 import { judge, judgeInDepth, lawCurve, plannedList } from '../../../utils/motion'
-import type { CheckRequest, Key } from '../../../utils/motion'
+import type { ReadingCheck, Key } from '../../../utils/motion'
 
 /** A rod of 8 m from 5°, on twos, to tenths of a degree: 42 frames to flat. */
-function tower(change: (keys: Key[]) => Key[] = keys => keys, more: Partial<CheckRequest> = {}): CheckRequest {
+function tower(change: (keys: Key[]) => Key[] = keys => keys, more: Partial<ReadingCheck> = {}): ReadingCheck {
   const { keys } = plannedList({ law: 'topple', subject: { shape: 'rod', height: 8 }, lean: 5, fps: 24, exposure: 2, firstFrame: 1001, step: 0.1 })
   return { law: 'topple', fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys: change(keys), ...more }
 }
 
-function drop(change: (keys: Key[]) => Key[] = keys => keys, more: Partial<CheckRequest> = {}): CheckRequest {
+function drop(change: (keys: Key[]) => Key[] = keys => keys, more: Partial<ReadingCheck> = {}): ReadingCheck {
   const { keys } = plannedList({ law: 'odd-rule', subject: { unitsPerMetre: 80 }, travel: 400, fps: 24, exposure: 1, firstFrame: 1, step: 0.5 })
   return { law: 'odd-rule', fps: 24, measure: 'distance', unit: 'px', slop: 1, tolerance: 0.1, keys: change(keys), ...more }
 }

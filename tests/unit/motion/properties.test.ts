@@ -2,7 +2,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { judge, judgeInDepth, lawCurve, lawsFor } from '../../../utils/motion'
-import type { CheckRequest, CheckResult, Key, Law, Measure } from '../../../utils/motion'
+import type { CheckResult, Key, Law, ReadingCheck } from '../../../utils/motion'
 
 const RUNS = { numRuns: 150, seed: 4711 }
 
@@ -36,8 +36,8 @@ const likely = fc.tuple(gaps, fc.constantFrom('parabola', 'wave', 'growth', 'lin
     })
   })
 
-const requests: fc.Arbitrary<CheckRequest> = fc.record({
-  measure: fc.constantFrom<Measure>('angle', 'distance', 'arc'),
+const requests: fc.Arbitrary<ReadingCheck> = fc.record({
+  measure: fc.constantFrom<ReadingCheck['measure']>('angle', 'distance', 'arc'),
   fps: fc.constantFrom(1, 12, 23.976, 24, 60, 240),
   slop: fc.constantFrom(0, 0.3, 1, 50),
   tolerance: fc.constantFrom(0, 0.1, 0.5),
@@ -49,7 +49,7 @@ const requests: fc.Arbitrary<CheckRequest> = fc.record({
 }).map(({ measure, which, radius, body, zeroAt, ...rest }) => {
   const laws = lawsFor(measure)
   const law = laws[which % laws.length] as Law
-  const request: CheckRequest = { ...rest, law, measure, unit: measure === 'angle' ? 'deg' : 'px' }
+  const request: ReadingCheck = { ...rest, law, measure, unit: measure === 'angle' ? 'deg' : 'px' }
   if (zeroAt !== undefined) request.zeroAt = zeroAt
   if (measure === 'arc') request.radius = radius
   if (body) request.subject = law === 'odd-rule' ? { unitsPerMetre: 80 } : { shape: 'rod', height: 2 }
@@ -132,7 +132,7 @@ describe('every answer', () => {
 
   it('is the same for a motion and its mirror image', () => {
     fc.assert(fc.property(likely, fc.constantFrom<Law>('odd-rule', 'pendulum', 'steady', 'topple'), (keys, law) => {
-      const request: CheckRequest = { law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys }
+      const request: ReadingCheck = { law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys }
       const mirrored = { ...request, keys: keys.map(key => ({ ...key, reading: -key.reading })) }
       expect(outline(judge(mirrored))).toEqual(outline(judge(request)))
     }), RUNS)
@@ -140,7 +140,7 @@ describe('every answer', () => {
 
   it('never breaks fewer keys under less tolerance where the line stays', () => {
     fc.assert(fc.property(likely, fc.constantFrom(0.3, 1, 2), (keys, slop) => {
-      const request: CheckRequest = { law: 'steady', fps: 24, measure: 'distance', unit: 'px', slop, tolerance: 0.2, keys }
+      const request: ReadingCheck = { law: 'steady', fps: 24, measure: 'distance', unit: 'px', slop, tolerance: 0.2, keys }
       const loose = judge(request)
       const tight = judge({ ...request, tolerance: 0.1 })
       const count = (result: CheckResult) => result.keys.filter(key => key.breaks).length

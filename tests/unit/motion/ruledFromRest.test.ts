@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { judge } from '../../../utils/motion'
-import type { CheckRequest } from '../../../utils/motion'
+import type { ReadingCheck } from '../../../utils/motion'
 
 const even = (count: number, gap: number, from = 0) => Array.from({ length: count }, (_, i) => ({ frame: 1 + i, reading: from + i * gap }))
-const drop: CheckRequest = {
+const drop: ReadingCheck = {
   law: 'odd-rule', fps: 24, measure: 'distance', unit: 'px', slop: 1, tolerance: 0.08, keys: even(16, 26), subject: { unitsPerMetre: 80, slope: 90 },
 }
 
@@ -23,7 +23,7 @@ describe('a list under another law is ruled by the claim’s own size, from rest
   })
 
   it('topples from the first lean at the claimed height, and says nothing from perfect balance or without a size', () => {
-    const rod: CheckRequest = { ...drop, law: 'topple', measure: 'angle', unit: 'deg', slop: 0.3, keys: even(20, 4, 5), subject: { shape: 'rod', height: 1 } }
+    const rod: ReadingCheck = { ...drop, law: 'topple', measure: 'angle', unit: 'deg', slop: 0.3, keys: even(20, 4, 5), subject: { shape: 'rod', height: 1 } }
     const { findings, ruled } = judge(rod)
     expect(findings.map(({ kind }) => kind)).toEqual(['wrong-law'])
     // motion.md's table: a 1 m rod takes 0.948478638 s from 5° to flat, so frame 1 + 24·0.9485 = 23.8; at frame 20 it is on its way.

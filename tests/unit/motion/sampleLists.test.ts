@@ -5,11 +5,11 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 import { judge } from '../../../utils/motion'
-import type { CheckRequest } from '../../../utils/motion'
+import type { ReadingCheck } from '../../../utils/motion'
 
 interface SampleList {
   id: string
-  request: CheckRequest
+  request: ReadingCheck
   truth: { kind: string, frames: number[], size?: number, reads?: string | null }
 }
 

@@ -2,7 +2,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { judge, judgeInDepth, lawCurve } from '../../../utils/motion'
-import type { CheckRequest, CheckResult, Law } from '../../../utils/motion'
+import type { ReadingCheck, CheckResult, Law } from '../../../utils/motion'
 import { GRAVITY, swung } from '../../bench/lists/motion'
 import { startLists } from './startLists'
 import type { StartList } from './startLists'
@@ -10,7 +10,7 @@ import type { StartList } from './startLists'
 const DEGREE = 180 / Math.PI
 
 /** A body of equal-pendulum length 2 m on ones, to hundredths of a degree. */
-function turning(law: 'topple' | 'pendulum', from: number, turn: number, frames: number): CheckRequest {
+function turning(law: 'topple' | 'pendulum', from: number, turn: number, frames: number): ReadingCheck {
   const angles = swung(law === 'topple' ? 1 : -1, GRAVITY / 2, from / DEGREE, turn / DEGREE, 24, frames)
   return {
     law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.1, tolerance: 0.05, start: 'rest',
@@ -19,7 +19,7 @@ function turning(law: 'topple' | 'pendulum', from: number, turn: number, frames:
 }
 
 const kinds = ({ findings }: CheckResult) => findings.map(({ kind }) => kind)
-const claimed = ({ before: _, ...request }: StartList): CheckRequest => request
+const claimed = ({ before: _, ...request }: StartList): ReadingCheck => request
 
 describe('turning bodies', () => {
   it.each([['topple', 6, 24], ['pendulum', 40, 50], ['pendulum', -40, 50]] as const)('a %s let go at %d° holds, from rest', (law, from, frames) => {
@@ -102,7 +102,7 @@ describe('any start', () => {
 
   it('answers as if nothing had been said of it', () => {
     fc.assert(fc.property(fc.oneof(readings, smooth), fc.constantFrom<Law>('odd-rule', 'topple', 'pendulum', 'steady'), (list, law) => {
-      const request: CheckRequest = {
+      const request: ReadingCheck = {
         law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys: list.map((reading, frame) => ({ frame, reading })),
       }
       expect(JSON.stringify(judge({ ...request, start: 'any' }))).toBe(JSON.stringify(judge(request)))
@@ -111,7 +111,7 @@ describe('any start', () => {
 
   it('a start from rest never answers NaN, and the line drawn is the line judged by', () => {
     fc.assert(fc.property(fc.oneof(readings, smooth), fc.constantFrom<Law>('odd-rule', 'topple', 'pendulum'), (list, law) => {
-      const request: CheckRequest = {
+      const request: ReadingCheck = {
         law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, start: 'rest', keys: list.map((reading, frame) => ({ frame, reading })),
       }
       const { line, result } = judgeInDepth(request)

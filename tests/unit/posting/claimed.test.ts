@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { Claim } from '~/utils/contracts/production'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 import { claimedList } from '~/utils/posting/claimed'
 
@@ -25,7 +26,7 @@ describe('the claim’s own size over the frames that it needs', () => {
     expect(Math.abs(list.at(-1)!.reading - posted.at(-1)!.reading)).toBeLessThan(1.5)
   })
   it('holds when it is posted', () => {
-    const answer = judge({ ...claim, fps, keys: list })
+    const answer = judge(requestFor(claim, fps, list))
     expect(answer.findings).toEqual([])
     expect(answer.verdict).toBe('holds')
   })

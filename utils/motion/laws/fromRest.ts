@@ -3,7 +3,7 @@
  * (`full`), so that a line that starts from rest is kept, sent and drawn like any other.
  */
 import type { Series } from '../series'
-import type { Law } from '../types'
+import type { RestingLaw } from '../standstill'
 import type { LawModel, Trace } from './model'
 import { oddRule } from './oddRule'
 import { beginSwing, traceSwing } from './swinging'
@@ -40,7 +40,7 @@ function swingFromRest(law: 'topple' | 'pendulum', near: Float64Array): LawModel
 }
 
 /** The law as it starts from rest at the first key. `near`: the free law's fit. */
-export function fromRest(law: Exclude<Law, 'steady'>, near: Float64Array): LawModel {
+export function fromRest(law: RestingLaw, near: Float64Array): LawModel {
   return law === 'odd-rule' ? fallFromRest : swingFromRest(law, near)
 }
 

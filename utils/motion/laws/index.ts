@@ -1,19 +1,20 @@
 /** The laws by name, and which of them a measure can take. */
-import type { Law, Measure } from '../types'
+import type { Measure, ReadingLaw } from '../types'
 import type { LawModel } from './model'
 import { oddRule } from './oddRule'
 import { pendulum } from './pendulum'
 import { steady } from './steady'
 import { topple } from './topple'
 
-export const LAWS: Record<Law, LawModel> = { 'odd-rule': oddRule, topple, pendulum, steady }
+export { LAW_WORDS, MEASURES } from './words'
 
-/** In the trade's words, as they read after "as". */
-export const LAW_WORDS: Record<Law, string> = {
-  'odd-rule': 'the odd rule', 'topple': 'a topple', 'pendulum': 'a pendulum', 'steady': 'even spacing',
+export const LAWS: Record<ReadingLaw, LawModel> = {
+  'odd-rule': oddRule, topple, pendulum, steady,
+  // To come: until then these are told as their nearest kin.
+  'slow-in': oddRule, 'swing-decay': pendulum, 'spin': steady, 'bounce': oddRule, 'over-edge': topple,
 }
 
-/** A turn about a pivot needs an angle to be read; a straight distance has none. */
-export function lawsFor(measure: Measure): Law[] {
+/** The laws that a list of such readings is always held against. */
+export function lawsFor(measure: Measure): ReadingLaw[] {
   return measure === 'distance' ? ['odd-rule', 'steady'] : ['odd-rule', 'topple', 'pendulum', 'steady']
 }

@@ -1,6 +1,6 @@
 /** What every law offers to the fit: a line over time, its speed, and how it bends when its free numbers move. */
 import type { Series } from '../series'
-import type { Law } from '../types'
+import type { ReadingLaw } from '../types'
 
 /** A law's line at some times. Arrays are as long as the times asked for. */
 export interface Trace {
@@ -13,9 +13,9 @@ export interface Trace {
 }
 
 export interface LawModel {
-  readonly law: Law
+  readonly law: ReadingLaw
   /** Free numbers. */
-  readonly size: 2 | 3
+  readonly size: number
   /** True where the line is a weighted sum of fixed columns, so that one step of least squares is the answer. */
   readonly linear: boolean
   /** Traces the line for times x (0 to 1 is the list's span; outside it the law is carried on). */

@@ -69,7 +69,6 @@ describe.each<[string, Record<string, string | number | null>, RegExp]>([
   ['takes', { number: 0 }, /CHECK/],
   ['takes', { keys: 'not json' }, /CHECK/],
   ['takes', { verdict: 'maybe' }, /CHECK/],
-  ['takes', { measure: 'feel' }, /CHECK/],
   ['takes', { slop: -1 }, /CHECK/],
   ['takes', { tolerance: 1.5 }, /CHECK/],
   ['threads', { take_id: null, from_frame: null, to_frame: null }, /CHECK/],

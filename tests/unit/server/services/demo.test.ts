@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { demoSequences } from '~/server/services/demo/shots'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 import type { FindingKind } from '~/utils/motion/types'
 
@@ -33,7 +34,7 @@ describe('the demo', () => {
   })
 
   it.each(lists.map((list) => [list.name, list] as const))('%s is judged as it was made', (name, { shot, take }) => {
-    const answer = judge({ ...shot.claim!, fps: shot.fps ?? 24, keys: take.keys })
+    const answer = judge(requestFor(shot.claim!, shot.fps ?? 24, take.keys))
     expect(answer.findings.map(({ kind }) => kind).sort()).toEqual([...(faults[name] ?? [])].sort())
     expect(answer.verdict).toBe(faults[name] ? 'breaks' : 'holds')
   })

@@ -1,12 +1,13 @@
 import { describe, expect, it } from 'vitest'
 import { headline } from '~/server/services/headline'
 import { makeSketch, MAX_MARKS } from '~/server/services/sketch'
+import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
-import type { CheckRequest, CheckResult, Finding, Key } from '~/utils/motion/types'
+import type { CheckResult, Finding, Key } from '~/utils/motion/types'
 import type { Claim } from '~/utils/contracts/production'
 import { brokenFall, fall, fallClaim } from '../../../helpers/seed'
 
-const judged = (claim: Claim, keys: Key[]) => judge({ ...claim, fps: 24, keys } satisfies CheckRequest)
+const judged = (claim: Claim, keys: Key[]) => judge(requestFor(claim, 24, keys))
 const topple: Claim = { law: 'topple', measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, subject: { shape: 'rod', height: 38 } }
 
 describe('the headline of a sheet', () => {

@@ -1,0 +1,241 @@
+/** A list of readings under one law, judged. */
+import { opine, ranked, weigh } from './choose'
+import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
+import { badDrawings, stories } from './hypotheses'
+import type { Care, Story } from './hypotheses'
+import { fromRest, fullNumbers } from './laws/fromRest'
+import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
+import type { LawModel } from './laws/model'
+import { letGoFrames } from './letGo'
+import { ruledList, traceLine } from './line'
+import type { Line } from './line'
+import { judgeKeys, unjudged } from './perKey'
+import { ruledFromRest } from './ruledFromRest'
+import { roundingSpread, roundingStep, seriesOf } from './series'
+import type { Series } from './series'
+import { scaleOf } from './size'
+import type { Scale } from './size'
+import { canRest } from './standstill'
+import { alreadyMoving } from './start'
+import type { Considered } from './start'
+import type { CheckResult, ClaimFrames, Finding, JudgedKey, ReadingCheck, ReadingLaw } from './types'
+
+export interface Judgement {
+  result: CheckResult
+  /** The law's line, for `lawCurve`; null where none could be fitted. */
+  line: Line | null
+  /** Claimed pace over the list's own, for drawing the claim's curve: 1 where they agree, null without a claimed size. */
+  pace: number | null
+}
+
+const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
+const SCALE_FLOOR = 0.03
+
+/** Judges a list of readings; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
+export function judgeReadings(request: ReadingCheck): Judgement {
+  const series = seriesOf(request)
+  if (request.law === 'flight') return undecided(request, 'A flight is held against points, not readings.')
+  const model = LAWS[request.law]
+  const laws = lawsFor(request.measure)
+  if (!laws.includes(request.law)) return undecided(request, `A ${request.measure} can't be held against ${LAW_WORDS[request.law]}.`)
+  const resting = request.start === 'rest' && canRest(request.law) ? request.law : null
+  // A speed that is given need not be found.
+  const needed = model.size + (resting ? 1 : 2)
+  if (series.n < needed) {
+    return undecided(request, `${series.n} keys are too few for ${LAW_WORDS[request.law]}: it takes ${needed} to tell.`)
+  }
+  const range = Math.max(...series.y) - Math.min(...series.y)
+  if (!(range > 2 * request.slop)) return undecided(request, STILL)
+
+  const care: Care = { slop: request.slop, tolerance: request.tolerance, least: roundingSpread(series.y) }
+  const free = consider(request, series, model, laws, care, range)
+  const { value: drawn } = free.choice.claimed.story.fit.trace
+  // Pencil alone can spread still drawings over the slop; what has to move is the line.
+  if (!(Math.max(...drawn) - Math.min(...drawn) > 2 * request.slop)) return undecided(request, STILL)
+  const atRest = resting && consider(request, series, fromRest(resting, free.choice.plain.fit.numbers), laws, care, range)
+  if (atRest && alreadyMoving(series, atRest, free, care)) return notAtRest(request, series, atRest, free, care)
+  return answer(request, series, atRest ?? free, care)
+}
+
+/** Holds a law, as it is or as it starts from rest, against a list beside every other that the measure can take. */
+function consider(request: ReadingCheck, series: Series, model: LawModel, laws: readonly ReadingLaw[], care: Care, range: number): Considered {
+  const choice = weigh(series, model.law, laws, stories(series, model, care), care)
+  const { story } = choice.claimed
+  const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
+  return { choice, scale, opinion: opine(series, choice, care, range, scale) }
+}
+
+function answer(request: ReadingCheck, series: Series, { choice, scale, opinion }: Considered, care: Care): Judgement {
+  const { story } = choice.claimed
+  const readsAs = ranked(choice).map(({ law, misfit }) => ({ law, misfit }))
+
+  if (opinion.kind === 'wrong-law') {
+    // Stories told to save the claimed law mean nothing once it is given up: the line is its plain best.
+    const plain = choice.plain
+    const line = lineFrom(plain, 0)
+    const keys = judgeKeys(request, series, traceLine(series, line, series.x))
+    const amount = readsAs.find(({ law }) => law === request.law)?.misfit ?? 0
+    const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
+    return {
+      line, pace: null,
+      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: ruledFromRest(request, series) } },
+    }
+  }
+
+  const line = lineOf(request, series, story)
+  const trace = traceLine(series, line, series.x)
+  const keys = judgeKeys(request, series, trace)
+  const claim = claimFrames(series, scale)
+  const ruled = ruledBy(request, series, line, scale)
+  if (opinion.kind === 'too-short') {
+    return {
+      line, pace: scale.pace,
+      result: {
+        verdict: 'undecided', reason: 'The gaps are too alike, and too small beside the slop, to tell one law from another.',
+        keys, findings: [], readsAs, size: scale.size, claim, ruled,
+      },
+    }
+  }
+  const findings = inOrder(faultFindings(request, series, story, scale, keys, trace.rate, care), keys)
+  const breaks = findings.length > 0 || keys.some(key => key.breaks)
+  return {
+    line, pace: scale.pace,
+    result: { verdict: breaks ? 'breaks' : 'holds', reason: null, keys, findings, readsAs, size: scale.size, claim, ruled },
+  }
+}
+
+/**
+ * The list is the claimed law's, but under way before its first drawing. The line is the best that does start from rest there; what else
+ * is wrong, and the size, are read off the motion as it was drawn, or one fault would be told as many.
+ */
+function notAtRest(request: ReadingCheck, series: Series, atRest: Considered, free: Considered, care: Care): Judgement {
+  const { story } = free.choice.claimed
+  const line = lineFrom(atRest.choice.plain, 0)
+  const keys = judgeKeys(request, series, traceLine(series, line, series.x))
+  const drawn = traceLine(series, lineOf(request, series, story), series.x)
+  const drawnKeys = judgeKeys(request, series, drawn)
+  const numbers = fullNumbers(story.fit.model, story.fit.numbers)
+  const before = letGoFrames(request.law, series, numbers)
+  const first = keys[0] as JudgedKey
+  const [still = first.reading] = story.fit.model.trace(series, numbers, Float64Array.of(-(before ?? 0) / series.spanFrames), false).value
+  const moving = Math.abs(first.reading - still) > request.slop
+  // Drawings that wait for a late start sit off the motion's line for that very reason.
+  const waits = (frame: number) => !moving && before !== null && frame < first.frame - before
+  const findings = inOrder([
+    notAtRestFinding(first, before, series.spanFrames, moving || before === null || before > 0),
+    ...faultFindings(request, series, story, free.scale, drawnKeys, drawn.rate, care).filter(({ frames }) => !frames.some(waits)),
+  ], drawnKeys)
+  return {
+    line, pace: atRest.scale.pace,
+    result: {
+      verdict: 'breaks', reason: null, keys, findings, readsAs: ranked(free.choice).map(({ law, misfit }) => ({ law, misfit })),
+      size: free.scale.size, claim: claimFrames(series, free.scale), ruled: ruledBy(request, series, line, atRest.scale),
+    },
+  }
+}
+
+function claimFrames({ spanFrames }: Series, { pace }: Scale): ClaimFrames | null {
+  return pace === null ? null : { frames: Math.round(spanFrames / pace), usedFrames: spanFrames }
+}
+
+function ruledBy(request: ReadingCheck, series: Series, line: Line, { pace }: Scale): CheckResult['ruled'] {
+  return { fit: ruledList(series, line, request), claim: pace === null ? null : ruledList(series, line, request, pace) }
+}
+
+/** What is wrong with a list that keeps its law, in no order. */
+function faultFindings(
+  request: ReadingCheck, series: Series, story: Story, scale: Scale, keys: readonly JudgedKey[], rate: Float64Array, care: Care,
+): Finding[] {
+  return [
+    ...shiftFindings(series, story, keys),
+    ...drawingFindings(request, series, story, keys, rate, care),
+    ...scaleFindings(request, scale, claimFrames(series, scale)),
+  ]
+}
+
+function undecided(request: ReadingCheck, reason: string): Judgement {
+  return {
+    line: null, pace: null,
+    result: {
+      verdict: 'undecided', reason, keys: unjudged(request), findings: [], readsAs: [], size: null, claim: null,
+      ruled: { fit: [], claim: null },
+    },
+  }
+}
+
+/** The line runs with the longer side of a held or skipped drawing, so that as few drawings as possible are called off. */
+function lineOf(request: ReadingCheck, series: Series, story: Story): Line {
+  const { shift } = story
+  const lag = shift && series.n - shift.at > shift.at ? shift.by : 0
+  return lineFrom(story, lag)
+}
+
+function lineFrom({ fit }: Story, lag: number): Line {
+  return { law: fit.model.law, numbers: Array.from(fullNumbers(fit.model, fit.numbers)), lag }
+}
+
+function shiftFindings(series: Series, story: Story, keys: readonly JudgedKey[]): Finding[] {
+  const { shift } = story
+  const key = shift ? keys[shift.at] : undefined
+  if (!shift || !key) return []
+  return [shiftFinding(key, shift.by * series.spanFrames, series.n - shift.at > shift.at)]
+}
+
+/** Misplaced drawings and those that run backward: a drawing is told of once. */
+function drawingFindings(
+  request: ReadingCheck, series: Series, story: Story, keys: readonly JudgedKey[], rate: Float64Array, care: Care,
+): Finding[] {
+  // A swing turns by its nature, whatever part of it a list shows.
+  const way = request.law === 'pendulum' ? 0 : oneWay(keys, rate, request.slop)
+  // Rounding alone can add one step to what the slop allows.
+  const least = (request.slop + roundingStep(series.y)) * (1 + 1e-9)
+  const bad = badDrawings(series, story, care)
+  const told = new Set(bad)
+  /** How far key i runs against the motion from the last drawing before it that holds. */
+  const backStep = (i: number) => {
+    let before = i - 1
+    while (told.has(before)) before--
+    const here = keys[i]
+    const there = keys[before]
+    return way === 0 || !here || !there ? 0 : way * (there.reading - here.reading)
+  }
+  const found: Finding[] = []
+  for (const i of bad) {
+    const key = keys[i]
+    if (!key) continue
+    const step = backStep(i)
+    found.push(step > least ? backwardFinding(key, step, request.unit) : misplacedFinding(key, request.unit))
+  }
+  for (let i = 1; i < series.n; i++) {
+    const key = keys[i]
+    if (!key || told.has(i) || i === story.shift?.at) continue
+    const step = backStep(i)
+    if (step > least) found.push(backwardFinding(key, step, request.unit))
+  }
+  return found
+}
+
+/** +1 or −1 where the law only ever goes that way over the list, save for less than the slop; 0 where it turns. */
+function oneWay(keys: readonly JudgedKey[], rate: Float64Array, slop: number): number {
+  let up = 0
+  let down = 0
+  for (let i = 1; i < keys.length; i++) {
+    const step = (keys[i]?.law ?? 0) - (keys[i - 1]?.law ?? 0)
+    if (step > 0) up += step
+    else down -= step
+  }
+  // An apex between two drawings shows in the speeds, not in the steps.
+  const turns = Math.sign(rate[0] ?? 0) * Math.sign(rate[rate.length - 1] ?? 0) < 0
+  if (Math.min(up, down) > slop || (turns && Math.min(up, down) > slop / 4)) return 0
+  return up >= down ? 1 : -1
+}
+
+function scaleFindings(request: ReadingCheck, scale: Scale, claim: ClaimFrames | null): Finding[] {
+  if (scale.pace === null || !claim) return []
+  const off = Math.abs(Math.log(scale.pace))
+  // Nobody notices gaps that are off by less than the tolerance, and a size that the list can't tell from the claim is no fault.
+  if (off <= Math.max(SCALE_FLOOR, Math.log(1 + request.tolerance)) || off <= 1.6 * scale.spread) return []
+  const finding = wrongScaleFinding(scale, claim.frames, claim.usedFrames)
+  return finding ? [finding] : []
+}
+
