@@ -9,9 +9,11 @@ export {
   STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
 } from './bodies'
 export { LAW_WORDS, MEASURES, lawsFor } from './laws/index'
-export { edgeRatio, leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
+export { brinkRatio, edgeRatio, leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
 export { framesFor, plannedList, secondsFor } from './plan'
 export type { Plan, PlannedList } from './plan'
 export { flightSeconds, plannedFlight } from './planFlight'
 export type { FlightEvent, FlightPlan, PlannedPoints, Throw } from './planFlight'
+export { edgeMotion, plannedEdge } from './planEdge'
+export type { EdgeEvent, EdgeMoment, EdgeMotion, EdgePlan, PlannedEdge } from './planEdge'
 export * from './types'

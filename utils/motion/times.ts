@@ -1,8 +1,9 @@
 /** How long a body takes: exact times of a topple and of a swing, and where a body on a brink leaves it. Angles in degrees, times in seconds. */
-import { equalLength, gravityOf } from './bodies'
+import { equalLength, gravityOf, isBody } from './bodies'
+import { ROD_RATIO, edgeEnergy, leavingCosine } from './edge'
 import { completeF, incompleteF } from './elliptic'
 import { RADIAN } from './series'
-import type { BodySubject } from './types'
+import type { BodySubject, Subject } from './types'
 
 /** k = √(g/L), radians per second. */
 export function paceOf(subject: BodySubject): number {
@@ -50,10 +51,15 @@ function centreDistance(subject: BodySubject): number | null {
   }
 }
 
+/** q for a body on a brink: its own, or the thin rod's 3/2 where its centre isn't known or no body is named. */
+export function brinkRatio(subject: Subject | undefined): number {
+  return (subject && isBody(subject) ? edgeRatio(subject) : null) ?? ROD_RATIO
+}
+
 /**
- * Degrees from upright at which a body going over on a brink leaves it: cos θ = q·cos θ₀/(1 + q), where the force along its length has
- * gone (energy and Newton's second law along the body). `lean` is where it started from rest.
+ * Degrees from upright at which a body going over on a brink leaves it: cos θ = q·(cos θ₀ + p²/2)/(1 + q), where the force along its
+ * length has gone (see `edge.ts`). `lean` and p = θ′₀/k are where it started; 0 where it is too fast to stay on at all.
  */
-export function leavesEdgeAt(ratio: number, lean = 0): number {
-  return Math.acos(ratio * Math.cos(lean * RADIAN) / (1 + ratio)) / RADIAN
+export function leavesEdgeAt(ratio: number, lean = 0, push = 0): number {
+  return Math.acos(Math.min(1, leavingCosine(ratio, edgeEnergy(lean * RADIAN, push)))) / RADIAN
 }
