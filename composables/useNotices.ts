@@ -6,6 +6,26 @@ export interface Notice {
 }
 
 const STAYS_MS = 8_000
+const LEFT = 'tiltyard:notice'
+
+/** Leaves a word for the page that comes after a full load, where nothing else survives. */
+export function leaveNotice(text: string) {
+  try {
+    sessionStorage.setItem(LEFT, text)
+  } catch {
+    // A browser that keeps nothing: the word is lost, the way on is not.
+  }
+}
+/** What the page before left, once. */
+export function takeLeftNotice(): string | null {
+  try {
+    const text = sessionStorage.getItem(LEFT)
+    sessionStorage.removeItem(LEFT)
+    return text
+  } catch {
+    return null
+  }
+}
 
 /** Short words at the foot of the page, read out politely. `say` from anywhere in the browser; UiNotices shows them. */
 export function useNotices() {

@@ -1,5 +1,6 @@
 import { defineStore } from 'pinia'
 import type { LiveSocket } from '~/plugins/live.client'
+import { leaveNotice } from '~/composables/useNotices'
 import { CatchUp } from '~/utils/catch-up'
 import type { EventsAnswer, Presence, ProductionEvent, SocketAnswer } from '~/utils/contracts/event'
 
@@ -215,7 +216,10 @@ export const useLiveStore = defineStore('live', () => {
   function rightsChanged(reason: 'membership' | 'role'): void {
     hangUp()
     if (reason === 'role') nuxt.runWithContext(() => reloadNuxtApp({ force: true }))
-    else void nuxt.runWithContext(() => navigateTo('/', { external: true }))
+    else {
+      leaveNotice('You are no longer on that production: its coordinator can tell you why.')
+      void nuxt.runWithContext(() => navigateTo('/', { external: true }))
+    }
   }
 
   function listenToWindow(): void {

@@ -7,11 +7,8 @@ import { afterCommit, row, rows, run, write } from '~/server/models/database'
 import { news } from '~/server/services/news'
 import { fail } from './fail'
 import { hashSecret, newSecret } from './secret'
+import { isOver } from './sessionAge'
 
-/** A session ends by itself after this long unused, and after this long in all: security.md 7.3.1, 7.3.2. */
-export const IDLE_DAYS = 14
-export const ABSOLUTE_DAYS = 30
-const DAY = 24 * 60 * 60 * 1000
 const SEEN_EVERY = 60 * 1000
 
 /** Who is asking, read afresh on every request. */
@@ -30,11 +27,6 @@ interface SessionRow {
   name: string
   email: string
   keeper: number
-}
-
-/** Has a session run out by itself? @param now milliseconds since 1970 */
-export function isOver(session: { createdAt: string; seenAt: string }, now: number): boolean {
-  return now - Date.parse(session.seenAt) > IDLE_DAYS * DAY || now - Date.parse(session.createdAt) > ABSOLUTE_DAYS * DAY
 }
 
 /** The person behind a session token, or null when the session ended, grew old, or its person was disabled. */

@@ -109,4 +109,10 @@ it('leaves the production as soon as the membership is over', async () => {
   await becomesLive(page)
   expect((await supervisor.delete(`/api/productions/${production}/members/${guest.me!.id}`)).status).toBeLessThan(300)
   await page.waitForURL((address) => !address.pathname.startsWith(`/p/${production}`))
+  await page.getByText('You are no longer on that production').waitFor()
+})
+
+it('takes a shot’s code in small letters, and puts the address right', async () => {
+  const { page } = await openPage({ url: server.url, path: path.toLowerCase(), as: animator })
+  await page.waitForURL((address) => address.pathname === path)
 })

@@ -44,7 +44,7 @@ describe('faults by field', () => {
     expect(claim.parse({ ...said, start: 'rest' }).start).toBe('rest')
   })
   it('names the starts', () => {
-    expect(issuesOf({ start: 'asleep' })).toEqual([{ path: 'start', message: `One of: ${laws.join(', ')}.` }])
+    expect(issuesOf({ start: 'asleep' })).toEqual([{ path: 'start', message: 'One of: rest, any.' }])
   })
   it('names unknown fields', () => {
     expect(issuesOf({ weight: 3 })).toEqual([{ path: '', message: 'Unknown field: weight.' }])
@@ -52,7 +52,7 @@ describe('faults by field', () => {
 
   it.each<[string, { safeParse: (value: unknown) => ReturnType<typeof checkRequest.safeParse> | ReturnType<typeof newShot.safeParse> }, unknown, string[]]>([
     ['no shot at all', newShot, 7, ['A group of named fields belongs here.']],
-    ['a shot out of bounds', newShot, { clientId: 7, code: 'a', title: 7, sequence: 's', firstFrame: -1e9, lastFrame: 1e9, fps: 500, animator: 3 }, [
+    ['a shot out of bounds', newShot, { clientId: 7, code: 'a_b', title: 7, sequence: 's', firstFrame: -1e9, lastFrame: 1e9, fps: 500, animator: 3 }, [
       'An id is a UUID.', 'Capital letters, digits and hyphens, like CLK-110.', 'A text belongs here.', 'Capital letters and digits, at most 8.',
       'At least -1,000,000.', 'At most 10,000,000.', 'At most 240.', 'An id is a UUID.',
     ]],

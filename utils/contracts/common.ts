@@ -78,8 +78,10 @@ export const slug = z
   .string()
   .regex(/^[a-z0-9](?:[a-z0-9-]{0,38}[a-z0-9])?$/, 'Small letters, digits and hyphens, at most 40.')
 export const sequenceCode = z.string().regex(/^[A-Z0-9]{1,8}$/, 'Capital letters and digits, at most 8.')
+/** Small letters are taken for the capital ones: nobody should have to hold Shift to follow a shot. */
 export const shotCode = z
   .string()
+  .toUpperCase()
   .regex(/^[A-Z0-9]{1,8}(?:-[A-Z0-9]{1,8}){0,2}$/, 'Capital letters, digits and hyphens, like CLK-110.')
 export const frame = z.number().int('A frame is a whole number.').min(-1_000_000).max(10_000_000)
 export const day = z.iso.date('A date as year-month-day.')

@@ -1,7 +1,7 @@
 import { rows } from '~/server/models/database'
 import { news } from '~/server/services/news'
 import { hashSecret } from '~/server/utils/secret'
-import { isOver } from '~/server/utils/session'
+import { isOver } from '~/server/utils/sessionAge'
 import type { PresenceBoard } from './presence'
 import type { LiveServer, LiveSocket } from './types'
 
