@@ -84,6 +84,14 @@ describe('what the log holds', () => {
     expect(since(from).some(({ what }) => what === 'signed in')).toBe(false)
     expect(server.logs().slice(from)).not.toContain('hidden-in-a-query')
   })
+
+  it('no stack for a page that is refused or not there', async () => {
+    const from = server.logs().length
+    const { slug } = house.production
+    expect((await guest.get(`/p/${slug}/shots/new`)).status).toBe(403)
+    expect((await guest.get(`/p/${slug}/shots/NO-SUCH`)).status).toBe(404)
+    expect(server.logs().slice(from)).not.toMatch(/^\s+at /m)
+  })
 })
 
 describe('16.5.1: when something breaks on our side', () => {
