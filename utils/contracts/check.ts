@@ -82,15 +82,37 @@ export const keys = ordered(z.array(z.strictObject({ frame, reading })))
 /** Points as keys: drawing units from wherever the drawing counts them. */
 export const pointKeys = ordered(z.array(z.strictObject({ frame, x: coordinate, y: coordinate })))
 
-/** Either kind of list, told apart by its first key: the claim says later which one it wants. */
-export const anyKeys = z.unknown().transform((value, context): Key[] | PointKey[] => {
-  const first: unknown = Array.isArray(value) ? value[0] : undefined
-  const points = typeof first === 'object' && first !== null && ('x' in first || 'y' in first)
-  const read = (points ? pointKeys : keys).safeParse(value)
+type ListKind = 'point' | 'reading'
+/** What a list of the other kind is told, once and at its first key, instead of a complaint about every cell. */
+export const keysWanted: Record<ListKind, string> = {
+  point: 'This is judged by points: every key has a frame, x and y.',
+  reading: 'This is judged by readings: every key has a frame and a reading.',
+}
+/** What kind of list its first key begins; undefined where that is neither. */
+function kindOf(list: unknown): ListKind | undefined {
+  const first: unknown = Array.isArray(list) ? list[0] : undefined
+  if (typeof first !== 'object' || first === null) return undefined
+  return 'x' in first || 'y' in first ? 'point' : 'reading' in first ? 'reading' : undefined
+}
+const listOf = <List extends Key[] | PointKey[]>(wanted?: ListKind) =>
+  z.unknown().transform((value, context): List => {
+    const kind = kindOf(value)
+    if (wanted && kind && kind !== wanted) {
+      context.addIssue({ code: 'custom', path: [0], message: keysWanted[wanted] })
+      return z.NEVER
+    }
+    return passOn<Key[] | PointKey[]>((wanted ?? kind) === 'point' ? pointKeys : keys, value, context) as List
+  })
+/** Reads by a schema that was only chosen now; its faults keep their paths, which a plain union would swallow. */
+function passOn<T>(schema: z.ZodType<T>, value: unknown, context: z.RefinementCtx): T {
+  const read = schema.safeParse(value)
   if (read.success) return read.data
   for (const issue of read.error.issues) context.addIssue({ ...issue } as Parameters<typeof context.addIssue>[0])
   return z.NEVER
-})
+}
+
+/** Either kind of list, told apart by its first key: the claim says later which one it wants. */
+export const anyKeys = listOf<Key[] | PointKey[]>()
 
 const span = z.strictObject({
   from: frame, to: frame, law, contact: z.boolean().optional(), start: z.enum(starts).optional(), subject: subject.optional(),
@@ -118,41 +140,54 @@ const rules = {
   tolerance: z.number().min(0).max(1, 'Tolerance is a share between 0 and 1.'),
   subject: subject.optional(),
 }
+/** A field of the other kind of list: told at its own place, in a sentence. */
+const notHere = (message: string) => z.undefined(message).optional()
+const onlyOfPoints = notHere('Only points on the drawing have a y axis, a path and a pivot.')
+const onlyOfReadings = notHere('Points need neither a radius nor a zero: both are found on the drawing.')
 const ofReadings = {
   ...rules,
   measure: z.enum(['angle', 'distance', 'arc']),
   radius: z.number().positive().max(1e6).optional(),
   zeroAt: z.number().min(-360).max(360).optional(),
+  yAxis: onlyOfPoints,
+  path: onlyOfPoints,
+  pivot: onlyOfPoints,
 }
 const ofPoints = {
   ...rules,
   measure: z.literal('point'),
+  radius: onlyOfReadings,
+  zeroAt: onlyOfReadings,
   yAxis: z.enum(yAxes).optional(),
   path: z.enum(pathKinds).optional(),
   pivot: z.strictObject({ x: coordinate, y: coordinate }).optional(),
+}
+const unknownMeasure = {
+  error: (issue: { code?: string }) => (issue.code === 'invalid_union' ? `One of: ${measures.join(', ')}.` : undefined),
 }
 
 type Measured = Pick<CheckRequest, 'law' | 'measure' | 'start' | 'subject' | 'spans'> & { radius?: number; path?: string; pivot?: object }
 
 /** A law takes only some measures; an arc needs its radius; a body that turns is no use to a distance; only what can rest starts from rest. */
 function refineMeasure(value: Measured, context: z.RefinementCtx): void {
-  const refuse = (path: (string | number)[], message: string) => context.addIssue({ code: 'custom', path, message })
-  refineLaw(value, value.measure, refuse)
+  const refuse: Refuse = (path, message) => context.addIssue({ code: 'custom', path, message })
   if (value.measure === 'arc' && value.radius === undefined)
     refuse(['radius'], 'Readings along an arc need the radius of the arc.')
   if (value.measure !== 'arc' && value.radius !== undefined)
     refuse(['radius'], 'Only readings along an arc have a radius.')
-  if (!Array.isArray(value.spans)) return
-  if (value.spans[0] && value.spans[0].law !== value.law) refuse(['law'], 'The law is that of the first span.')
-  value.spans.forEach((each, i) => refineLaw(each, value.measure, (path, message) => refuse(['spans', i, ...path], message)))
+  if (!Array.isArray(value.spans)) return refineLaw(value, value.measure, 'measure', refuse)
+  if (value.spans[0] && value.spans[0].law !== value.law) refuse(['law'], 'With spans, the law is that of the first one.')
+  value.spans.forEach((each, i) =>
+    refineLaw(each, value.measure, 'law', (path, message) => refuse(['spans', i, ...path], message)))
 }
 
+type Refuse = (path: (string | number)[], message: string) => void
+/** `atFault`: the field that is blamed where law and measure don't go together; spans share one measure, so there it is the law. */
 function refineLaw(
-  { law, start, subject: body }: Pick<Measured, 'law' | 'start' | 'subject'>, measure: Measure,
-  refuse: (path: (string | number)[], message: string) => void,
+  { law, start, subject: body }: Pick<Measured, 'law' | 'start' | 'subject'>, measure: Measure, atFault: 'law' | 'measure', refuse: Refuse,
 ): void {
   const turning = turningLaws.includes(law)
-  if (!MEASURES[law].includes(measure)) refuse(['measure'], `${capital(LAW_WORDS[law])} is read as ${MEASURES[law].map(one => measureNames[one]).join(', or ')}.`)
+  if (!MEASURES[law].includes(measure)) refuse([atFault], `${capital(LAW_WORDS[law])} is read as ${MEASURES[law].map(one => measureNames[one]).join(', or ')}.`)
   if (start === 'rest' && !canRest(law)) refuse(['start'], `${capital(LAW_WORDS[law])} never stands still at its first key: it can’t start from rest.`)
   if (!body) return
   if ('shape' in body && !turning) refuse(['subject', 'shape'], 'Distances take a drawing scale or a slope, not a turning body.')
@@ -181,25 +216,68 @@ export const claim = z
   .discriminatedUnion('measure', [
     z.strictObject({ ...ofReadings, spans: spans.optional() }),
     z.strictObject({ ...ofPoints, spans: spans.optional() }),
-  ])
+  ], unknownMeasure)
   .superRefine(refineMeasure) as unknown as z.ZodType<Claim>
 
 /** True where the list is of the kind that the claim judges. */
 export const keysSuit = (claim: Pick<Claim, 'measure'>, list: readonly (Key | PointKey)[]) =>
-  (claim.measure === 'point') === (list[0] !== undefined && 'x' in list[0])
+  (claim.measure === 'point') === (kindOf(list) === 'point')
 
-/** A claim with a list of its own kind (see `keysSuit`), as the judge takes it. */
-export const requestFor = (claim: Claim, fps: number, list: readonly Key[] | readonly PointKey[]) =>
-  ({ ...claim, fps, keys: [...list] }) as CheckRequest
+/** The frames where one span hands over to the next. */
+export const jointsOf = (spans: readonly Span[] | undefined): number[] => (spans ?? []).slice(1).map(({ from }) => from)
 
+/** The first joint of the claim on which the list has no drawing, or null. Spans meet on a drawing. */
+export function missingJoint(claim: Pick<Claim, 'spans'>, list: readonly (Key | PointKey)[]): number | null {
+  const [first, last] = [list[0]?.frame ?? 0, list.at(-1)?.frame ?? 0]
+  // A joint on an end would leave a span without a gap to judge.
+  const drawn = new Set(list.map(({ frame }) => frame).filter(frame => frame > first && frame < last))
+  return jointsOf(claim.spans).find(frame => !drawn.has(frame)) ?? null
+}
 
-const checkSpans = z.union([z.literal('find'), spans]).optional()
+/**
+ * A claim with a list of its own kind (see `keysSuit`) that has a drawing on every joint (see `missingJoint`), as the judge takes
+ * it. The first span begins where the list does, and the last one ends with it: a claim fixes the joints, not the length.
+ */
+export function requestFor(claim: Claim, fps: number, list: readonly Key[] | readonly PointKey[]): CheckRequest {
+  const request = { ...claim, fps, keys: [...list] } as CheckRequest
+  const [first, last] = [list[0], list.at(-1)]
+  if (!claim.spans || !first || !last) return request
+  const end = claim.spans.length - 1
+  const spans = claim.spans.map((span, i) => ({
+    ...span,
+    ...(i === 0 ? { from: first.frame } : {}),
+    ...(i === end ? { to: last.frame } : {}),
+  }))
+  return { ...request, spans }
+}
+
+/** The spans of a check cover the very list that comes with them: ends on its ends, joints on its drawings. */
+function refineCover({ spans, keys }: Pick<CheckRequest, 'spans' | 'keys'>, context: z.RefinementCtx): void {
+  if (!Array.isArray(spans)) return
+  const refuse = (path: (string | number)[], message: string) => context.addIssue({ code: 'custom', path: ['spans', ...path], message })
+  const frames = keys.map(({ frame }) => frame)
+  const [first, last] = [frames[0]!, frames.at(-1)!]
+  const end = spans.length - 1
+  if (spans[0]!.from !== first) refuse([0, 'from'], `The first span begins on the first key: at frame ${first}.`)
+  if (spans[end]!.to !== last) refuse([end, 'to'], `The last span ends on the last key: at frame ${last}.`)
+  const drawn = new Set(frames)
+  spans.slice(0, end).forEach(({ to }, i) => {
+    if (!drawn.has(to)) refuse([i, 'to'], `Spans meet on a drawing: there is no key at frame ${to}.`)
+  })
+}
+
+const checkSpans = z.unknown().transform((value, context): Span[] | 'find' => {
+  if (typeof value !== 'string') return passOn(spans, value, context)
+  if (value !== 'find') context.addIssue({ code: 'custom', message: 'Spans are a list of two to four, or the word “find”.' })
+  return 'find'
+}).optional()
 export const checkRequest = z
   .discriminatedUnion('measure', [
-    z.strictObject({ fps, ...ofReadings, spans: checkSpans, keys }),
-    z.strictObject({ fps, ...ofPoints, spans: checkSpans, keys: pointKeys }),
-  ])
+    z.strictObject({ fps, ...ofReadings, spans: checkSpans, keys: listOf<Key[]>('reading') }),
+    z.strictObject({ fps, ...ofPoints, spans: checkSpans, keys: listOf<PointKey[]>('point') }),
+  ], unknownMeasure)
   .superRefine(refineMeasure)
+  .superRefine(refineCover)
 /** Keeps the schema and the judge's own types from drifting apart: fails to compile when they do. */
 type Agrees<A extends B, B> = A
 export type CheckBody = Agrees<z.infer<typeof checkRequest>, CheckRequest>

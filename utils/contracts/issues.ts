@@ -36,7 +36,7 @@ function sentence(issue: ZodIssue): string {
   if (issue.code === 'too_small' && /^Too small/.test(issue.message))
     return `${issue.inclusive === false ? 'More than' : 'At least'} ${figure(issue.minimum)}${counted(issue.origin)}.`
   if (issue.code === 'unrecognized_keys') return `Unknown ${issue.keys.length === 1 ? 'field' : 'fields'}: ${issue.keys.join(', ')}.`
-  if (issue.code === 'invalid_union') return 'This is not one of the known kinds.'
+  if (issue.code === 'invalid_union' && /^Invalid (?:input|discriminator)/.test(issue.message)) return 'This is not one of the known kinds.'
   if (issue.code === 'invalid_value' && /^Invalid option/.test(issue.message)) return `One of: ${issue.values.join(', ')}.`
   return issue.message
 }
