@@ -1,6 +1,5 @@
 /** Least squares of one law to one list, with a weight per key and any shift of the keys' times. */
 import type { LawModel, Trace } from './laws/model'
-import { LEAST_LOG, MOST_LOG } from './laws/swinging'
 import type { Series } from './series'
 import { solve3 } from './solve'
 
@@ -31,9 +30,8 @@ export const BRIEF: Effort = { steps: 10, enough: 1e-5 }
 /** For laws that are only there to be compared with: a misfit of thirty need not be known to the last digit. */
 export const PASSING: Effort = { steps: 8, enough: 0.02 }
 
-/** Keeps a search inside the range where the law means something; for linear laws nothing is held back. */
-function confine(model: LawModel, numbers: Float64Array): Float64Array {
-  if (!model.linear) numbers[0] = Math.min(MOST_LOG, Math.max(LEAST_LOG, numbers[0] as number))
+function confine(model: LawModel, series: Series, numbers: Float64Array): Float64Array {
+  model.confine?.(series, numbers)
   return numbers
 }
 
@@ -76,7 +74,7 @@ export function refine(
 ): Fit {
   const { steps, enough } = effort
   const size = model.size
-  let numbers = confine(model, from.slice())
+  let numbers = confine(model, series, from.slice())
   let trace = model.trace(series, numbers, x, true)
   let cost = costOf(trace, y, weights)
   let { a, b } = normalOf(trace, y, weights, size)
@@ -93,7 +91,7 @@ export function refine(
         damping = Math.max(1e-6, damping * 20)
         continue
       }
-      const next = confine(model, numbers.map((value, p) => value + (move[p] as number)))
+      const next = confine(model, series, numbers.map((value, p) => value + (move[p] as number)))
       const nextTrace = model.trace(series, next, x, true)
       const nextCost = costOf(nextTrace, y, weights)
       if (nextCost <= cost) {

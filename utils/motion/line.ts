@@ -3,6 +3,7 @@ import { LAWS } from './laws/index'
 import type { Trace } from './laws/model'
 import { seriesOf } from './series'
 import type { Series } from './series'
+import { inPostedTurns, turnsToAdd } from './turns'
 import type { ReadingCheck, Key, ReadingLaw } from './types'
 
 export interface Line {
@@ -27,7 +28,9 @@ export function lawCurve(line: Line, request: ReadingCheck, frames: readonly num
   const first = request.keys[0]
   if (!first || series.spanFrames === 0) return []
   const x = Float64Array.from(frames, frame => (frame - first.frame) / series.spanFrames)
-  return Array.from(traceLine(series, line, x, rate).value)
+  const curve = Array.from(traceLine(series, line, x, rate).value)
+  const turns = line.law === 'spin' ? turnsToAdd(request) : null
+  return turns ? inPostedTurns(curve, request, turns, frames) : curve
 }
 
 /** The line's readings on the list's own frames. */

@@ -24,6 +24,10 @@ export type Plan = OnPaper & (
   | { law: 'odd-rule', subject: PathSubject & { unitsPerMetre: number }, travel: number }
   /** Evenly over `travel` drawing units in `seconds`. */
   | { law: 'steady', travel: number, seconds: number }
+  /** Slowing evenly to a stop over `travel` drawing units: in so many seconds, or by a deceleration in units per second². */
+  | { law: 'slow-in', travel: number } & ({ seconds: number } | { deceleration: number })
+  /** `turns` full turns at a constant rate; a negative rate turns the other way. Readings in degrees run on past 360. */
+  | { law: 'spin', turns: number, turnsPerSecond: number }
 )
 
 export interface PlannedList {
@@ -44,6 +48,9 @@ export function secondsFor(plan: Plan): number {
     case 'pendulum': return swingPeriod(plan.subject, plan.amplitude) * plan.swings
     case 'odd-rule': return Math.sqrt(2 * Math.abs(plan.travel) / (plan.subject.unitsPerMetre * pathAcceleration(plan.subject)))
     case 'steady': return plan.seconds
+    // travel = ½at².
+    case 'slow-in': return 'seconds' in plan ? plan.seconds : Math.sqrt(2 * Math.abs(plan.travel) / plan.deceleration)
+    case 'spin': return plan.turns / Math.abs(plan.turnsPerSecond)
   }
 }
 
@@ -56,7 +63,9 @@ export function framesFor(plan: Plan): number {
 export function plannedList(plan: Plan): PlannedList {
   const seconds = secondsFor(plan)
   const frames = seconds * plan.fps
-  const count = Math.min(MOST_KEYS, Math.floor(frames / plan.exposure + 1e-9) + 1)
+  const exposures = frames / plan.exposure
+  // What stays where it stopped is drawn there once, even where the stop falls between two drawings.
+  const count = Math.min(MOST_KEYS, (plan.law === 'slow-in' ? Math.ceil(exposures - 1e-9) : Math.floor(exposures + 1e-9)) + 1)
   const times = Float64Array.from({ length: count }, (_, i) => i * plan.exposure / plan.fps)
   const readings = readingsAt(plan, times)
   const first = plan.firstFrame ?? 1
@@ -80,6 +89,11 @@ function readingsAt(plan: Plan, times: Float64Array): Float64Array {
       return times.map(t => a * t * t / 2)
     }
     case 'steady': return times.map(t => plan.travel * t / plan.seconds)
+    case 'slow-in': {
+      const seconds = secondsFor(plan)
+      return times.map(t => plan.travel * (1 - Math.max(0, 1 - t / seconds) ** 2))
+    }
+    case 'spin': return times.map(t => 360 * plan.turnsPerSecond * t)
   }
 }
 

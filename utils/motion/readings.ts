@@ -1,10 +1,11 @@
 /** A list of readings under one law, judged. */
 import { opine, ranked, weigh } from './choose'
+import { figuresOf } from './figures'
 import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
 import { badDrawings, stories } from './hypotheses'
 import type { Care, Story } from './hypotheses'
 import { fromRest, fullNumbers } from './laws/fromRest'
-import { LAWS, LAW_WORDS, lawsFor } from './laws/index'
+import { LAWS, LAW_WORDS, MEASURES, rivalsOf } from './laws/index'
 import type { LawModel } from './laws/model'
 import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
@@ -18,6 +19,7 @@ import type { Scale } from './size'
 import { canRest } from './standstill'
 import { alreadyMoving } from './start'
 import type { Considered } from './start'
+import { joined, toldInTheirTurn, turnsToAdd } from './turns'
 import type { CheckResult, ClaimFrames, Finding, JudgedKey, ReadingCheck, ReadingLaw } from './types'
 
 export interface Judgement {
@@ -33,11 +35,16 @@ const SCALE_FLOOR = 0.03
 
 /** Judges a list of readings; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
 export function judgeReadings(request: ReadingCheck): Judgement {
+  const turns = request.law === 'spin' ? turnsToAdd(request) : null
+  return turns ? toldInTheirTurn(judgeRow(joined(request, turns)), request, turns) : judgeRow(request)
+}
+
+function judgeRow(request: ReadingCheck): Judgement {
   const series = seriesOf(request)
   if (request.law === 'flight') return undecided(request, 'A flight is held against points, not readings.')
   const model = LAWS[request.law]
-  const laws = lawsFor(request.measure)
-  if (!laws.includes(request.law)) return undecided(request, `A ${request.measure} can't be held against ${LAW_WORDS[request.law]}.`)
+  if (!MEASURES[request.law].includes(request.measure)) return undecided(request, `A ${request.measure} can't be held against ${LAW_WORDS[request.law]}.`)
+  const laws = rivalsOf(request.law, request.measure, series)
   const resting = request.start === 'rest' && canRest(request.law) ? request.law : null
   // A speed that is given need not be found.
   const needed = model.size + (resting ? 1 : 2)
@@ -87,12 +94,13 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
   const keys = judgeKeys(request, series, trace)
   const claim = claimFrames(series, scale)
   const ruled = ruledBy(request, series, line, scale)
+  const figures = figuresOf(request, series, story.fit, line, series.n - story.out.length, care.least)
   if (opinion.kind === 'too-short') {
     return {
       line, pace: scale.pace,
       result: {
         verdict: 'undecided', reason: 'The gaps are too alike, and too small beside the slop, to tell one law from another.',
-        keys, findings: [], readsAs, size: scale.size, claim, ruled,
+        keys, findings: [], readsAs, size: scale.size, claim, ruled, figures,
       },
     }
   }
@@ -100,7 +108,7 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
   const breaks = findings.length > 0 || keys.some(key => key.breaks)
   return {
     line, pace: scale.pace,
-    result: { verdict: breaks ? 'breaks' : 'holds', reason: null, keys, findings, readsAs, size: scale.size, claim, ruled },
+    result: { verdict: breaks ? 'breaks' : 'holds', reason: null, keys, findings, readsAs, size: scale.size, claim, ruled, figures },
   }
 }
 

@@ -4,7 +4,7 @@ import { RADIAN } from './series'
 import type { Series } from './series'
 import { freeSwing } from './swing'
 import { paceOf } from './times'
-import type { ReadingCheck, Key } from './types'
+import type { ReadingCheck, Key, Law } from './types'
 
 /**
  * The claimed body from rest at the first posted reading, on the list's own frames, in reading units. Null where the claim
@@ -15,8 +15,11 @@ export function ruledFromRest(request: ReadingCheck, series: Series): Key[] | nu
   return readings && request.keys.map((key, i) => ({ frame: key.frame, reading: readings[i] as number }))
 }
 
+/** The laws by which a body let go starts to move by itself. */
+const FALLS = { 'odd-rule': true, 'topple': true, 'pendulum': true } satisfies Partial<Record<Law, true>>
+
 function claimedReadings({ law, subject }: ReadingCheck, series: Series): Float64Array | null {
-  if (!subject || law === 'steady') return null
+  if (!subject || !(law in FALLS)) return null
   const { y, n } = series
   const first = y[0] as number
   const times = series.x.map(x => x * series.span)

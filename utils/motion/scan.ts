@@ -71,19 +71,21 @@ export function worstDrawings(fit: Fit, y: Float64Array, weights: Float64Array):
   return [[first], ...sets.slice(0, 2).map(set => set.keys)]
 }
 
-/** Running sums, key by key, of what a least-squares step needs: six products of columns, three of columns with offsets, offsets squared. */
-const WIDTH = 10
+/** Entries per key of the running sums: products of columns, products of columns with offsets, offsets squared. */
+const widthFor = (size: number) => size * (size + 1) / 2 + size + 1
 
+/** Running sums, key by key, of what a least-squares step needs. */
 function runningSums(series: Series, fit: Fit, y: Float64Array, x: Float64Array): Float64Array {
   const n = y.length
   const size = fit.model.size
   const trace = fit.model.trace(series, fit.numbers, x, true)
-  const table = new Float64Array((n + 1) * WIDTH)
+  const width = widthFor(size)
+  const table = new Float64Array((n + 1) * width)
   for (let i = 0; i < n; i++) {
     const r = (y[i] as number) - (trace.value[i] as number)
-    const from = i * WIDTH
-    const to = from + WIDTH
-    for (let k = 0; k < WIDTH; k++) table[to + k] = table[from + k] as number
+    const from = i * width
+    const to = from + width
+    for (let k = 0; k < width; k++) table[to + k] = table[from + k] as number
     let slot = to
     for (let p = 0; p < size; p++) {
       const cp = (trace.columns[p] as Float64Array)[i] as number
@@ -91,9 +93,9 @@ function runningSums(series: Series, fit: Fit, y: Float64Array, x: Float64Array)
         table[slot] = (table[slot] as number) + cp * ((trace.columns[q] as Float64Array)[i] as number)
         slot++
       }
-      table[to + 6 + p] = (table[to + 6 + p] as number) + cp * r
+      table[to + width - 1 - size + p] = (table[to + width - 1 - size + p] as number) + cp * r
     }
-    table[to + 9] = (table[to + 9] as number) + r * r
+    table[to + width - 1] = (table[to + width - 1] as number) + r * r
   }
   return table
 }
@@ -107,29 +109,30 @@ export interface Candidate { shift: Shift, cost: number, numbers: Float64Array }
 export function bestShifts(series: Series, fit: Fit, y: Float64Array, sizes: readonly number[]): Candidate[] {
   const n = y.length
   const size = fit.model.size
+  const width = widthFor(size)
   const early = runningSums(series, fit, y, series.x)
   const a = new Float64Array(size * size)
   const b = new Float64Array(size)
   const move = new Float64Array(size)
-  const total = new Float64Array(WIDTH)
-  const last = n * WIDTH
+  const total = new Float64Array(width)
+  const last = n * width
   const found: Candidate[] = []
   for (const by of sizes) {
     const late = runningSums(series, fit, y, series.x.map(at => at - by))
     const best: Candidate[] = []
     for (let at = 2; at <= n - 2; at++) {
-      const cut = at * WIDTH
-      for (let k = 0; k < WIDTH; k++) total[k] = (early[cut + k] as number) + (late[last + k] as number) - (late[cut + k] as number)
+      const cut = at * width
+      for (let k = 0; k < width; k++) total[k] = (early[cut + k] as number) + (late[last + k] as number) - (late[cut + k] as number)
       let slot = 0
       for (let p = 0; p < size; p++) {
         for (let q = 0; q <= p; q++) {
           a[size * p + q] = a[size * q + p] = total[slot] as number
           slot++
         }
-        b[p] = total[6 + p] as number
+        b[p] = total[width - 1 - size + p] as number
       }
       if (!solveInto(a, b, size, move)) continue
-      let cost = total[9] as number
+      let cost = total[width - 1] as number
       for (let p = 0; p < size; p++) cost -= (b[p] as number) * (move[p] as number)
       const runnerUp = best[1]
       if (runnerUp && cost >= runnerUp.cost) continue

@@ -4,7 +4,7 @@ import type { Fit } from './fit'
 import { fullNumbers } from './laws/fromRest'
 import { accelerationOf } from './laws/oddRule'
 import type { Series } from './series'
-import { inverseRow } from './solve'
+import { solve3 } from './solve'
 import { student95 } from './student'
 import type { BodySubject, ReadingCheck, PathSubject, SizeReading } from './types'
 
@@ -30,13 +30,24 @@ const NOTHING: Scale = { size: null, pace: null, spread: Infinity, reach: Infini
 /** A size known to no better than this factor either way is printed as this factor, so that an interval is always finite. */
 const WIDEST = 1e6
 
-/** Standard error of one free number: residual spread over the keys kept, times the root of its place in the inverse normal matrix. */
-function standardError(fit: Fit, index: number, kept: number, least: number): { error: number, t: number } {
+/**
+ * 95 % half-width of what moves with the free numbers as `along` says (one slope per number): residual spread over the keys kept, times
+ * the root of alongᵀ·(normal matrix)⁻¹·along, times Student's t. Infinity where the list doesn't settle its numbers.
+ */
+export function uncertainty(fit: Fit, along: ArrayLike<number>, kept: number, least: number): number {
   const free = kept - fit.model.size
-  const row = inverseRow(fit.normal, index, fit.model.size)
-  if (free < 1 || !row) return { error: Infinity, t: student95(1) }
+  const moved = solve3(fit.normal, along, fit.model.size)
+  if (free < 1 || !moved) return Infinity
   const sigma = Math.sqrt(Math.max(fit.cost / free, least * least))
-  return { error: sigma * Math.sqrt(row[index] as number), t: student95(free) }
+  const spread = moved.reduce((sum, value, p) => sum + value * (along[p] as number), 0)
+  return sigma * Math.sqrt(Math.max(0, spread)) * student95(free)
+}
+
+/** The same for one free number. */
+function halfWidth(fit: Fit, index: number, kept: number, least: number): number {
+  const along = new Float64Array(fit.model.size)
+  along[index] = 1
+  return uncertainty(fit, along, kept, least)
 }
 
 /** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
@@ -54,8 +65,7 @@ function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number
   const gravity = gravityOf(subject)
   const k = Math.exp(fit.numbers[0] as number) / series.span
   const value = sizeForLength(body, gravity / (k * k))
-  const { error, t } = standardError(fit, 0, kept, least)
-  const spread = error * t
+  const spread = halfWidth(fit, 0, kept, least)
   const factor = Math.min(WIDEST, Math.exp(2 * spread))
   return {
     size: { value, low: value / factor, high: value * factor, unit: 'm' },
@@ -72,9 +82,8 @@ function pathScale(request: ReadingCheck, series: Series, fit: Fit, kept: number
   const a = Math.abs(accelerationOf(fullNumbers(fit.model, fit.numbers), series.span))
   // The acceleration is the last free number, whether the fall starts from rest or not.
   const last = fit.model.size - 1
-  const { error, t } = standardError(fit, last, kept, least)
   const off = new Float64Array(fit.model.size)
-  off[last] = error * t
+  off[last] = halfWidth(fit, last, kept, least)
   const half = Math.min(a * WIDEST, Math.abs(accelerationOf(fullNumbers(fit.model, off), series.span)))
   const perMetre = path.unitsPerMetre
   const unit = perMetre === undefined ? pathAcceleration(path) : perMetre * pathShare(path)

@@ -6,7 +6,7 @@ import type { Series } from '../series'
 import type { RestingLaw } from '../standstill'
 import type { LawModel, Trace } from './model'
 import { oddRule } from './oddRule'
-import { beginSwing, traceSwing } from './swinging'
+import { beginSwing, confineSwing, traceSwing } from './swinging'
 
 /** Numbers: weights of 1 and x² − 1/3; x is 0 at the first key, so the apex lies there. */
 const fallFromRest: LawModel = {
@@ -35,6 +35,7 @@ function swingFromRest(law: 'topple' | 'pendulum', near: Float64Array): LawModel
       const trace = traceSwing(series, full(numbers), x, withColumns, fromTop)
       return { ...trace, columns: trace.columns.slice(0, 2) }
     },
+    confine: confineSwing,
     begin: (series, y) => [near.slice(0, 2), ...beginSwing(series, y, fromTop).map(numbers => numbers.slice(0, 2))],
   }
 }

@@ -22,6 +22,8 @@ export interface LawModel {
   trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace
   /** Told where the numbers are not the law's own: those that the law without any restriction counts the same line by. Linear in them for linear laws. */
   full?(numbers: Float64Array): Float64Array
+  /** Keeps a search inside the range where the law means something, in place; not for linear laws. */
+  confine?(series: Series, numbers: Float64Array): void
   /** Places to begin a search from, best guess first. `y` is the list with its lone bad drawings smoothed over. */
   begin(series: Series, y: Float64Array): Float64Array[]
 }

@@ -8,8 +8,8 @@ import { freeSwing } from '../swing'
 import type { Trace } from './model'
 
 /** ln κ is kept in here, κ = k·span: from barely curving over the whole list to a thousand radians of swing. */
-export const LEAST_LOG = Math.log(1e-3)
-export const MOST_LOG = Math.log(1e3)
+const LEAST_LOG = Math.log(1e-3)
+const MOST_LOG = Math.log(1e3)
 const NUDGE = 1e-6
 
 // Work space, grown when a longer list comes: a search traces the same few dozen drawings hundreds of times.
@@ -24,6 +24,11 @@ function makeRoom(n: number): void {
   shifted = new Float64Array(n)
   spare = new Float64Array(n)
   along = new Float64Array(n)
+}
+
+/** Keeps ln κ in its range. */
+export function confineSwing(_series: Series, numbers: Float64Array): void {
+  numbers[0] = Math.min(MOST_LOG, Math.max(LEAST_LOG, numbers[0] as number))
 }
 
 /** Numbers: ln κ; angle at the first key, radians; turn rate there, radians per span. */
