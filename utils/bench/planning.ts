@@ -78,7 +78,7 @@ export function motionIn(setup: BenchSetup, size: number): { readings: number[];
   const plan = planIn(atSize(setup, size))
   const { keys, frames } = plannedList(plan)
   const readings = keys.map(({ reading }) => reading)
-  const end = plan.law === 'topple' ? plan.to! : plan.law === 'pendulum' ? swungTo(setup) : readings.length > 0 ? plan.travel : 0
+  const end = plan.law === 'topple' ? plan.to! : plan.law === 'pendulum' ? swungTo(setup) : 'travel' in plan && readings.length > 0 ? plan.travel : 0
   return { readings, end, frames }
 }
 /** Where the last swing is when its time is up: a list of two drawings, the first and the one at the very end. */
