@@ -20,7 +20,7 @@ import { canRest } from './standstill'
 import { alreadyMoving } from './start'
 import type { Considered } from './start'
 import { joined, toldInTheirTurn, turnsToAdd } from './turns'
-import type { CheckResult, ClaimFrames, Finding, JudgedKey, ReadingCheck, ReadingLaw } from './types'
+import type { CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck, ReadingLaw } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -28,6 +28,11 @@ export interface Judgement {
   line: Line | null
   /** Claimed pace over the list's own, for drawing the claim's curve: 1 where they agree, null without a claimed size. */
   pace: number | null
+  /**
+   * Of a list of points: the law's places at any frames, whole or not, y as posted; `rate` > 1 runs the same motion faster from the same
+   * start. Missing where no law was fitted.
+   */
+  placesAt?: (frames: readonly number[], rate?: number) => Place[]
 }
 
 const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'

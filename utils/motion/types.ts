@@ -159,7 +159,11 @@ export interface JudgedKey {
 /** The path that points run along, y as posted, angles in degrees. A circle also names the angle of `reading` 0 and which way it counts. */
 export type FoundPath =
   | { kind: 'line', from: Place, to: Place, misfit: number }
-  | { kind: 'circle', centre: Place, radius: number, given: boolean, nearlyStraight: boolean, misfit: number }
+  | {
+    kind: 'circle', centre: Place, radius: number, given: boolean, nearlyStraight: boolean, misfit: number
+    /** Where `reading` 0 stands, degrees from the x axis towards the y axis as posted; +1 where readings grow that way round, −1 against it. */
+    zeroAt: number, counts: 1 | -1
+  }
   /** y = apex.y + bend · (x − apex.x)². */
   | { kind: 'parabola', apex: Place, bend: number, misfit: number }
 

@@ -1,0 +1,368 @@
+/**
+ * Lists of points with their truth: a motion by integration or school algebra, laid on a line, an arc or a parabola somewhere on the
+ * drawing, pencil and rounding in x and y, then at most one fault. Shares no code with the judge.
+ */
+import { GRAVITY, swung } from './motion'
+import { Chance } from './random'
+
+type PointLaw = 'odd-rule' | 'steady' | 'topple' | 'pendulum' | 'spin' | 'flight'
+
+export interface MadePoints {
+  family: string
+  // Written out here on purpose: the judge's own types are not imported.
+  request: {
+    law: PointLaw, fps: number, measure: 'point', unit: string, slop: number, tolerance: number
+    keys: { frame: number, x: number, y: number }[]
+    yAxis?: 'down' | 'up', path?: 'line' | 'circle' | 'parabola', pivot?: { x: number, y: number }
+    subject?: { shape: 'rod', height: number } | { shape: 'bob', length: number } | { unitsPerMetre: number }
+  }
+  truth: {
+    kind: 'clean' | 'misplaced' | 'off-path' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'undecided'
+    /** Empty for the whole list. */
+    frames: number[]
+    /** Metres for a body, units per metre for a path. */
+    size?: number
+    reads?: string | null
+    covers?: number
+  }
+}
+
+export type PointFamily =
+  | 'clean' | 'misplaced' | 'off-path' | 'held' | 'skipped' | 'wrong-scale' | 'no-path' | 'short'
+  | 'even' | 'ease' | 'straight' | 'slowing' | 'falling-line'
+
+interface Place { x: number, y: number }
+
+/** A motion on paper, y up. `at` takes frames, whole or not, `last` at most. */
+interface Motion {
+  at(frame: number): Place
+  last: number
+  turns: boolean
+  /** Fastest turn per frame, radians: what is drawn too seldom isn't drawn at all. */
+  fastest: number
+  size?: number
+  covers?: number
+  pivot?: Place
+  path: 'line' | 'circle' | 'parabola'
+}
+
+/** Angles at whole frames with straight pieces between them: only whole frames and small shifts along the path are asked for. */
+function between(readings: number[], frame: number): number {
+  const i = Math.max(0, Math.min(readings.length - 2, Math.floor(frame)))
+  return (readings[i] as number) + (frame - i) * ((readings[i + 1] as number) - (readings[i] as number))
+}
+
+function turning(chance: Chance, angles: number[], hanging: boolean): Omit<Motion, 'turns' | 'fastest'> {
+  const radius = chance.spread(70, 900)
+  const pivot = { x: chance.between(-500, 500), y: chance.between(-500, 500) }
+  const side = chance.one([1, -1])
+  const up = hanging ? -1 : 1
+  return {
+    last: angles.length - 1, path: 'circle', pivot,
+    at: frame => ({ x: pivot.x + side * radius * Math.sin(between(angles, frame)), y: pivot.y + up * radius * Math.cos(between(angles, frame)) }),
+  }
+}
+
+function toppleMotion(chance: Chance, fps: number, size: number): Motion {
+  const kSquared = GRAVITY / (2 * size / 3)
+  const k = Math.sqrt(kSquared)
+  const rest = chance.next() < 0.6
+  const lean = chance.between(1, 12) * Math.PI / 180
+  const end = chance.between(50, 92) * Math.PI / 180
+  const angles = swung(1, kSquared, lean, rest ? 0 : k * chance.between(0.02, 0.5), fps, Math.ceil(8 / k * fps), end)
+  return { ...turning(chance, angles, false), turns: false, size, covers: (end - lean) / (Math.PI / 2 - lean), fastest: 1.4 * k / fps }
+}
+
+function swingMotion(chance: Chance, fps: number, size: number): Motion {
+  const k = Math.sqrt(GRAVITY / size)
+  const amplitude = chance.between(15, 75) * Math.PI / 180
+  const start = chance.one([amplitude, 0, amplitude * chance.between(-0.8, 0.8)])
+  const turn = chance.one([1, -1]) * 2 * k * Math.sqrt(Math.max(0, Math.sin(amplitude / 2) ** 2 - Math.sin(start / 2) ** 2))
+  const swings = chance.between(0.6, 2)
+  const frames = Math.round(swings * 2 * Math.PI / k * (1 + amplitude * amplitude / 16) * fps)
+  return { ...turning(chance, swung(-1, k * k, start, turn, fps, frames), true), turns: true, size, covers: swings, fastest: k / fps }
+}
+
+/** Distances laid along a straight line or an arc. */
+function laid(chance: Chance, distances: number[], path: 'line' | 'circle'): Omit<Motion, 'turns'> {
+  const start = { x: chance.between(-500, 500), y: chance.between(-500, 500) }
+  // Steep enough to fall, or any way at all for what is only moved.
+  const heading = chance.between(0, 2 * Math.PI)
+  if (path === 'line') {
+    return {
+      last: distances.length - 1, fastest: 0, path,
+      at: (frame) => {
+        const d = between(distances, frame)
+        return { x: start.x + d * Math.cos(heading), y: start.y + d * Math.sin(heading) }
+      },
+    }
+  }
+  const length = Math.max(...distances) - Math.min(...distances)
+  const radius = length / chance.between(0.8, 4)
+  return {
+    last: distances.length - 1, fastest: 0, path, pivot: start,
+    at: (frame) => {
+      const angle = heading + between(distances, frame) / radius
+      return { x: start.x + radius * Math.cos(angle), y: start.y + radius * Math.sin(angle) }
+    },
+  }
+}
+
+function fallDistances(chance: Chance, frames: number): { distances: number[], turns: boolean, perFrame: number } {
+  const travel = chance.spread(80, 2000)
+  const way = chance.one(['rest', 'rest', 'pushed', 'apex'] as const)
+  const apex = way === 'rest' ? 0 : way === 'apex' ? frames * chance.between(0.15, 0.6) : -frames * chance.between(0.1, 1)
+  const a = travel / (Math.max(frames - apex, apex) ** 2 - (way === 'apex' ? 0 : apex * apex))
+  return { distances: Array.from({ length: frames + 1 }, (_, i) => a * ((i - apex) ** 2)), turns: way === 'apex', perFrame: 2 * a }
+}
+
+function throwMotion(chance: Chance, frames: number, fps: number): Motion & { scale: number } {
+  const [sideways, height] = [chance.spread(80, 1500) * chance.one([1, -1]), chance.spread(80, 900)]
+  // The apex may lie before, in or after the list.
+  const apex = frames * chance.one([0, chance.between(0.2, 0.8), -chance.between(0.1, 0.6), 1])
+  const far = Math.max(Math.abs(frames - apex), Math.abs(apex))
+  const a = height / (far * far)
+  const start = { x: chance.between(-500, 500), y: chance.between(-500, 500) }
+  return {
+    last: frames, turns: false, fastest: 0, path: 'parabola', scale: 2 * a * fps * fps / GRAVITY,
+    at: frame => ({ x: start.x + sideways * frame / frames, y: start.y - a * (frame - apex) ** 2 }),
+  }
+}
+
+const ease = (u: number) => u * u * (3 - 2 * u)
+
+/** Motions that claim a law they don't keep. */
+function otherMotion(chance: Chance, family: PointFamily, law: PointLaw, frames: number): Motion | null {
+  if (law === 'flight') {
+    const dx = chance.spread(150, 1200) * chance.one([1, -1])
+    const dy = chance.spread(100, 700)
+    const course = (x: (u: number) => number, y: (u: number) => number, path: Motion['path']): Motion =>
+      ({ last: frames, turns: false, fastest: 0, path, at: frame => ({ x: dx * x(frame / frames), y: dy * y(frame / frames) }) })
+    switch (family) {
+      case 'straight': return course(u => u, u => -u, 'line')
+      case 'falling-line': return course(u => u * u, u => -u * u, 'line')
+      case 'slowing': {
+        const drag = chance.between(0.8, 2.5)
+        return course(u => (1 - Math.exp(-drag * u)) / (1 - Math.exp(-drag)), u => 1.5 * u - 2.5 * u * u, 'parabola')
+      }
+      case 'ease': return course(u => u, u => Math.sin(Math.PI * ease(u)) * 0.8 - ease(u), 'parabola')
+      default: return null
+    }
+  }
+  if (law === 'topple' || law === 'pendulum') {
+    if (family === 'straight') return { ...laid(chance, Array.from({ length: frames + 1 }, (_, i) => 40 * i), 'line'), turns: false }
+    if (family !== 'even') return null
+    const [from, to] = law === 'topple' ? [chance.between(2, 10), chance.between(70, 88)] : [-chance.between(20, 60), chance.between(20, 60)]
+    const angles = Array.from({ length: frames + 1 }, (_, i) => (from + (to - from) * i / frames) * Math.PI / 180)
+    return { ...turning(chance, angles, law === 'pendulum'), turns: false }  as Motion
+  }
+  const travel = chance.spread(150, 1500)
+  const shape = family === 'even' ? (u: number) => u : family === 'ease' ? ease : null
+  return shape && { ...laid(chance, Array.from({ length: frames + 1 }, (_, i) => travel * shape(i / frames)), 'line'), turns: false }
+}
+
+function motionFor(chance: Chance, family: PointFamily, law: PointLaw, fps: number, frames: number): (Motion & { scale?: number }) | null {
+  if (family === 'short') {
+    const tiny = chance.between(0.2, 0.8)
+    return { ...laid(chance, Array.from({ length: frames + 1 }, (_, i) => tiny * i / frames), 'line'), turns: false }
+  }
+  const other = otherMotion(chance, family, law, frames)
+  if (other) return other
+  if (['even', 'ease', 'straight', 'slowing', 'falling-line'].includes(family)) return null
+  const path = chance.next() < 0.7 ? 'line' : 'circle'
+  switch (law) {
+    case 'topple': return toppleMotion(chance, fps, chance.spread(0.15, 40))
+    case 'pendulum': return swingMotion(chance, fps, chance.spread(0.15, 40))
+    case 'flight': return throwMotion(chance, frames, fps)
+    case 'odd-rule': {
+      const { distances, turns, perFrame } = fallDistances(chance, frames)
+      return { ...laid(chance, distances, path), turns, scale: perFrame * fps * fps / GRAVITY }
+    }
+    case 'steady': {
+      const gap = chance.spread(4, 50)
+      return { ...laid(chance, Array.from({ length: frames + 1 }, (_, i) => gap * i), path), turns: false }
+    }
+    case 'spin': {
+      const gap = chance.between(3, 30) * Math.PI / 180
+      return { ...turning(chance, Array.from({ length: frames + 1 }, (_, i) => gap * i), false), turns: false, fastest: gap }
+    }
+  }
+}
+
+const apart = (p: Place, q: Place) => Math.hypot(p.x - q.x, p.y - q.y)
+
+/** What the trade lets pass at each drawing of the exact motion: slop and a tenth of the gaps around it. */
+function allowancesOf(places: Place[], slop: number): number[] {
+  return places.map((place, i) => {
+    const left = i > 0 ? apart(place, places[i - 1] as Place) : -1
+    const right = i < places.length - 1 ? apart(place, places[i + 1] as Place) : -1
+    return slop + 0.1 * (left < 0 ? right : right < 0 ? left : (left + right) / 2)
+  })
+}
+
+/** The way the motion goes at a frame, a unit long; null where it stands. */
+function headingOf(motion: Motion, frame: number): Place | null {
+  const [p, q] = [motion.at(Math.max(0, frame - 0.5)), motion.at(Math.min(motion.last, frame + 0.5))]
+  const length = apart(p, q)
+  return length > 1e-6 ? { x: (q.x - p.x) / length, y: (q.y - p.y) / length } : null
+}
+
+/** Moves along the path by `by` drawing units, by finding the frame that is so far away. Null beyond half a neighbouring gap. */
+function slid(motion: Motion, frame: number, by: number, room: number): Place | null {
+  const from = motion.at(frame)
+  const way = Math.sign(by)
+  for (let step = 0.02; step < room; step += 0.02) {
+    const at = frame + way * step
+    if (at < 0 || at > motion.last) return null
+    const place = motion.at(at)
+    if (apart(place, from) >= Math.abs(by)) return place
+  }
+  return null
+}
+
+function attempt(chance: Chance, family: PointFamily, law: PointLaw): MadePoints | null {
+  const fps = chance.one([24, 24, 24, 12, 25, 30, 60])
+  const step = chance.one([0.5, 1])
+  const slop = step === 0.5 ? 1 : 1.5
+  const uneven = chance.next() < 0.2
+  const every = chance.whole(1, 3)
+  const motion = motionFor(chance, family, law, fps, chance.whole(9, 36) * every)
+  if (!motion) return null
+  let at = [0]
+  for (let next = uneven ? chance.whole(1, 3) : every; next <= motion.last; next += uneven ? chance.whole(1, 3) : every) at.push(next)
+  if (at.length > 50) at = at.slice(at.length - 50)
+  if (at.length < 9) return null
+  const longest = Math.max(...at.slice(1).map((frame, i) => frame - (at[i] as number)))
+  if (motion.fastest * longest > 0.75) return null
+  const truth: MadePoints['truth'] = { kind: 'clean', frames: [], covers: motion.covers }
+  const first = chance.one([0, 1, 101, 1001])
+  const frameOf = (i: number) => first + (at[i] as number) - (at[0] as number)
+
+  let delay = (_i: number) => 0
+  let from = -1
+  if (family === 'held' || family === 'skipped') {
+    from = chance.whole(3, at.length - 4)
+    const exposure = family === 'held' ? (at[from] as number) - (at[from - 1] as number) : (at[from] as number) - (at[from + 1] as number)
+    if (family === 'skipped') at = at.slice(0, -1)
+    delay = i => (i >= from ? exposure : 0)
+    truth.kind = family
+    truth.frames = [frameOf(from)]
+  }
+  if (at.some((frame, i) => frame - delay(i) > motion.last)) return null
+  const plain = at.map(frame => motion.at(frame))
+  const exact = at.map((frame, i) => motion.at(frame - delay(i)))
+  const allowed = allowancesOf(plain, slop)
+  if (from >= 0 && apart(exact[from] as Place, plain[from] as Place) < 3 * (allowed[from] as number)) return null
+
+  const bad = family === 'misplaced' || family === 'off-path' ? chance.whole(1, 2) : 0
+  const chosen: number[] = []
+  for (let tries = 0; tries < 40 && chosen.length < bad; tries++) {
+    const i = chance.whole(2, at.length - 3)
+    if (chosen.some(other => Math.abs(other - i) < 2)) continue
+    const heading = headingOf(motion, at[i] as number)
+    const by = chance.one([1, -1]) * (allowed[i] as number) * chance.between(3.2, 7)
+    if (!heading) continue
+    const place = family === 'off-path'
+      ? { x: (exact[i] as Place).x - by * heading.y, y: (exact[i] as Place).y + by * heading.x }
+      : slid(motion, at[i] as number, by, 0.8 * Math.min((at[i] as number) - (at[i - 1] as number), (at[i + 1] as number) - (at[i] as number)))
+    if (!place) continue
+    exact[i] = place
+    chosen.push(i)
+  }
+  if (chosen.length < bad) return null
+  if (bad > 0) {
+    truth.kind = family as 'misplaced' | 'off-path'
+    truth.frames = chosen.sort((a, b) => a - b).map(frameOf)
+  }
+  if (family === 'short') truth.kind = 'undecided'
+  if (family === 'no-path') truth.kind = 'off-path'
+  if (['even', 'ease', 'straight', 'slowing', 'falling-line'].includes(family)) {
+    truth.kind = family === 'straight' && law !== 'flight' ? 'off-path' : 'wrong-law'
+    truth.reads = law === 'flight' ? (family === 'straight' ? 'steady' : family === 'falling-line' ? 'odd-rule' : null) : family === 'even' ? 'steady' : null
+  }
+
+  const yAxis = chance.one(['down', 'up'] as const)
+  const up = yAxis === 'up' ? 1 : -1
+  const corner = { x: chance.between(-200, 2000), y: chance.between(-200, 2000) }
+  const part = chance.between(0.2, 0.6)
+  const room = slop - step * 0.71
+  const posted = exact.map(({ x, y }) => {
+    const reach = Math.min(room, Math.abs(chance.bell()) * slop * part * 0.6)
+    const turn = chance.between(0, 2 * Math.PI)
+    const rounded = (value: number) => Number((Math.round(value / step) * step).toFixed(3))
+    return { x: rounded(corner.x + x + reach * Math.cos(turn)), y: rounded(corner.y + up * (y + reach * Math.sin(turn))) }
+  })
+  const request: MadePoints['request'] = {
+    law, fps, measure: 'point', unit: 'px', slop, tolerance: 0.1, yAxis,
+    keys: posted.map((place, i) => ({ frame: frameOf(i), ...place })),
+  }
+  if (!claimPath(chance, family, law, motion, request, corner, up)) return null
+  if (!claimSize(chance, family, law, motion, request, truth)) return null
+  return { family: `${law}: ${family}`, request, truth }
+}
+
+/** What the claim says of the path: as little as the law lets it, or its kind, or its pivot. */
+function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: Motion, request: MadePoints['request'], corner: Place, up: number): boolean {
+  const named = chance.next() < 0.5
+  if (family === 'no-path') {
+    // An arc that is claimed to be a line.
+    if (motion.path !== 'circle') return false
+    request.path = 'line'
+    return true
+  }
+  if (law === 'flight' || family === 'short') return true
+  if (law === 'odd-rule' || law === 'steady') {
+    if (motion.path === 'circle' || named) request.path = motion.path === 'circle' ? 'circle' : 'line'
+    return true
+  }
+  if (named && motion.pivot) request.pivot = { x: corner.x + motion.pivot.x, y: corner.y + up * motion.pivot.y }
+  return true
+}
+
+function claimSize(
+  chance: Chance, family: PointFamily, law: PointLaw, motion: Motion & { scale?: number }, request: MadePoints['request'], truth: MadePoints['truth'],
+): boolean {
+  const factor = family === 'wrong-scale' ? chance.one([3, 6, 1 / 3, 1 / 6]) : 1
+  if (family === 'wrong-scale') truth.kind = 'wrong-scale'
+  else if (chance.next() < 0.6 || !['clean', 'misplaced', 'off-path', 'held', 'skipped'].includes(family)) {
+    truth.size = motion.size
+    return true
+  }
+  if (motion.size !== undefined && (law === 'topple' || law === 'pendulum')) {
+    truth.size = motion.size
+    request.subject = law === 'topple' ? { shape: 'rod', height: motion.size * factor } : { shape: 'bob', length: motion.size * factor }
+    return true
+  }
+  if (motion.scale === undefined) return family !== 'wrong-scale'
+  if (law === 'odd-rule') {
+    // Named with its slope: an arc has none of its own.
+    request.subject = { unitsPerMetre: motion.scale * factor, slope: 90 } as MadePoints['request']['subject']
+    return true
+  }
+  request.subject = { unitsPerMetre: motion.scale * factor }
+  return true
+}
+
+export const POINT_PLAN: [PointFamily, PointLaw][] = [
+  ['clean', 'odd-rule'], ['clean', 'steady'], ['clean', 'topple'], ['clean', 'pendulum'], ['clean', 'spin'], ['clean', 'flight'], ['clean', 'flight'],
+  ['misplaced', 'odd-rule'], ['misplaced', 'steady'], ['misplaced', 'topple'], ['misplaced', 'pendulum'], ['misplaced', 'flight'],
+  ['off-path', 'odd-rule'], ['off-path', 'steady'], ['off-path', 'topple'], ['off-path', 'pendulum'], ['off-path', 'spin'], ['off-path', 'flight'],
+  ['held', 'odd-rule'], ['held', 'topple'], ['held', 'pendulum'], ['held', 'flight'],
+  ['skipped', 'odd-rule'], ['skipped', 'topple'], ['skipped', 'pendulum'], ['skipped', 'flight'],
+  ['wrong-scale', 'odd-rule'], ['wrong-scale', 'topple'], ['wrong-scale', 'pendulum'], ['wrong-scale', 'flight'],
+  ['no-path', 'odd-rule'], ['no-path', 'steady'], ['straight', 'topple'], ['straight', 'pendulum'],
+  ['even', 'odd-rule'], ['even', 'topple'], ['even', 'pendulum'], ['ease', 'odd-rule'],
+  ['straight', 'flight'], ['falling-line', 'flight'], ['slowing', 'flight'], ['ease', 'flight'],
+  ['short', 'odd-rule'], ['short', 'flight'],
+]
+
+/** `count` lists, every family in turn, from one seed. */
+export function makePointLists(count: number, seed: number, plan: readonly [PointFamily, PointLaw][] = POINT_PLAN): MadePoints[] {
+  const lists: MadePoints[] = []
+  for (let i = 0; lists.length < count; i++) {
+    const [family, law] = plan[lists.length % plan.length] as [PointFamily, PointLaw]
+    const made = attempt(new Chance(seed * 1_000_003 + i), family, law)
+    if (made) lists.push(made)
+  }
+  return lists
+}
