@@ -2,7 +2,7 @@
 import { judgePoints } from './points'
 import { judgeReadings } from './readings'
 import type { Judgement } from './readings'
-import { judgeSpans } from './spans'
+import { judgeSpans } from './spans/index'
 import type { CheckRequest, CheckResult } from './types'
 
 /**

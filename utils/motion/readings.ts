@@ -20,7 +20,7 @@ import { canRest } from './standstill'
 import { alreadyMoving } from './start'
 import type { Considered } from './start'
 import { joined, toldInTheirTurn, turnsToAdd } from './turns'
-import type { CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck, ReadingLaw } from './types'
+import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck, ReadingLaw } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -33,6 +33,8 @@ export interface Judgement {
    * start. Missing where no law was fitted.
    */
   placesAt?: (frames: readonly number[], rate?: number) => Place[]
+  /** Of a divided list: every span as the list of its own that it was judged as, for drawing each line. */
+  parts?: { request: CheckRequest, judgement: Judgement }[]
 }
 
 const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
