@@ -2,8 +2,10 @@
 import { judge } from '../../utils/motion'
 import type { ReadingCheck } from '../../utils/motion'
 import { makeLists } from './lists/make'
+import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
 import { scoreLists } from './judgeScore'
 import type { Score } from './judgeScore'
+import { scoreSpans, spanTable } from './spanScore'
 
 export interface JudgeBench {
   score: Score
@@ -64,4 +66,5 @@ export function runJudgeBench(count = 2000, seed = 7): JudgeBench {
 
 export default async function run(): Promise<void> {
   console.log(runJudgeBench().table)
+  console.log(`\n${spanTable(scoreSpans(makeSpans(24 * SPAN_ROUND, 7)))}`)
 }

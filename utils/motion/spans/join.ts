@@ -4,6 +4,7 @@ import type { Judgement } from '../readings'
 import type { CheckRequest, CheckResult, Finding, FindingKind, JudgedKey, JudgedSpan, Key, PointKey, Verdict } from '../types'
 import type { JointJudgement } from './joint'
 import type { JudgedPart } from './judgePart'
+import { rootMean } from './rootMean'
 
 /** One judgement of the whole list. `joints` has an entry for every two neighbours among `parts`. */
 export function joined(request: CheckRequest, parts: JudgedPart[], joints: JointJudgement[]): Judgement {
@@ -95,7 +96,6 @@ function inListOrder(findings: Finding[]): Finding[] {
 }
 
 function spanOf({ span, judgement: { result }, request }: JudgedPart, settled: ReadonlySet<number>): JudgedSpan {
-  const strains = result.keys.flatMap(({ offset, allowance, breaks }) => (offset === null || !allowance || breaks ? [] : [(offset / allowance) ** 2]))
   // A drawing that the joint answers for is no fault of the span.
   const clear = result.findings.length > 0
     && result.findings.every(({ kind, frames: [frame] }) => frame !== undefined && OF_ONE_DRAWING.includes(kind) && settled.has(frame))
@@ -103,7 +103,7 @@ function spanOf({ span, judgement: { result }, request }: JudgedPart, settled: R
   return {
     from: request.keys[0]?.frame ?? span.from, to: request.keys[request.keys.length - 1]?.frame ?? span.to,
     law: span.law, contact: span.contact === true, verdict: clear ? 'holds' : result.verdict, reason: result.reason,
-    misfit: own?.misfit ?? (strains.length > 0 ? Math.sqrt(strains.reduce((sum, value) => sum + value, 0) / strains.length) : null),
+    misfit: own?.misfit ?? (result.keys.some(({ law }) => law !== null) ? rootMean(result.keys) : null),
     readsAs: result.readsAs, size: result.size, figures: result.figures ?? [],
   }
 }

@@ -1,27 +1,33 @@
 /** One span judged as a list of its own. */
-import { oneCaseDown } from './words'
+import { misplacedFinding } from '../findings'
+import { MOST_TOGETHER, longestRun } from '../hypotheses'
 import { judgeKeys } from '../perKey'
 import { judgePoints } from '../points'
 import { judgeReadings } from '../readings'
 import type { Judgement } from '../readings'
 import { seriesOf } from '../series'
-import type { CheckRequest, CheckResult, ReadingCheck } from '../types'
+import type { CheckRequest, CheckResult, JudgedKey, ReadingCheck } from '../types'
 import type { Part } from './divide'
+import { rootMean } from './rootMean'
+import { oneCaseDown } from './words'
 
 /** What the judges of whole lists are promised: the contract lets nothing shorter through. */
 const CHECKED_KEYS = 3
 
 export interface JudgedPart extends Part { judgement: Judgement }
 
-/** Judges a part by the judge of its measure. A span that stands still is even spacing of no gap: within a list that is a motion like any other. */
+/** Judges a part by the judge of its measure. */
 export function judgePart(part: Part): JudgedPart {
-  const { request } = part
-  const still = request.measure === 'point' || request.law !== 'steady' ? null : standing(request)
-  if (still) return { ...part, judgement: still }
+  const judgement = judgeAlone(part.request)
+  return { ...part, judgement: named(judgement, part) }
+}
+
+function judgeAlone(request: CheckRequest): Judgement {
   const judgement = request.keys.length < CHECKED_KEYS
     ? tooFew(request)
     : request.measure === 'point' ? judgePoints(request) : judgeReadings(request)
-  return { ...part, judgement: named(judgement, part) }
+  if (judgement.result.verdict !== 'undecided' || request.measure === 'point' || request.law !== 'steady') return judgement
+  return standing(request) ?? judgement
 }
 
 function tooFew({ keys }: CheckRequest): Judgement {
@@ -41,22 +47,28 @@ function gapBetween(here: CheckRequest['keys'][number], next: CheckRequest['keys
   return next && 'reading' in here && 'reading' in next ? next.reading - here.reading : null
 }
 
-/** The judgement of a span whose drawings all lie within the slop of their middle; null for any other. */
+/**
+ * The judgement of a span that stands still: even spacing of no gap, within a list a motion like any other. Null where its drawings don't
+ * keep to their middle, but for a few lone ones.
+ */
 function standing(request: ReadingCheck): Judgement | null {
-  const readings = request.keys.map(({ reading }) => reading)
-  const low = Math.min(...readings)
-  const high = Math.max(...readings)
-  if (readings.length < 2 || high - low > 2 * request.slop) return null
-  const middle = low + (high - low) / 2
   const series = seriesOf(request)
+  const ordered = series.y.slice().sort()
+  const median = ordered[ordered.length >> 1] ?? 0
+  const near = ordered.filter(reading => Math.abs(reading - median) <= 1.5 * request.slop)
+  if (near.length < 2) return null
+  const middle = near.reduce((sum, reading) => sum + reading / near.length, 0)
   const none = new Float64Array(series.n)
   const keys = judgeKeys(request, series, { value: none.map(() => middle), rate: none, columns: [] })
-  if (keys.some(({ breaks }) => breaks)) return null
+  const off = keys.flatMap(({ breaks }, i) => (breaks ? [i] : []))
+  if (off.length > series.n / 4 || longestRun(off) > MOST_TOGETHER) return null
   return {
     line: { law: 'steady', numbers: [middle, 0], lag: 0 },
     pace: null,
     result: {
-      verdict: 'holds', reason: null, keys, findings: [], readsAs: [{ law: 'steady', misfit: 0 }], size: null, claim: null,
+      verdict: off.length > 0 ? 'breaks' : 'holds', reason: null, keys,
+      findings: off.map(i => misplacedFinding(keys[i] as JudgedKey, request.unit)),
+      readsAs: [{ law: 'steady', misfit: rootMean(keys) }], size: null, claim: null,
       ruled: { fit: request.keys.map(({ frame }) => ({ frame, reading: middle })), claim: null },
     },
   }
