@@ -4,7 +4,7 @@
  * the judge.
  */
 import { Chance } from './random'
-import { GRAVITY, swung } from './motion'
+import { swung } from './motion'
 
 type SpanLaw = 'odd-rule' | 'slow-in' | 'steady' | 'topple' | 'pendulum'
 
