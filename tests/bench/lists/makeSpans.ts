@@ -57,9 +57,6 @@ function turning(law: 'topple' | 'pendulum', start: number, turn: number, kPerEx
   return { law, exposures, contact: false, at, speed }
 }
 
-/** The law that a slowing to a stop is claimed under. */
-const SLOWING: SpanLaw = 'odd-rule'
-
 type Motion = 'out-steady-in' | 'out-steady' | 'steady-in' | 'fall-contact-steady' | 'fall-contact-rise' | 'fall-contact-rest'
   | 'topple-steady' | 'swing-steady' | 'steady-swing'
 
@@ -79,7 +76,7 @@ function piecesFor(chance: Chance, motion: Motion): { pieces: Piece[], measure: 
     case 'out-steady-in': {
       const first = even('odd-rule', start, 0, speed / n1, n1)
       const second = even('steady', first.at(n1), speed, 0, n2)
-      return { measure: 'distance', pieces: [first, second, even(SLOWING, second.at(n2), speed, -speed / n3, n3)] }
+      return { measure: 'distance', pieces: [first, second, even('slow-in', second.at(n2), speed, -speed / n3, n3)] }
     }
     case 'out-steady': {
       const first = even('odd-rule', start, 0, speed / n1, n1)
@@ -87,7 +84,7 @@ function piecesFor(chance: Chance, motion: Motion): { pieces: Piece[], measure: 
     }
     case 'steady-in': {
       const first = even('steady', start, speed, 0, n1)
-      return { measure: 'distance', pieces: [first, even(SLOWING, first.at(n1), speed, -speed / n2, n2)] }
+      return { measure: 'distance', pieces: [first, even('slow-in', first.at(n1), speed, -speed / n2, n2)] }
     }
     case 'fall-contact-steady': {
       const fall = even('odd-rule', start, 0, speed / n1, n1, true)
@@ -201,7 +198,7 @@ function showsJoints(pieces: readonly Piece[], slop: number): boolean {
   })
 }
 
-/** Makes the speed or the position jump at one joint: from there on, or up to there where what follows is a swing, whose angles mean something. */
+/** Makes the speed or the position jump at one joint: from there on, or up to there where what follows swings or stops and would be another motion. */
 function breakJoint(chance: Chance, exact: number[], pieces: Piece[], joints: number[], which: number, ofSpeed: boolean, paper: Paper): void {
   const at = joints[which] as number
   const before = pieces[which] as Piece
@@ -210,7 +207,7 @@ function breakJoint(chance: Chance, exact: number[], pieces: Piece[], joints: nu
   const jump = chance.one([1, -1]) * chance.between(4, 9) * (paper.slop + 0.05 * (Math.abs(speeds[0]) + Math.abs(speeds[1])))
   // Around a contact, lines that cross within an exposure do meet; a position that jumps there jumps further than that.
   const size = before.contact ? jump + Math.sign(jump) * 1.2 * Math.abs(speeds[1] - speeds[0]) : jump
-  const fromStart = after.law === 'pendulum' || after.law === 'topple'
+  const fromStart = pieces.slice(which + 1).some(({ law }) => law !== 'steady' && law !== 'odd-rule')
   exact.forEach((reading, place) => {
     if (fromStart ? place < at : place > at) exact[place] = reading + size * (ofSpeed ? place - at : 1)
   })
