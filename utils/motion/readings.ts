@@ -11,7 +11,7 @@ import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
 import { judgeKeys, unjudged } from './perKey'
-import { ruledFromRest } from './ruledFromRest'
+import { claimFromRest } from './claimFromRest'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
 import { scaleOf } from './size'
@@ -92,7 +92,7 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
     const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
     return {
       line, pace: null,
-      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: ruledFromRest(request, series) } },
+      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: claimFromRest(request, series) } },
     }
   }
 

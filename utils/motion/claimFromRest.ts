@@ -10,7 +10,7 @@ import type { ReadingCheck, Key, Law } from './types'
  * The claimed body from rest at the first posted reading, on the list's own frames, in reading units. Null where the claim
  * names no size, or where nothing would start by itself (balance, hanging rest, a steady move).
  */
-export function ruledFromRest(request: ReadingCheck, series: Series): Key[] | null {
+export function claimFromRest(request: ReadingCheck, series: Series): Key[] | null {
   const readings = claimedReadings(request, series)
   return readings && request.keys.map((key, i) => ({ frame: key.frame, reading: readings[i] as number }))
 }

@@ -1,0 +1,26 @@
+/** What a made list is: a check as it would be sent, and the truth about it. */
+
+export interface TruthOf {
+  kind: 'clean' | 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'backward' | 'undecided'
+  frames: number[]
+  /** Metres, height of the rod or length of the bob. */
+  size?: number
+  reads?: string | null
+  /** Share of the way from start to flat, or of a full swing, that the list covers; where it applies. */
+  covers?: number
+}
+
+export interface MadeList {
+  family: string
+  // Written out here on purpose: the judge's own types are not imported.
+  request: {
+    law: 'odd-rule' | 'topple' | 'pendulum' | 'steady', fps: number, measure: 'angle' | 'distance' | 'arc', unit: string
+    slop: number, tolerance: number, keys: { frame: number, reading: number }[], radius?: number, zeroAt?: number
+    subject?: { shape: 'rod', height: number } | { shape: 'bob', length: number } | { unitsPerMetre: number }
+  }
+  truth: TruthOf
+}
+
+export type Family =
+  | 'clean' | 'misplaced' | 'misplaced-two' | 'held' | 'skipped' | 'wrong-scale' | 'backward'
+  | 'even' | 'ease' | 'fall-as-topple' | 'topple-as-fall' | 'short' | 'few'
