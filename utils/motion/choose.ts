@@ -96,12 +96,19 @@ export interface Choice {
   sigma: number
 }
 
-/** Fits every law that the measure can take and picks the claimed law's story. */
-export function weigh(series: Series, law: ReadingLaw, laws: readonly ReadingLaw[], told: readonly Story[], care: Care): Choice {
-  const others = laws.filter(other => other !== law).map((other) => {
+/** A law that the list is compared with, and its plain best. */
+export interface Rival { law: ReadingLaw, story: Story }
+
+/** The plain best of every law but the claimed one. */
+export function plainRivals(series: Series, law: ReadingLaw, laws: readonly ReadingLaw[], care: Care): Rival[] {
+  return laws.filter(other => other !== law).map((other) => {
     const { fit } = plainFit(series, LAWS[other], care, PASSING)
-    return { law: other, story: { out: [], shift: null, fit, breaking: 0 } satisfies Story }
+    return { law: other, story: { out: [], shift: null, fit, breaking: 0 } }
   })
+}
+
+/** Picks the claimed law's story, and sets the other laws beside it. */
+export function weigh(series: Series, law: ReadingLaw, others: readonly Rival[], told: readonly Story[], care: Care): Choice {
   const sigma = pencil([...told, ...others.map(other => other.story)], series.n, care)
   const story = cheapest(series, told, care, sigma)
   return {

@@ -9,11 +9,15 @@
 /** Below this the complement is taken as this: K stays finite (about 346), and no drawn motion lasts that long. */
 const LEAST_COMPLEMENT = 1e-300
 
+/** From 1e-300 the mean takes twelve steps. */
+const MOST_STEPS = 16
+
 /** The arithmetic-geometric steps for one m₁, kept for reuse over many arguments. */
 export interface Ladder {
   /** Complete integral K(m). */
   readonly quarter: number
   readonly steps: number
+  /** The first `steps` entries of these count. */
   readonly a: Float64Array
   readonly g: Float64Array
   readonly mean: number
@@ -26,21 +30,22 @@ export interface Ladder {
  */
 export function ladder(complement: number): Ladder {
   const m1 = Math.min(1, Math.max(LEAST_COMPLEMENT, complement))
-  const as: number[] = []
-  const gs: number[] = []
+  const as = new Float64Array(MOST_STEPS)
+  const gs = new Float64Array(MOST_STEPS)
   let a = 1
   let square = m1
   let mean = 1
-  for (let i = 0; i < 24; i++) {
+  let steps = 0
+  while (steps < MOST_STEPS) {
     const g = Math.sqrt(square)
-    as.push(a)
-    gs.push(g)
+    as[steps] = a
+    gs[steps++] = g
     mean = 0.5 * (a + g)
     if (Math.abs(a - g) <= 1e-9 * a) break
     square = a * g
     a = mean
   }
-  return { quarter: Math.PI / (2 * mean), steps: as.length, a: Float64Array.from(as), g: Float64Array.from(gs), mean, complement: m1 }
+  return { quarter: Math.PI / (2 * mean), steps, a: as, g: gs, mean, complement: m1 }
 }
 
 /**

@@ -26,13 +26,25 @@ export interface Effort {
 /** For the law that the list is judged by. */
 export const THOROUGH: Effort = { steps: 25, enough: 1e-7 }
 /** For a story that begins from a fit in hand. */
-export const BRIEF: Effort = { steps: 10, enough: 1e-5 }
+export const BRIEF: Effort = { steps: 10, enough: 1e-3 }
 /** For laws that are only there to be compared with: a misfit of thirty need not be known to the last digit. */
 export const PASSING: Effort = { steps: 8, enough: 0.02 }
 
 function confine(model: LawModel, series: Series, numbers: Float64Array): Float64Array {
   model.confine?.(series, numbers)
   return numbers
+}
+
+/** Numbers that have run to the edge of their range and that the list would have go further (b points downhill). */
+function atBound(model: LawModel, series: Series, numbers: Float64Array, b: Float64Array): number[] {
+  if (!model.confine) return []
+  const tried = confine(model, series, numbers.map((value, p) => value + Math.sign(b[p] as number) * 1e-6 * Math.max(1, Math.abs(value))))
+  return Array.from(tried.keys()).filter(p => b[p] !== 0 && tried[p] === numbers[p])
+}
+
+/** Takes a number out of a step: the others then look for their best without it, instead of being dragged along the edge. */
+function leaveOut(a: Float64Array, index: number, size: number): void {
+  for (let p = 0; p < size; p++) a[size * index + p] = a[size * p + index] = p === index ? 1 : 0
 }
 
 function costOf(trace: Trace, y: Float64Array, weights: Float64Array): number {
@@ -64,6 +76,13 @@ function normalOf(trace: Trace, y: Float64Array, weights: Float64Array, size: nu
   return { a, b }
 }
 
+/** What a full step saves if the law bends as its columns say: bᵀA⁻¹b. */
+function promised(move: Float64Array, b: Float64Array): number {
+  let sum = 0
+  for (let p = 0; p < b.length; p++) sum += (b[p] as number) * (move[p] as number)
+  return sum
+}
+
 /**
  * Levenberg–Marquardt from `from` (K. Levenberg, Quart. Appl. Math. 2 (1944) 164–168; D. W. Marquardt, SIAM J. 11 (1963) 431–441).
  * `x` are the times to use (shifted ones for a list with a repeated drawing). Linear laws take one step. Never throws; always returns
@@ -82,8 +101,11 @@ export function refine(
   let converged = false
   for (let step = 0; step < steps && !converged; step++) {
     let moved = false
+    const held = atBound(model, series, numbers, b)
+    for (const p of held) b[p] = 0
     for (let attempt = 0; attempt < 6; attempt++) {
       const damped = a.slice()
+      for (const p of held) leaveOut(damped, p, size)
       for (let p = 0; p < size; p++) damped[size * p + p] = (damped[size * p + p] as number) * (1 + damping)
       const move = solve3(damped, b, size)
       if (!move) {
@@ -91,13 +113,17 @@ export function refine(
         damping = Math.max(1e-6, damping * 20)
         continue
       }
+      // A near-undamped step knows what it can save: where that isn't worth having, this is the answer.
+      if (!model.linear && damping <= 1e-3 && promised(move, b) <= enough * cost) break
       const next = confine(model, series, numbers.map((value, p) => value + (move[p] as number)))
-      const nextTrace = model.trace(series, next, x, true)
+      // A first try mostly succeeds; after a refusal the columns can wait until the step is taken.
+      const first = attempt === 0
+      const nextTrace = model.trace(series, next, x, first)
       const nextCost = costOf(nextTrace, y, weights)
       if (nextCost <= cost) {
         converged = cost - nextCost <= enough * cost
         numbers = next
-        trace = nextTrace
+        trace = first ? nextTrace : model.trace(series, next, x, true)
         cost = nextCost
         damping = damping < 1e-7 ? 0 : damping / 10
         moved = true

@@ -145,8 +145,11 @@ function exposures(series: Series): number[] {
   return [...counts].sort((a, b) => b[1] - a[1] || a[0] - b[0]).slice(0, 6).map(([frames]) => frames / series.spanFrames)
 }
 
+/** `fit`: to the list as posted. `base`: to the list with its lone bad drawings smoothed over. */
+export interface Plain { fit: Fit, base: Fit }
+
 /** A plain fit of a law with lone bad drawings smoothed over at the start of the search. */
-export function plainFit(series: Series, model: LawModel, care: Care, effort: Effort): { fit: Fit, base: Fit } {
+export function plainFit(series: Series, model: LawModel, care: Care, effort: Effort = THOROUGH): Plain {
   const calm = smoothed(series.x, series.y, 2 * care.slop)
   const ones = new Float64Array(series.n).fill(1)
   const noticeable = care.slop + care.tolerance * typicalGap(series) + 3 * care.least
@@ -192,9 +195,9 @@ function hear(series: Series, model: LawModel, care: Care, told: Story[], candid
   }
 }
 
-/** Every story worth hearing under one law. The first is always "nothing happened". */
-export function stories(series: Series, model: LawModel, care: Care): Story[] {
-  const { fit, base } = plainFit(series, model, care, THOROUGH)
+/** Every story worth hearing under one law, given its `plainFit`. The first is always "nothing happened". */
+export function stories(series: Series, { fit, base }: Plain, care: Care): Story[] {
+  const { model } = fit
   const { n, y } = series
   const strained = strain(series, fit, care)
   let breaking = 0

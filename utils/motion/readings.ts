@@ -1,12 +1,12 @@
 /** A list of readings under one law, judged. */
-import { opine, ranked, weigh } from './choose'
+import { opine, plainRivals, ranked, weigh } from './choose'
+import type { Rival } from './choose'
 import { figuresOf } from './figures'
 import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
-import { badDrawings, stories } from './hypotheses'
-import type { Care, Story } from './hypotheses'
+import { badDrawings, plainFit, stories } from './hypotheses'
+import type { Care, Plain, Story } from './hypotheses'
 import { fromRest, fullNumbers } from './laws/fromRest'
 import { LAWS, LAW_WORDS, MEASURES, rivalsOf } from './laws/index'
-import type { LawModel } from './laws/model'
 import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
@@ -17,10 +17,10 @@ import type { Series } from './series'
 import { scaleOf } from './size'
 import type { Scale } from './size'
 import { canRest } from './standstill'
-import { alreadyMoving } from './start'
+import { alreadyMoving, beyondDoubt } from './start'
 import type { Considered } from './start'
 import { joined, toldInTheirTurn, turnsToAdd } from './turns'
-import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck, ReadingLaw } from './types'
+import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -62,18 +62,25 @@ function judgeRow(request: ReadingCheck): Judgement {
   if (!(range > 2 * request.slop)) return undecided(request, STILL)
 
   const care: Care = { slop: request.slop, tolerance: request.tolerance, least: roundingSpread(series.y) }
-  const free = consider(request, series, model, laws, care, range)
-  const { value: drawn } = free.choice.claimed.story.fit.trace
-  // Pencil alone can spread still drawings over the slop; what has to move is the line.
-  if (!(Math.max(...drawn) - Math.min(...drawn) > 2 * request.slop)) return undecided(request, STILL)
-  const atRest = resting && consider(request, series, fromRest(resting, free.choice.plain.fit.numbers), laws, care, range)
+  const rivals = plainRivals(series, request.law, laws, care)
+  const plain = plainFit(series, model, care)
+  const atRest = resting && consider(request, series, plainFit(series, fromRest(resting, plain.fit.numbers), care), rivals, care, range)
+  if (atRest && moves(atRest, care) && beyondDoubt(series, atRest, plain.fit, care)) return answer(request, series, atRest, care)
+  const free = consider(request, series, plain, rivals, care, range)
+  if (!moves(free, care)) return undecided(request, STILL)
   if (atRest && alreadyMoving(series, atRest, free, care)) return notAtRest(request, series, atRest, free, care)
   return answer(request, series, atRest ?? free, care)
 }
 
+/** Pencil alone can spread still drawings over the slop; what has to move is the line. */
+function moves({ choice }: Considered, { slop }: Care): boolean {
+  const { value } = choice.claimed.story.fit.trace
+  return Math.max(...value) - Math.min(...value) > 2 * slop
+}
+
 /** Holds a law, as it is or as it starts from rest, against a list beside every other that the measure can take. */
-function consider(request: ReadingCheck, series: Series, model: LawModel, laws: readonly ReadingLaw[], care: Care, range: number): Considered {
-  const choice = weigh(series, model.law, laws, stories(series, model, care), care)
+function consider(request: ReadingCheck, series: Series, plain: Plain, rivals: readonly Rival[], care: Care, range: number): Considered {
+  const choice = weigh(series, plain.fit.model.law, rivals, stories(series, plain, care), care)
   const { story } = choice.claimed
   const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
   return { choice, scale, opinion: opine(series, choice, care, range, scale) }
