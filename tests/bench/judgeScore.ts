@@ -28,7 +28,7 @@ export function isRight(list: MadeList, result: CheckResult): boolean {
   if (truth.kind === 'clean') return result.verdict === 'holds' && result.findings.length === 0
   if (result.findings.length === 0 || result.findings.some(finding => finding.kind !== truth.kind)) return false
   const told = result.findings.flatMap(finding => finding.frames).sort((a, b) => a - b)
-  if (truth.kind === 'misplaced' || truth.kind === 'backward') return told.join() === truth.frames.join()
+  if (truth.kind === 'misplaced' || truth.kind === 'backward' || truth.kind === 'not-at-rest') return told.join() === truth.frames.join()
   if (truth.kind === 'held' || truth.kind === 'skipped') {
     const place = (frame: number | undefined) => request.keys.findIndex(key => key.frame === frame)
     return told.length === 1 && Math.abs(place(told[0]) - place(truth.frames[0])) <= 1

@@ -1,7 +1,9 @@
 /** What a made list is: a check as it would be sent, and the truth about it. */
 
+export type Law = 'odd-rule' | 'topple' | 'pendulum' | 'steady'
+
 export interface TruthOf {
-  kind: 'clean' | 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'backward' | 'undecided'
+  kind: 'clean' | 'not-at-rest' | 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'backward' | 'undecided'
   frames: number[]
   /** Metres, height of the rod or length of the bob. */
   size?: number
@@ -14,8 +16,8 @@ export interface MadeList {
   family: string
   // Written out here on purpose: the judge's own types are not imported.
   request: {
-    law: 'odd-rule' | 'topple' | 'pendulum' | 'steady', fps: number, measure: 'angle' | 'distance' | 'arc', unit: string
-    slop: number, tolerance: number, keys: { frame: number, reading: number }[], radius?: number, zeroAt?: number
+    law: Law, fps: number, measure: 'angle' | 'distance' | 'arc', unit: string
+    slop: number, tolerance: number, keys: { frame: number, reading: number }[], radius?: number, zeroAt?: number, start?: 'rest'
     subject?: { shape: 'rod', height: number } | { shape: 'bob', length: number } | { unitsPerMetre: number }
   }
   truth: TruthOf

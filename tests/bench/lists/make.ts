@@ -7,7 +7,10 @@ import { Chance } from './random'
 
 export type { MadeList, TruthOf } from './made'
 
-const PLAN: [Family, MadeList['request']['law']][] = [
+/** Families with the law that is claimed, in the order in which they are made. */
+export type Plan = readonly (readonly [Family, MadeList['request']['law']])[]
+
+const PLAN: Plan = [
   ['clean', 'topple'], ['clean', 'topple'], ['clean', 'pendulum'], ['clean', 'pendulum'], ['clean', 'odd-rule'], ['clean', 'odd-rule'], ['clean', 'steady'],
   ['misplaced', 'topple'], ['misplaced', 'pendulum'], ['misplaced', 'odd-rule'], ['misplaced', 'steady'],
   ['misplaced-two', 'topple'], ['misplaced-two', 'pendulum'], ['misplaced-two', 'odd-rule'],
@@ -21,11 +24,11 @@ const PLAN: [Family, MadeList['request']['law']][] = [
   ['short', 'topple'], ['short', 'odd-rule'], ['few', 'topple'], ['few', 'odd-rule'], ['few', 'steady'],
 ]
 
-/** `count` lists, every family in turn, from one seed. */
-export function makeLists(count: number, seed: number): MadeList[] {
+/** `count` lists, every family of the plan in turn, from one seed. */
+export function makeLists(count: number, seed: number, plan = PLAN): MadeList[] {
   const lists: MadeList[] = []
   for (let i = 0; lists.length < count; i++) {
-    const [family, law] = PLAN[lists.length % PLAN.length] as [Family, MadeList['request']['law']]
+    const [family, law] = plan[lists.length % plan.length] as Plan[number]
     const made = attempt(new Chance(seed * 1_000_003 + i), family, law)
     if (made) lists.push(made)
   }

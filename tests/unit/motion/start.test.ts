@@ -4,8 +4,8 @@ import { describe, expect, it } from 'vitest'
 import { judge, judgeInDepth, lawCurve } from '../../../utils/motion'
 import type { ReadingCheck, CheckResult, Law } from '../../../utils/motion'
 import { GRAVITY, swung } from '../../bench/lists/motion'
-import { startLists } from './startLists'
-import type { StartList } from './startLists'
+import { startLists } from '../../bench/lists/start'
+import type { StartList } from '../../bench/lists/start'
 
 const DEGREE = 180 / Math.PI
 
@@ -19,7 +19,7 @@ function turning(law: 'topple' | 'pendulum', from: number, turn: number, frames:
 }
 
 const kinds = ({ findings }: CheckResult) => findings.map(({ kind }) => kind)
-const claimed = ({ before: _, ...request }: StartList): ReadingCheck => request
+const claimed = ({ before: _, size: __, ...request }: StartList): ReadingCheck => request
 
 describe('turning bodies', () => {
   it.each([['topple', 6, 24], ['pendulum', 40, 50], ['pendulum', -40, 50]] as const)('a %s let go at %d° holds, from rest', (law, from, frames) => {
