@@ -1,13 +1,15 @@
 /** A motion, an animator's exposures, pencil and rounding, then at most one fault. */
 import { backward, misplace } from './faults'
-import type { Family, MadeList, TruthOf } from './made'
+import type { Family, Kind, Law, MadeList, TruthOf } from './made'
 import { GRAVITY } from './motion'
 import { motionFor } from './exact'
 import { draw, exposuresFor, paperFor } from './paper'
 import type { Chance } from './random'
 
 /** One list of a family, or null where this throw of the dice gave no usable one. */
-export function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'topple' | 'pendulum' | 'steady'): MadeList | null {
+export function attempt(chance: Chance, named: Family, law: Law): MadeList | null {
+  const brief = named.endsWith('-brief')
+  const family = (brief ? named.slice(0, -'-brief'.length) : named) as Kind
   const turning = law === 'topple' || law === 'pendulum'
   const measure = turning || family === 'topple-as-fall' ? (chance.next() < 0.75 ? 'angle' : 'arc') : (chance.next() < 0.9 ? 'distance' : 'angle')
   const paper = paperFor(chance, measure)
@@ -28,7 +30,8 @@ export function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'toppl
   const gaps = at.slice(1).map((frame, i) => frame - (at[i] as number))
   const longest = Math.max(...gaps)
   if (family === 'few') at = at.slice(0, chance.whole(3, law === 'steady' ? 3 : 4))
-  else if (at.length < 8) return null
+  else if (at.length < 8 || (brief && at.length > 11)) return null
+  if (family === 'misplaced-many' && (at.length < 12 || at.length > 15)) return null
   // A swing drawn fewer than eight times per turn back and forth is not drawn at all.
   if (motion.law === 'pendulum' && motion.size !== undefined && Math.sqrt(GRAVITY / motion.size) * longest / paper.fps > 0.75) return null
   if (motion.law === 'topple' && motion.size !== undefined && Math.sqrt(GRAVITY * 1.5 / motion.size) * longest / paper.fps > 0.75) return null
@@ -52,7 +55,7 @@ export function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'toppl
     if (at.some((frame, i) => frame - delay(i) > last || frame - delay(i) < 0)) return null
     truth.kind = family
   }
-  const drawn = draw(chance, at, readings, paper, delay)
+  const drawn = draw(chance, at, readings, paper, delay, family === 'rough')
   const first = chance.one([0, 1, 101, 1001])
   const frameOf = (i: number) => first + (at[i] as number) - (at[0] as number)
   if (from >= 0) {
@@ -60,8 +63,9 @@ export function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'toppl
     if (moved < 3 * (drawn.allowance[from] as number)) return null
     truth.frames = [frameOf(from)]
   }
-  if (family === 'misplaced' || family === 'misplaced-two') {
-    if (!misplace(chance, drawn, family === 'misplaced' ? 1 : 2, motion.turns, paper, truth, frameOf)) return null
+  if (family === 'misplaced' || family === 'misplaced-two' || family === 'misplaced-many') {
+    const count = family === 'misplaced' ? 1 : family === 'misplaced-two' ? 2 : chance.whole(3, 4)
+    if (!misplace(chance, drawn, count, motion.turns, paper, truth, frameOf)) return null
   }
   if (family === 'backward' && motion.turns) return null
   if (family === 'backward' && !backward(chance, drawn, paper, truth, frameOf)) return null
@@ -88,5 +92,5 @@ export function attempt(chance: Chance, family: Family, law: 'odd-rule' | 'toppl
     }
     if (family === 'wrong-scale') truth.kind = 'wrong-scale'
   }
-  return { family: `${law}: ${family}`, request, truth }
+  return { family: `${law}: ${named}`, request, truth }
 }

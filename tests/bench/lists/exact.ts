@@ -1,5 +1,5 @@
 /** The motion that a list shows, exactly, at every whole frame. */
-import type { Family, MadeList } from './made'
+import type { Kind, Law } from './made'
 import { GRAVITY, swung } from './motion'
 import { toPaper } from './paper'
 import type { Paper } from './paper'
@@ -10,7 +10,7 @@ const DEGREE = 180 / Math.PI
 export interface Exact {
   /** Reading at every whole frame, before any pencil. */
   readings: number[]
-  law: 'odd-rule' | 'topple' | 'pendulum' | 'steady'
+  law: Law
   size?: number
   covers?: number
   /** True where the readings turn back on the way. */
@@ -56,7 +56,7 @@ function fallMotion(chance: Chance, keys: number, every: number): Exact {
   return { readings, law: 'odd-rule', turns: way === 'apex' }
 }
 
-export function motionFor(chance: Chance, family: Family, law: MadeList['request']['law'], paper: Paper, size: number): Exact | null {
+export function motionFor(chance: Chance, family: Kind, law: Law, paper: Paper, size: number): Exact | null {
   const keys = chance.whole(8, 36)
   const every = chance.whole(1, 4)
   const frames = keys * every

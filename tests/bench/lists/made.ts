@@ -23,6 +23,10 @@ export interface MadeList {
   truth: TruthOf
 }
 
-export type Family =
+export type Kind =
   | 'clean' | 'misplaced' | 'misplaced-two' | 'held' | 'skipped' | 'wrong-scale' | 'backward'
   | 'even' | 'ease' | 'fall-as-topple' | 'topple-as-fall' | 'short' | 'few'
+  // Hard ones: pencil over nearly the whole slop; three or four bad drawings among fewer than sixteen.
+  | 'rough' | 'misplaced-many'
+/** Brief ones have eight to eleven drawings. */
+export type Family = Kind | 'misplaced-brief' | 'held-brief' | 'skipped-brief' | 'ease-brief'

@@ -33,13 +33,18 @@ export function toPaper(angle: number, paper: Paper): number {
 
 export interface Drawn { frames: number[], exact: number[], reading: number[], allowance: number[] }
 
-/** Pencil and rounding. The pencil stays inside the slop: a bell or an even spread of some part of it. */
-export function draw(chance: Chance, at: number[], readings: number[], paper: Paper, delay: (i: number) => number): Drawn {
+/**
+ * Pencil and rounding. The pencil stays inside the slop: a bell or an even spread of some part of it; `rough`, an even spread over nearly
+ * all that rounding leaves.
+ */
+export function draw(
+  chance: Chance, at: number[], readings: number[], paper: Paper, delay: (i: number) => number, rough = false,
+): Drawn {
   const exact = at.map((frame, i) => readings[frame - delay(i)] as number)
   const plain = at.map(frame => readings[frame] as number)
-  const even = chance.next() < 0.5
-  const part = chance.between(0.2, 0.65)
   const room = paper.slop - paper.step / 2
+  const even = chance.next() < 0.5 || rough
+  const part = rough ? chance.between(0.85, 1) * room / paper.slop : chance.between(0.2, 0.65)
   const reading = exact.map((value) => {
     const pencil = even
       ? chance.between(-part, part) * paper.slop
