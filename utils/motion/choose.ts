@@ -129,6 +129,14 @@ function capped(series: Series, story: Story, sigma: number): number {
   return sum
 }
 
+/** Lists shorter than this can't spare two drawings at one end. */
+const A_DOZEN = 12
+
+/** In a short list, two drawings in a row off at an end, with none beyond them to hold, are the motion going its own way. */
+function leavesAtEnd(off: readonly number[], n: number): boolean {
+  return n < A_DOZEN && ((off.includes(0) && off.includes(1)) || (off.includes(n - 1) && off.includes(n - 2)))
+}
+
 export type Opinion =
   | { kind: 'law-holds' }
   | { kind: 'too-short' }
@@ -139,7 +147,7 @@ export function opine(series: Series, choice: Choice, care: Care, range: number,
   const { claimed, others, sigma } = choice
   const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
   const off = badDrawings(series, claimed.story, care)
-  const acceptable = off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER
+  const acceptable = off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER && !leavesAtEnd(off, series.n)
   const rivals = others.filter(fits).sort((a, b) => a.charge - b.charge)
   const steady = others.find(other => other.law === 'steady')
 

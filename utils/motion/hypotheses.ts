@@ -23,9 +23,9 @@ export const MOST_TOGETHER = 3
 /** Never more lone bad drawings than this, however long the list. */
 const MOST_MISPLACED = 40
 
-/** How many drawings may be called misplaced before the law itself is in doubt: a quarter of the list, two at least. */
+/** How many drawings may be called misplaced before the law itself is in doubt: a quarter of the list, two at least, four from twelve on. */
 export function mostMisplaced(n: number): number {
-  return Math.min(MOST_MISPLACED, Math.max(2, Math.floor(n / 4)))
+  return Math.min(MOST_MISPLACED, Math.max(n < 12 ? 2 : 4, Math.floor(n / 4)))
 }
 
 export interface Story {
