@@ -72,7 +72,7 @@ describe('made lists', () => {
   })
 
   it('under way by what could be noticed, and claimed at rest, are told so and nothing else', () => {
-    const lists = startLists(240, true, 20264)
+    const lists = startLists(120, true, 20264)
     const told = lists.map(list => ({ before: list.before, result: judge(claimed(list)) })).filter(({ result }) => kinds(result).join() === 'not-at-rest')
     expect(told.length / lists.length).toBeGreaterThanOrEqual(0.95)
     // And by how much, to a tenth at the middle of them.
