@@ -1,6 +1,6 @@
 import type { Day, Time } from '~/utils/contracts/common'
 import type { Claim, Decision, Desk } from '~/utils/contracts/production'
-import type { FindingKind, JudgedKey, Law, LawMisfit, Measure, Roll, Subject, Verdict } from '~/utils/motion/types'
+import type { FindingKind, JudgedKey, Law, LawMisfit, Measure, PathKind, Roll, Span, Subject, Verdict } from '~/utils/motion/types'
 
 /** The words and figures that every screen shares, so that one thing has one name. Nothing here depends on a locale or a clock. */
 
@@ -150,10 +150,38 @@ export function claimedSize(subject: Subject | undefined): number | null {
   return 'length' in subject ? subject.length : subject.equalLength
 }
 
-/** "topple · block 6 × 38 m"; "not claimed yet" where there is no claim. */
-export function claimInWords(claim: Pick<Claim, 'law' | 'subject' | 'unit'> | null): string {
+/** One span's law as the trade says it: the odd rule from rest is a slow out. */
+export const spanInWords = ({ law, start }: Pick<Span, 'law' | 'start'>) => (law === 'odd-rule' && start === 'rest' ? 'slow out' : lawWords[law])
+
+/** "slow out · steady · slow in, joints at 1009 and 1021"; where a contact parts two laws, it says so: "topple · odd rule, contact at 1040". */
+export function spansInWords(spans: readonly Pick<Span, 'to' | 'law' | 'start' | 'contact'>[]): string {
+  const joints = spans.slice(0, -1)
+  const at = (kind: string, some: typeof joints) => {
+    const frames = some.map(({ to }) => String(to))
+    if (frames.length === 0) return []
+    const said = frames.length === 1 ? frames[0] : `${frames.slice(0, -1).join(', ')} and ${frames.at(-1)}`
+    return [`${kind}${frames.length === 1 ? '' : 's'} at ${said}`]
+  }
+  return [
+    spans.map(spanInWords).join(' · '),
+    ...at('joint', joints.filter(({ contact }) => !contact)),
+    ...at('contact', joints.filter(({ contact }) => contact)),
+  ].join(', ')
+}
+
+/** "topple · block 6 × 38 m", or its laws one after the other; "not claimed yet" where there is no claim. */
+export function claimInWords(claim: Pick<Claim, 'law' | 'subject' | 'unit' | 'spans'> | null): string {
   if (!claim) return 'not claimed yet'
-  return [lawWords[claim.law], bodyInWords(claim.subject, claim.unit)].filter(Boolean).join(' · ')
+  return [claim.spans ? spansInWords(claim.spans) : lawWords[claim.law], bodyInWords(claim.subject, claim.unit)].filter(Boolean).join(' · ')
+}
+
+export const pathWords: Record<PathKind, string> = { line: 'a line', circle: 'a circle', parabola: 'a parabola' }
+
+/** What the points of a claim run along and where they turn: "a circle about 120, 40", "y upwards"; empty where nothing is said. */
+export function pointsInWords({ path, pivot, yAxis }: Pick<Claim, 'path' | 'pivot' | 'yAxis'>): string {
+  const about = pivot ? `about ${roundFigure(pivot.x, 5)}, ${roundFigure(pivot.y, 5)}` : ''
+  const along = path ? `along ${pathWords[path]}` : ''
+  return [[along, about].filter(Boolean).join(' '), yAxis === 'up' ? 'y upwards' : ''].filter(Boolean).join(', ')
 }
 
 /** "on ones", "on twos", or null where the gaps between frames differ. */
