@@ -1,12 +1,17 @@
-import type { Column } from '~/utils/posting/rows'
+import type { Column, ListKind } from '~/utils/posting/rows'
 
 export type GridColumn = Column | 'remove'
-export const gridColumns: readonly GridColumn[] = ['frame', 'reading', 'gap', 'remove']
+/** The cells that are written in, and the button behind them. The gap of a point is a distance: it shows no way to go, so nobody can type it. */
+export const gridColumns: Record<ListKind, readonly [Column, Column, Column, 'remove']> = {
+  reading: ['frame', 'reading', 'gap', 'remove'],
+  point: ['frame', 'x', 'y', 'remove'],
+}
 export interface GridCell {
   row: number
   column: GridColumn
 }
 export interface GridMoves {
+  kind: () => ListKind
   rows: () => number
   go: (cell: GridCell) => void
   /** Enter on the last row: one more drawing. */
@@ -28,11 +33,12 @@ export function useGridKeys(moves: GridMoves) {
   return function onKey(event: KeyboardEvent, { row, column }: GridCell): void {
     const input = event.target instanceof HTMLInputElement ? event.target : null
     const last = moves.rows() - 1
-    const at = gridColumns.indexOf(column)
+    const columns = gridColumns[moves.kind()]
+    const at = columns.indexOf(column)
     const command = event.ctrlKey || event.metaKey
     const go = (toRow: number, toColumn: number) => {
       event.preventDefault()
-      moves.go({ row: Math.min(Math.max(toRow, 0), last), column: gridColumns[Math.min(Math.max(toColumn, 0), gridColumns.length - 1)]! })
+      moves.go({ row: Math.min(Math.max(toRow, 0), last), column: columns[Math.min(Math.max(toColumn, 0), columns.length - 1)]! })
     }
     const done = (act: () => void) => {
       event.preventDefault()
@@ -56,7 +62,7 @@ export function useGridKeys(moves: GridMoves) {
       case 'ArrowLeft':
         return caretAt(input, 'start') && at > 0 ? go(row, at - 1) : undefined
       case 'ArrowRight':
-        return caretAt(input, 'end') && at < gridColumns.length - 1 ? go(row, at + 1) : undefined
+        return caretAt(input, 'end') && at < columns.length - 1 ? go(row, at + 1) : undefined
       case 'Home':
         if (command) return go(0, at)
         return caretAt(input, 'start') ? go(row, 0) : undefined

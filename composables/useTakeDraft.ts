@@ -43,7 +43,7 @@ export function useTakeDraft(production: string, code: string, person: string) {
     if (!stored) return
     try {
       if (rows.value.length === 0 && note.value === '') return localStorage.removeItem(key)
-      const draft: TakeDraft = { v: 1, clientId: clientId.value, rows: rows.value, note: note.value, savedAt: new Date().toISOString() }
+      const draft: TakeDraft = { v: 2, clientId: clientId.value, rows: rows.value, note: note.value, savedAt: new Date().toISOString() }
       localStorage.setItem(key, JSON.stringify(draft))
     } catch {
       // A full or closed storage must not stop anyone from writing: the list is still on screen.

@@ -1,14 +1,15 @@
 import type { Claim } from '~/utils/contracts/production'
-import { CHECK_LIMITS, requestFor } from '~/utils/contracts/check'
+import { CHECK_LIMITS } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 import type { CheckResult, Key, PointKey } from '~/utils/motion/types'
+import { typedRequest } from '~/utils/posting/typed'
 
 /** A list this quick to judge is judged on every frame; a slower one waits for a pause in the typing. */
 const QUICK_MS = 12
 
 /**
  * The judge's answer to a list that is being typed: here in the browser, on the next frame, no round trip. Null while there
- * are too few keys to ask about.
+ * are too few keys to ask about, or a joint of the claim has no drawing.
  */
 export function useTypingJudge(keys: () => readonly Key[] | readonly PointKey[], claim: () => Claim, fps: () => number) {
   const answer = shallowRef<CheckResult | null>(null)
@@ -19,8 +20,10 @@ export function useTypingJudge(keys: () => readonly Key[] | readonly PointKey[],
   function run() {
     const list = keys()
     if (list.length < CHECK_LIMITS.minKeys || list.length > CHECK_LIMITS.maxKeys) return void (answer.value = null)
+    const request = typedRequest(claim(), fps(), list)
+    if (!request) return void (answer.value = null)
     const began = performance.now()
-    answer.value = judge(requestFor(claim(), fps(), list))
+    answer.value = judge(request)
     tookMs.value = performance.now() - began
   }
   function soon() {

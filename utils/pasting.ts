@@ -5,7 +5,7 @@ import type { Key } from '~/utils/motion/types'
  * guesses in silence: what was taken for what stands in the answer, and a line that can't be read is told by its number.
  */
 
-export type PastedColumn = 'frame' | 'reading' | 'gap' | 'left out'
+export type PastedColumn = 'frame' | 'reading' | 'gap' | 'x' | 'y' | 'left out'
 export type GapSide = 'to the next' | 'from the one before'
 
 export interface PasteWishes {
@@ -22,8 +22,8 @@ export interface PasteProblem {
   line: number
   message: string
 }
-export interface Pasted {
-  keys: Key[]
+export interface Pasted<Each = Key> {
+  keys: Each[]
   columns: PastedColumn[]
   separator: 'tab' | 'semicolon' | 'comma' | 'space' | null
   decimal: '.' | ','
@@ -44,7 +44,7 @@ const HEADS: [PastedColumn, RegExp][] = [
 const MAX_LINES = 5_000
 const MAX_PROBLEMS = 50
 
-interface Line {
+export interface Line {
   number: number
   cells: string[]
 }
@@ -66,27 +66,39 @@ export function readNumber(cell: string): number | null {
 
 /** Reads pasted text. Never throws; an empty text gives no keys and no problems. */
 export function readPaste(text: string, wishes: PasteWishes = {}): Pasted {
+  const { answer, lines } = readTable<Key>(text, 2)
+  if (wishes.gapSide) answer.gapSide = wishes.gapSide
+  if (lines.length === 0) return answer
+  answer.columns = columnsOf(lines, answer.header, wishes)
+  readRows(lines, answer, wishes)
+  return withFewProblems(answer)
+}
+
+/** The lines of a pasted table in cells, its header and separator told. `columns`: how many a line is expected to have. */
+export function readTable<Each>(text: string, columns: 2 | 3): { answer: Pasted<Each>; lines: Line[] } {
   const raw = text
     .replace(/^\uFEFF/, '')
     .split(/\r\n|\r|\n/)
     .map((content, i) => ({ number: i + 1, content: content.replace(/[ \u00A0]+$/, '') }))
     .filter(({ content }) => content.trim() !== '')
-  const answer: Pasted = {
-    keys: [], columns: [], separator: null, decimal: '.', header: null, gapSide: wishes.gapSide ?? 'to the next', notes: [], problems: [],
+  const answer: Pasted<Each> = {
+    keys: [], columns: [], separator: null, decimal: '.', header: null, gapSide: 'to the next', notes: [], problems: [],
   }
-  if (raw.length === 0) return answer
+  if (raw.length === 0) return { answer, lines: [] }
   if (raw.length > MAX_LINES) answer.notes.push(`Only the first ${MAX_LINES} lines were read.`)
   const contents = raw.slice(0, MAX_LINES)
   answer.separator = separatorOf(contents.map(({ content }) => content))
-  let lines = splitLines(contents, answer)
+  let lines = splitLines(contents, answer, columns)
   const first = lines[0]
   if (first && first.cells.some((cell) => /\p{L}/u.test(cell)) && first.cells.every((cell) => readNumber(cell) === null)) {
     answer.header = first.cells.map((cell) => cell.trim())
     lines = lines.slice(1)
   }
   answer.decimal = lines.some(({ cells }) => cells.some((cell) => /\d,\d/.test(cell))) ? ',' : '.'
-  answer.columns = columnsOf(lines, answer.header, wishes)
-  readRows(lines, answer, wishes)
+  return { answer, lines }
+}
+
+export function withFewProblems<Each>(answer: Pasted<Each>): Pasted<Each> {
   if (answer.problems.length > MAX_PROBLEMS) {
     answer.notes.push(`${answer.problems.length - MAX_PROBLEMS} more lines can’t be read.`)
     answer.problems.length = MAX_PROBLEMS
@@ -103,13 +115,13 @@ function separatorOf(contents: string[]): NonNullable<Pasted['separator']> {
   return most(/,/) ? 'comma' : 'space'
 }
 
-function splitLines(contents: { number: number; content: string }[], answer: Pasted): Line[] {
+function splitLines(contents: { number: number; content: string }[], answer: Pick<Pasted, 'separator' | 'notes'>, columns: 2 | 3): Line[] {
   const pattern = SEPARATORS[answer.separator ?? 'tab']
   const lines = contents.map(({ number, content }) => ({
     number,
     cells: (answer.separator === 'tab' ? content : content.trim()).split(pattern),
   }))
-  if (answer.separator !== 'comma') return lines
+  if (answer.separator !== 'comma' || columns !== 2) return lines
   // "61,21,5": commas part the columns and the decimals alike. Only told apart where every line has whole numbers between commas.
   const data = lines.filter(({ cells }) => cells.some((cell) => readNumber(cell) !== null))
   const threes = data.filter(({ cells }) => cells.length === 3 && cells.every((cell) => /^[+-]?\d+$/.test(cell)))
@@ -138,7 +150,8 @@ function columnsOf(lines: Line[], header: string[] | null, wishes: PasteWishes):
   return named.map((_, i) => (i === frame ? 'frame' : i === other?.i ? holds : 'left out'))
 }
 
-function likeliestFrames(lines: Line[], width: number): number {
+/** The column that counts upwards in even whole steps, best of all. */
+export function likeliestFrames(lines: Line[], width: number): number {
   const score = (column: number) => {
     const values = lines.map(({ cells }) => readNumber(cells[column] ?? ''))
     let rising = 0
@@ -218,4 +231,4 @@ function sumGaps(rows: Row[], answer: Pasted, wishes: PasteWishes): Key[] {
 
 /** Adding decimals leaves dust in the last places: 0.1 + 0.2. */
 export const clean = (value: number) => Number(value.toPrecision(12))
-const short = (cell: string) => (cell.length > 24 ? `${cell.slice(0, 23)}…` : cell)
+export const short = (cell: string) => (cell.length > 24 ? `${cell.slice(0, 23)}…` : cell)

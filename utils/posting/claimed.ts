@@ -7,9 +7,11 @@ import type { Key, ReadingCheck } from '~/utils/motion/types'
  * The same motion at the claim's own size, over as many frames as that size needs and at the list's own exposure: on the
  * posted frames alone a large body would hardly have moved, and a small one would be long past its end.
  * @param fps frames per second of the shot
- * @returns readings in the claim's unit; null where the claim names no size, or the list would get longer than a list may be
+ * @returns readings in the claim's unit; null where the claim names no size, where the list is points or under several laws (there is no
+ * one pace then), or where it would get longer than a list may be
  */
 export function claimedList(claim: Claim, fps: number, keys: readonly Key[]): Key[] | null {
+  if (claim.measure === 'point' || claim.spans) return null
   const request = requestFor(claim, fps, keys) as ReadingCheck
   const { line, pace, result } = judgeInDepth(request)
   const first = keys[0]?.frame

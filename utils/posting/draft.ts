@@ -2,12 +2,14 @@ import { z } from 'zod'
 import { CHECK_LIMITS } from '~/utils/contracts/check'
 import { LIMITS } from '~/utils/contracts/common'
 
+const cell = z.string().max(40)
 /** A take that is not posted yet, as this browser keeps it. Cells are text: see rows.ts. */
 const draft = z.object({
-  v: z.literal(1),
+  /** 1 had readings only; what it kept still opens. 2 keeps points as well. */
+  v: z.literal([1, 2]),
   /** Made once per draft, so that a send repeated after a lost answer posts one take. */
   clientId: z.uuid(),
-  rows: z.array(z.object({ id: z.number(), frame: z.string().max(40), reading: z.string().max(40) })).max(CHECK_LIMITS.maxKeys * 2),
+  rows: z.array(z.object({ id: z.number(), frame: cell, reading: cell, x: cell.optional(), y: cell.optional() })).max(CHECK_LIMITS.maxKeys * 2),
   note: z.string().max(LIMITS.noteChars * 2),
   savedAt: z.string(),
 })

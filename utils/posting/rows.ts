@@ -1,5 +1,5 @@
 import { CHECK_LIMITS } from '~/utils/contracts/check'
-import type { Key } from '~/utils/motion/types'
+import type { Key, PointKey } from '~/utils/motion/types'
 import { clean, readNumber } from '~/utils/pasting'
 
 /**
@@ -10,15 +10,26 @@ export interface Row {
   id: number
   frame: string
   reading: string
+  /** Of a list of points, instead of the reading. */
+  x?: string
+  y?: string
 }
-export type Column = 'frame' | 'reading' | 'gap'
+/** What a list is made of: a reading per drawing, or a point of the drawing. */
+export type ListKind = 'reading' | 'point'
+export const kindOf = ({ measure }: { measure: string }): ListKind => (measure === 'point' ? 'point' : 'reading')
+/** A cell that a key is made of. */
+export type ValueColumn = 'reading' | 'x' | 'y'
+export type WrittenColumn = 'frame' | ValueColumn
+export type Column = WrittenColumn | 'gap'
+export const valueColumns: Record<ListKind, readonly ValueColumn[]> = { reading: ['reading'], point: ['x', 'y'] }
+
 export interface CellIssue {
   row: number
-  column: 'frame' | 'reading'
+  column: WrittenColumn
   message: string
 }
 export interface ReadRows {
-  keys: Key[]
+  keys: Key[] | PointKey[]
   /** Row number of each key. */
   rowOf: number[]
   issues: CellIssue[]
@@ -27,46 +38,79 @@ export interface ReadRows {
 /** A reading as a cell shows it: a plain point, no trailing zeros. */
 export const cellText = (value: number) => String(clean(value))
 
-export function rowsFromKeys(keys: readonly Key[], firstId = 1): Row[] {
-  return keys.map(({ frame, reading }, i) => ({ id: firstId + i, frame: String(frame), reading: cellText(reading) }))
+/** What stands in a cell. */
+export const cellOf = (row: Row, column: WrittenColumn): string => row[column] ?? ''
+/** Whether anything but a frame was written into the row. */
+export const hasValue = (row: Row): boolean => [row.reading, row.x, row.y].some((cell) => cell !== undefined && cell.trim() !== '')
+
+const cellsOf = (key: Key | PointKey) =>
+  'x' in key ? { reading: '', x: cellText(key.x), y: cellText(key.y) } : { reading: cellText(key.reading) }
+
+export function rowsFromKeys(keys: readonly Key[] | readonly PointKey[], firstId = 1): Row[] {
+  return keys.map((key, i) => ({ id: firstId + i, frame: String(key.frame), ...cellsOf(key) }))
 }
 
 /**
  * The law's readings as a person would write them: rounded far finer than the slop (a hundredth of it), no longer. Without a
  * slop, four decimals.
  */
-export function roundedKeys(keys: readonly Key[], slop: number): Key[] {
+export function roundedKeys<Keys extends readonly Key[] | readonly PointKey[]>(keys: Keys, slop: number): Keys {
   const decimals = slop > 0 ? Math.min(6, Math.max(1, Math.ceil(2 - Math.log10(slop)))) : 4
-  return keys.map(({ frame, reading }) => ({ frame, reading: Number(reading.toFixed(decimals)) }))
+  const round = (value: number) => Number(value.toFixed(decimals))
+  return keys.map((key) =>
+    'x' in key ? { frame: key.frame, x: round(key.x), y: round(key.y) } : { frame: key.frame, reading: round(key.reading) },
+  ) as unknown as Keys
+}
+
+const bounds: Record<ValueColumn, [what: string, missing: string]> = {
+  reading: ['A reading', 'no reading'],
+  x: ['A coordinate', 'no x'],
+  y: ['A coordinate', 'no y'],
 }
 
 /** Whole rows are keys; empty rows count for nothing; anything else is told at its cell. */
-export function readRows(rows: readonly Row[]): ReadRows {
-  const answer: ReadRows = { keys: [], rowOf: [], issues: [] }
+export function readRows(rows: readonly Row[], kind: ListKind = 'reading'): ReadRows {
+  const [keys, rowOf, issues]: [(Key | PointKey)[], number[], CellIssue[]] = [[], [], []]
+  const columns = valueColumns[kind]
   let before: number | null = null
-  for (const [row, { frame: frameText, reading: readingText }] of rows.entries()) {
-    const [hasFrame, hasReading] = [frameText.trim() !== '', readingText.trim() !== '']
-    if (!hasFrame && !hasReading) continue
+  for (const [row, cells] of rows.entries()) {
+    const frameText = cells.frame
+    const hasFrame = frameText.trim() !== ''
+    if (!hasFrame && columns.every((column) => cellOf(cells, column).trim() === '')) continue
     const frame = hasFrame ? readNumber(frameText) : null
-    const reading = hasReading ? readNumber(readingText) : null
     let good: number | null = null
-    const issue = (column: CellIssue['column'], message: string) => answer.issues.push({ row, column, message })
+    const issue = (column: WrittenColumn, message: string) => issues.push({ row, column, message })
     if (!hasFrame) issue('frame', 'Which frame?')
     else if (frame === null || !Number.isInteger(frame)) issue('frame', 'A frame is a whole number.')
     else if (before !== null && frame === before) issue('frame', `Frame ${frame} stands twice.`)
     else if (before !== null && frame < before) issue('frame', `Frame ${frame} comes after frame ${before}: frames go upwards.`)
     else before = good = frame
-    // A frame that waits for its reading is work in progress, not a fault: it only keeps the list from being posted.
-    if (!hasReading) {
-      if (frame !== null) issue('reading', `Frame ${frame} has no reading yet.`)
-    } else if (reading === null) issue('reading', 'A reading is a number.')
-    else if (Math.abs(reading) > CHECK_LIMITS.maxReading) issue('reading', 'A reading lies within ±1,000,000.')
-    else if (good !== null) {
-      answer.keys.push({ frame: good, reading })
-      answer.rowOf.push(row)
-    }
+    const values = columns.map((column) => {
+      const text = cellOf(cells, column)
+      const value = text.trim() === '' ? null : readNumber(text)
+      const [what, missing] = bounds[column]
+      // A frame that waits for its reading is work in progress, not a fault: it only keeps the list from being posted.
+      if (text.trim() === '') {
+        if (frame !== null || kind === 'point') issue(column, frame === null ? `There is ${missing} yet.` : `Frame ${frame} has ${missing} yet.`)
+      } else if (value === null) issue(column, `${what} is a number.`)
+      else if (Math.abs(value) > CHECK_LIMITS.maxReading) issue(column, `${what} lies within ±1,000,000.`)
+      else return value
+      return null
+    })
+    if (good === null || values.includes(null)) continue
+    const [one, other] = values as number[]
+    keys.push(kind === 'point' ? { frame: good, x: one!, y: other! } : { frame: good, reading: one! })
+    rowOf.push(row)
   }
-  return answer
+  return { keys: keys as Key[] | PointKey[], rowOf, issues }
+}
+
+/** How far the next point lies from this one, as the cell shows it; empty where one of the two is not whole. */
+export function pointGapText(rows: readonly Row[], row: number): string {
+  const [here, next] = [rows[row], rows[row + 1]].map((each) => [readNumber(each?.x ?? ''), readNumber(each?.y ?? '')])
+  const [x, y, nextX, nextY] = [...here!, ...next!]
+  if (typeof x !== 'number' || typeof y !== 'number' || typeof nextX !== 'number' || typeof nextY !== 'number') return ''
+  return cellText(Number(Math.hypot(nextX - x, nextY - y).toPrecision(4)))
 }
 
 /** The gap from this row to the next, as the cell shows it; empty where one of the two has no reading. */
@@ -106,28 +150,29 @@ export function nextFrame(rows: readonly Row[], step = 1): number | null {
  * so the list may come out longer than `count`.
  */
 export function fillFrames(rows: readonly Row[], first: number, step: number, count: number): Row[] {
-  const held = rows.findLastIndex((row) => row.reading.trim() !== '') + 1
+  const held = rows.findLastIndex(hasValue) + 1
   const length = Math.min(CHECK_LIMITS.maxKeys, Math.max(count, held))
   const top = Math.max(0, ...rows.map(({ id }) => id))
   return Array.from({ length }, (_, i) => ({
+    reading: '',
+    ...rows[i],
     id: rows[i]?.id ?? top + 1 + i,
-    reading: rows[i]?.reading ?? '',
     frame: String(first + i * step),
   }))
 }
 
-/** Joins a pasted list to the one that is there: by frame, the pasted reading first. */
-export function joinKeys(rows: readonly Row[], pasted: readonly Key[]): Row[] {
+/** Joins a pasted list to the one that is there: by frame, the pasted drawing first. */
+export function joinKeys(rows: readonly Row[], pasted: readonly Key[] | readonly PointKey[]): Row[] {
   const top = Math.max(0, ...rows.map(({ id }) => id))
   const byFrame = new Map<number, Row>()
   const unread: Row[] = []
   for (const row of rows) {
     const frame = readNumber(row.frame)
     if (frame === null) {
-      if (row.reading.trim() !== '') unread.push(row)
+      if (hasValue(row)) unread.push(row)
     } else byFrame.set(frame, row)
   }
-  for (const [i, { frame, reading }] of pasted.entries())
-    byFrame.set(frame, { id: byFrame.get(frame)?.id ?? top + 1 + i, frame: String(frame), reading: cellText(reading) })
+  for (const [i, key] of pasted.entries())
+    byFrame.set(key.frame, { id: byFrame.get(key.frame)?.id ?? top + 1 + i, frame: String(key.frame), ...cellsOf(key) })
   return [...[...byFrame].sort(([a], [b]) => a - b).map(([, row]) => row), ...unread]
 }
