@@ -136,7 +136,7 @@ function worstBreaking(series: Series, story: Story, care: Care): number[] {
 }
 
 /** The exposures a hold or a skip could be: gap lengths that occur in the list, commonest first, at most six. */
-function exposures(series: Series): number[] {
+export function exposures(series: Series): number[] {
   const counts = new Map<number, number>()
   for (let i = 1; i < series.n; i++) {
     const frames = Math.round(((series.x[i] as number) - (series.x[i - 1] as number)) * series.spanFrames)

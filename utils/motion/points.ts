@@ -94,8 +94,8 @@ function onPaper(request: PointCheck, sheet: Sheet, course: Course, check: Readi
   }
   const { line } = judged
   return line
-    ? { ...judged, result: full, placesAt: (frames, rate) => lawCurve(line, check, frames, rate).map(point) }
-    : { ...judged, result: full }
+    ? { ...judged, result: full, along: check, placesAt: (frames, rate) => lawCurve(line, check, frames, rate).map(point) }
+    : { ...judged, result: full, along: check }
 }
 
 /** Distance from the path, positive to the left of the way the list goes at drawing i. */

@@ -28,6 +28,8 @@ export interface Judgement {
   line: Line | null
   /** Claimed pace over the list's own, for drawing the claim's curve: 1 where they agree, null without a claimed size. */
   pace: number | null
+  /** Of a list of points: the readings that its timing was judged by, for `lawCurve`; of a flight its way down. */
+  along?: ReadingCheck
   /**
    * Of a list of points: the law's places at any frames, whole or not, y as posted; `rate` > 1 runs the same motion faster from the same
    * start. Missing where no law was fitted.
