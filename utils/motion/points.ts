@@ -6,6 +6,7 @@ import { courseOf, foundPath, placeAt, slopeOf } from './path/course'
 import type { Course, Trouble } from './path/course'
 import { STILL, without } from './path/nothing'
 import { straightFinding, withOffPath } from './path/offPath'
+import { withPivotDoubt } from './path/pivotDoubt'
 import { asPosted, roughAllowances, sheetOf } from './path/sheet'
 import type { Sheet } from './path/sheet'
 import { isBody } from './bodies'
@@ -34,7 +35,7 @@ export function judgePoints(request: PointCheck): Judgement {
   }
   if (trouble || !course || !path) return without(request, path, REASONS[trouble ?? 'short'])
   const check = alongCourse(request, course)
-  return onPaper(request, sheet, course, check, judgeReadings(check))
+  return onPaper(request, sheet, course, check, withPivotDoubt(sheet, course, check, judgeReadings(check)))
 }
 
 /** The timing alone: readings along the path. */

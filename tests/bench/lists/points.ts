@@ -287,7 +287,7 @@ function attempt(chance: Chance, family: PointFamily, law: PointLaw): MadePoints
   const part = chance.between(0.2, 0.6)
   const room = slop - step * 0.71
   const posted = exact.map(({ x, y }) => {
-    const reach = Math.min(room, Math.abs(chance.bell()) * slop * part * 0.6)
+    const reach = Math.min(room, Math.abs(chance.bell()) * slop * part)
     const turn = chance.between(0, 2 * Math.PI)
     const rounded = (value: number) => Number((Math.round(value / step) * step).toFixed(3))
     return { x: rounded(corner.x + x + reach * Math.cos(turn)), y: rounded(corner.y + up * (y + reach * Math.sin(turn))) }

@@ -9,7 +9,7 @@ import { asPosted, onSheet, placeOf, roughAllowances } from './sheet'
 import type { Sheet } from './sheet'
 
 /** The laws that turn about a pivot and are read in degrees. */
-const TURNING: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
+export const TURNING: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
 
 export interface Course {
   kind: 'line' | 'circle'
@@ -61,7 +61,7 @@ function distanceCourse(sheet: Sheet, kind: Course['kind'], fit: CurveFit, given
 }
 
 /** Degrees counted anticlockwise from `rest` (where reading 0 stands, degrees anticlockwise from the x axis). */
-function angleCourse(sheet: Sheet, fit: CurveFit, given: boolean, law: Law): Course {
+export function angleCourse(sheet: Sheet, fit: CurveFit, given: boolean, law: Law): Course {
   const { curve } = fit
   const along = waysAlong(sheet, fit)
   const perUnit = 2 * curve.bend / RADIAN

@@ -1,5 +1,6 @@
 /** The line or circle that drawings lie along, so fitted that one or two bad ones don't bend it. */
 import { solveInto } from '../solve'
+import { student95 } from '../student'
 import type { Place } from '../types'
 import { bearingOf, circleAbout, curveThrough, lineThrough } from './curve'
 import type { Curve } from './curve'
@@ -90,15 +91,42 @@ function settle(sheet: Sheet, from: Curve, counts: Float64Array, curved: boolean
     }
     if (!(saved > 1e-12 * cost)) break
   }
-  return { curve, off, counts, bendSpread: curved ? bendSpread(sheet, curve, off, counts, cost) : 0 }
+  return { curve, off, counts, bendSpread: curved ? bendSpread(sheet, curve, off, counts) : 0 }
 }
 
-function bendSpread(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array, cost: number): number {
+/** One spread's steps in φ, D and A that together make up the fit's covariance (its Cholesky factor's columns); null where it is not settled. */
+function stepsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array): Float64Array[] | null {
   const kept = counts.reduce((sum, count) => sum + count, 0)
-  const out = new Float64Array(3)
   const { a } = equationsOf(sheet, curve, off, counts, true)
-  if (kept < 4 || !solveInto(a, [0, 0, 1], 3, out)) return Infinity
-  return 1.96 * Math.sqrt(cost / (kept - 3) * (out[2] as number))
+  if (kept < 4) return null
+  const covariance: Float64Array[] = []
+  for (let p = 0; p < 3; p++) {
+    const column = new Float64Array(3)
+    if (!solveInto(a, [p === 0 ? 1 : 0, p === 1 ? 1 : 0, p === 2 ? 1 : 0], 3, column)) return null
+    covariance.push(column.map(value => value * weighed(off, counts) / (kept - 3)))
+  }
+  const steps = [new Float64Array(3), new Float64Array(3), new Float64Array(3)]
+  for (let q = 0; q < 3; q++) {
+    for (let p = q; p < 3; p++) {
+      let sum = (covariance[p] as Float64Array)[q] as number
+      for (let k = 0; k < q; k++) sum -= ((steps[k] as Float64Array)[p] as number) * ((steps[k] as Float64Array)[q] as number)
+      const column = steps[q] as Float64Array
+      column[p] = p === q ? Math.sqrt(Math.max(0, sum)) : (column[q] as number) > 0 ? sum / (column[q] as number) : 0
+    }
+  }
+  return steps
+}
+
+function bendSpread(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array): number {
+  const steps = stepsOf(sheet, curve, off, counts)
+  return steps ? student95(counts.reduce((sum, count) => sum + count, 0) - 3) * Math.hypot(...steps.map(step => step[2] as number)) : Infinity
+}
+
+/** Curves that lie one spread off a fitted one, three ways that don't lean on one another; none where the fit is not settled. */
+export function neighbours(sheet: Sheet, { curve, off, counts }: CurveFit): Curve[] {
+  return (stepsOf(sheet, curve, off, counts) ?? []).map(([turn = 0, shift = 0, bend = 0]) => (
+    { base: curve.base, normal: curve.normal + turn, shift: curve.shift + shift, bend: curve.bend + bend }
+  ))
 }
 
 /** How badly a curve does when a drawing can count as no worse than clearly off. */
