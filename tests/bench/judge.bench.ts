@@ -3,8 +3,10 @@ import { judge } from '../../utils/motion'
 import type { ReadingCheck } from '../../utils/motion'
 import { makeLists } from './lists/make'
 import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
+import { makePointLists } from './lists/points'
 import { scoreLists } from './judgeScore'
 import type { Score } from './judgeScore'
+import { pointTable, scorePoints } from './pointScore'
 import { scoreSpans, spanTable } from './spanScore'
 
 export interface JudgeBench {
@@ -67,4 +69,5 @@ export function runJudgeBench(count = 2000, seed = 7): JudgeBench {
 export default async function run(): Promise<void> {
   console.log(runJudgeBench().table)
   console.log(`\n${spanTable(scoreSpans(makeSpans(24 * SPAN_ROUND, 7)))}`)
+  console.log(`\n${pointTable(scorePoints(makePointLists(2024, 7)))}`)
 }
