@@ -2,11 +2,9 @@
 import fc from 'fast-check'
 import type { Law, PointCheck, PointKey } from '../../../utils/motion'
 
-export { judge, judgeInDepth } from '../../../utils/motion'
-
-export const laws: readonly Law[] = ['odd-rule', 'slow-in', 'steady', 'bounce', 'flight', 'topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
-export const pathKinds = ['line', 'circle', 'parabola'] as const
-export const yAxes = ['down', 'up'] as const
+const laws: readonly Law[] = ['odd-rule', 'slow-in', 'steady', 'bounce', 'flight', 'topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
+const pathKinds = ['line', 'circle', 'parabola'] as const
+const yAxes = ['down', 'up'] as const
 
 const gaps = fc.array(fc.integer({ min: 1, max: 4 }), { minLength: 2, maxLength: 30 })
 
@@ -81,7 +79,8 @@ export const requests: fc.Arbitrary<PointCheck> = fc.record({
   }
 })
 
-export function everyNumber(value: unknown, visit: (number: number) => void): void {
-  if (typeof value === 'number') visit(value)
-  else if (typeof value === 'object' && value !== null) for (const each of Object.values(value)) everyNumber(each, visit)
+/** Every number anywhere in a value. */
+export function numbersOf(value: unknown): number[] {
+  if (typeof value === 'number') return [value]
+  return typeof value === 'object' && value !== null ? Object.values(value).flatMap(numbersOf) : []
 }
