@@ -4,6 +4,9 @@ import type { BodySubject, PathSubject, Roll, Subject } from './types'
 /** m/s². 3rd General Conference on Weights and Measures, 1901. */
 export const STANDARD_GRAVITY = 9.80665
 
+/** q of a thin rod on its foot, d = h/2 and L = 2h/3: what a body on a brink is taken for when its own d isn't known. */
+const ROD_RATIO = 3 / 2
+
 /** I/(m·r²) about the centre, per way of going; textbook moments of inertia. */
 const ROLL: Record<Roll, number> = { slide: 0, ball: 2 / 5, cylinder: 1 / 2, shell: 2 / 3, hoop: 1 }
 
@@ -62,6 +65,27 @@ export function uprightLean(subject: BodySubject): number {
   if (subject.shape === 'block') return Math.atan2(subject.width, subject.height) * 180 / Math.PI
   if (subject.shape === 'cylinder') return Math.atan2(2 * subject.radius, subject.height) * 180 / Math.PI
   return 0
+}
+
+/** q = 2d/L, d from pivot to centre of mass; null where the body's own d is not known. */
+export function edgeRatio(subject: BodySubject): number | null {
+  const distance = centreDistance(subject)
+  return distance === null ? null : 2 * distance / equalLength(subject)
+}
+
+function centreDistance(subject: BodySubject): number | null {
+  switch (subject.shape) {
+    case 'rod': return subject.height / 2
+    case 'block': return Math.hypot(subject.width, subject.height) / 2
+    case 'cylinder': return Math.hypot(subject.radius, subject.height / 2)
+    case 'pole': return (subject.mass * subject.height / 2 + subject.headMass * subject.headHeight) / (subject.mass + subject.headMass)
+    default: return null
+  }
+}
+
+/** q for a body on a brink: its own, or the thin rod's 3/2 where its centre isn't known or no body is named. */
+export function brinkRatio(subject: Subject | undefined): number {
+  return (subject && isBody(subject) ? edgeRatio(subject) : null) ?? ROD_RATIO
 }
 
 /** Acceleration along the path, m/s²: g·sin α/(1 + β). */

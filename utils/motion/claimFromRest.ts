@@ -1,5 +1,6 @@
 /** What the claim's own size would do on these frames, where the posted list is no help: under another law altogether. */
 import { isBody, pathAcceleration } from './bodies'
+import { edgeEnergy, leavingCosine, overBrink, releaseAt } from './edge'
 import { RADIAN } from './series'
 import type { Series } from './series'
 import { freeSwing } from './swing'
@@ -34,6 +35,9 @@ function claimedReadings({ law, subject }: ReadingCheck, series: Series): Float6
   if (Math.abs(Math.sin(start)) < 0.01 * RADIAN) return null
   const k = paceOf(subject)
   const angle = new Float64Array(n)
-  freeSwing(start, 0, law === 'topple', times.map(t => k * t), n, angle, new Float64Array(n))
+  const rate = new Float64Array(n)
+  const taus = times.map(t => k * t)
+  if (law === 'over-edge') overBrink(start, 0, releaseAt(start, 0, leavingCosine(series.edgeRatio, edgeEnergy(start, 0))), taus, n, angle, rate)
+  else freeSwing(start, 0, law === 'topple', taus, n, angle, rate)
   return angle.map(a => (a - series.zero) * series.perRadian)
 }

@@ -8,8 +8,6 @@ import { incompleteF } from './elliptic'
 import { freeSwing } from './swing'
 
 const TURN = 2 * Math.PI
-/** Thin rod on its foot, d = h/2 and L = 2h/3: what a body is taken for when its own d isn't known. */
-export const ROD_RATIO = 3 / 2
 
 export interface Release {
   /** k·t from the start; 0 where nothing holds it even there. */

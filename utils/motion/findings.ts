@@ -56,6 +56,19 @@ export function wrongLawFinding(claimed: Law, reads: Law | null, misfit: number,
   return { kind: 'wrong-law', frames: [], amount: misfit, text }
 }
 
+/** Degrees at which it lets go and at which the body would have left; `key`: the first drawing after that. */
+export function wrongReleaseFinding({ angle, leaves }: { angle: number, leaves: number }, { frame }: JudgedKey): Finding {
+  const late = angle - leaves
+  // Whole degrees, unless that would say nothing.
+  const whole = Math.abs(late) >= 2
+  const degrees = (value: number) => `${value.toFixed(whole ? 0 : 1)}°`
+  const off = whole ? degrees(Math.abs(Math.round(angle) - Math.round(leaves))) : degrees(Math.abs(late))
+  return {
+    kind: 'wrong-release', frames: [frame], amount: late,
+    text: `Lets go at ${degrees(angle)}, ${off} too ${late > 0 ? 'late' : 'early'}: this body leaves the edge at ${degrees(leaves)}.`,
+  }
+}
+
 /** `before`: frames before the first drawing at which the line stands still, null where it never does; `moving`: it isn't waiting for a later start. */
 export function notAtRestFinding(first: JudgedKey, before: number | null, used: number, moving: boolean): Finding {
   const finding: Omit<Finding, 'text'> = { kind: 'not-at-rest', frames: [first.frame], amount: before ?? 0 }

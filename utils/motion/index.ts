@@ -6,10 +6,10 @@ export type { Line } from './line'
 export { canRest } from './standstill'
 export { allowanceAt, allowances } from './allowance'
 export {
-  STANDARD_GRAVITY, describeBody, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
+  STANDARD_GRAVITY, brinkRatio, describeBody, edgeRatio, equalLength, isBody, namedSize, pathAcceleration, sizeForLength, uprightLean,
 } from './bodies'
 export { LAW_WORDS, MEASURES, lawsFor } from './laws/index'
-export { brinkRatio, edgeRatio, leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
+export { leavesEdgeAt, paceOf, swingPeriod, toppleMeasure, toppleTime } from './times'
 export { framesFor, plannedList, secondsFor } from './plan'
 export type { Plan, PlannedList } from './plan'
 export { flightSeconds, plannedFlight } from './planFlight'

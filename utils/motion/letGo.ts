@@ -9,7 +9,7 @@ import type { Law } from './types'
  * `numbers`: the free law's own.
  */
 export function letGoFrames(law: Law, series: Series, numbers: Float64Array): number | null {
-  const spans = law === 'odd-rule' ? apexBefore(numbers) : law === 'steady' ? null : standstillBefore(numbers, law === 'topple')
+  const spans = law === 'odd-rule' ? apexBefore(numbers) : law === 'steady' ? null : standstillBefore(numbers, law !== 'pendulum')
   if (spans === null) return null
   const frames = spans * series.spanFrames
   return Number.isFinite(frames) ? frames : null

@@ -1,9 +1,9 @@
 /** The bench: a body that goes over a brink, worked out before anything is drawn. Angles and the flight of its centre. */
-import { equalLength, gravityOf } from './bodies'
+import { brinkRatio, equalLength, gravityOf } from './bodies'
 import { edgeEnergy, leavingCosine, overBrink, releaseAt } from './edge'
 import type { Release } from './edge'
 import { RADIAN } from './series'
-import { brinkRatio, paceOf } from './times'
+import { paceOf } from './times'
 import type { BodySubject, Key, Place, PointKey, YAxis } from './types'
 
 export interface EdgePlan {

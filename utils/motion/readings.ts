@@ -2,7 +2,7 @@
 import { opine, plainRivals, ranked, weigh } from './choose'
 import type { Rival } from './choose'
 import { figuresOf } from './figures'
-import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongScaleFinding } from './findings'
+import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongReleaseFinding, wrongScaleFinding } from './findings'
 import { badDrawings, plainFit, stories } from './hypotheses'
 import type { Care, Plain, Story } from './hypotheses'
 import { fromRest, fullNumbers } from './laws/fromRest'
@@ -12,6 +12,8 @@ import { ruledList, traceLine } from './line'
 import type { Line } from './line'
 import { judgeKeys, unjudged } from './perKey'
 import { claimFromRest } from './claimFromRest'
+import { releaseFigures, wrongRelease } from './release'
+import type { OwnRelease } from './release'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
 import { scaleOf } from './size'
@@ -71,6 +73,8 @@ function judgeRow(request: ReadingCheck): Judgement {
   const free = consider(request, series, plain, rivals, care, range)
   if (!moves(free, care)) return undecided(request, STILL)
   if (atRest && alreadyMoving(series, atRest, free, care)) return notAtRest(request, series, atRest, free, care)
+  const own = request.law === 'over-edge' ? wrongRelease(series, atRest ?? free, care) : null
+  if (own) return letGoWrongly(request, series, own, atRest ?? free, care)
   return answer(request, series, atRest ?? free, care)
 }
 
@@ -154,6 +158,31 @@ function notAtRest(request: ReadingCheck, series: Series, atRest: Considered, fr
     result: {
       verdict: 'breaks', reason: null, keys, findings, readsAs: ranked(free.choice).map(({ law, misfit }) => ({ law, misfit })),
       size: free.scale.size, claim: claimFrames(series, free.scale), ruled: ruledBy(request, series, line, atRest.scale),
+    },
+  }
+}
+
+/**
+ * Turns like the body on the arc, but lets go where it wouldn't. The line is the law's from the same start, so that drawings after the
+ * brink show where they should have gone; what else is wrong, and the size, are read off the motion as it was drawn.
+ */
+function letGoWrongly(request: ReadingCheck, series: Series, own: OwnRelease, { choice }: Considered, care: Care): Judgement {
+  const { story } = own
+  const { lag } = lineOf(request, series, story)
+  const line: Line = { law: 'over-edge', numbers: Array.from(story.fit.numbers.subarray(0, 3)), lag }
+  const keys = judgeKeys(request, series, traceLine(series, line, series.x))
+  const drawn = story.fit.model.trace(series, story.fit.numbers, series.x.map(x => x - lag), false)
+  const drawnKeys = judgeKeys(request, series, drawn)
+  const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
+  const findings = inOrder(
+    [wrongReleaseFinding(own, keys[own.after] as JudgedKey), ...faultFindings(request, series, story, scale, drawnKeys, drawn.rate, care)], drawnKeys,
+  )
+  return {
+    line, pace: scale.pace,
+    result: {
+      verdict: 'breaks', reason: null, keys, findings, readsAs: ranked(choice).map(({ law, misfit }) => ({ law, misfit })),
+      size: scale.size, claim: claimFrames(series, scale), ruled: ruledBy(request, series, line, scale),
+      figures: releaseFigures(request, series, story, lag, care),
     },
   }
 }

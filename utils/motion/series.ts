@@ -1,4 +1,5 @@
 /** A posted list in the judge's own measures: time runs from 0 at the first key to 1 at the last, readings stay in drawing units. */
+import { brinkRatio } from './bodies'
 import type { ReadingCheck } from './types'
 
 export const RADIAN = Math.PI / 180
@@ -17,6 +18,8 @@ export interface Series {
   readonly perRadian: number
   /** The angle, radians, that reading 0 stands for. */
   readonly zero: number
+  /** q = 2d/L of the body claimed, for a brink to be left at. */
+  readonly edgeRatio: number
 }
 
 /** Takes a request apart. Keys need at least two entries; radius must be given for an arc. */
@@ -35,6 +38,7 @@ export function seriesOf(request: ReadingCheck): Series {
     span: spanFrames / request.fps,
     perRadian,
     zero: (request.zeroAt ?? 0) * RADIAN,
+    edgeRatio: brinkRatio(request.subject),
   }
 }
 

@@ -52,7 +52,7 @@ function halfWidth(fit: Fit, index: number, kept: number, least: number): number
 
 /** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
 export function scaleOf(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
-  if (request.law === 'topple' || request.law === 'pendulum') return bodyScale(request, series, fit, kept, least)
+  if (request.law === 'topple' || request.law === 'over-edge' || request.law === 'pendulum') return bodyScale(request, series, fit, kept, least)
   if (request.law === 'odd-rule' && request.measure !== 'angle') return pathScale(request, series, fit, kept, least)
   return NOTHING
 }
@@ -61,7 +61,7 @@ function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number
   const { subject } = request
   const claimed = subject && isBody(subject) ? subject : null
   // With no body named, a topple is read as a rod on its foot and a swing as a bob on a cord: the plainest of either.
-  const body: BodySubject = claimed ?? (request.law === 'topple' ? { shape: 'rod', height: 1 } : { shape: 'bob', length: 1 })
+  const body: BodySubject = claimed ?? (request.law === 'pendulum' ? { shape: 'bob', length: 1 } : { shape: 'rod', height: 1 })
   const gravity = gravityOf(subject)
   const k = Math.exp(fit.numbers[0] as number) / series.span
   const value = sizeForLength(body, gravity / (k * k))

@@ -1,9 +1,9 @@
 /** How long a body takes: exact times of a topple and of a swing, and where a body on a brink leaves it. Angles in degrees, times in seconds. */
-import { equalLength, gravityOf, isBody } from './bodies'
-import { ROD_RATIO, edgeEnergy, leavingCosine } from './edge'
+import { equalLength, gravityOf } from './bodies'
+import { edgeEnergy, leavingCosine } from './edge'
 import { completeF, incompleteF } from './elliptic'
 import { RADIAN } from './series'
-import type { BodySubject, Subject } from './types'
+import type { BodySubject } from './types'
 
 /** k = √(g/L), radians per second. */
 export function paceOf(subject: BodySubject): number {
@@ -33,27 +33,6 @@ export function toppleTime(subject: BodySubject, lean: number, to = 90): number 
 /** Seconds for a full swing of `amplitude` degrees (below 180) to either side: 4K(sin²(A/2))/k. DLMF 22.19.2 and the text around it. */
 export function swingPeriod(subject: BodySubject, amplitude: number): number {
   return 4 * completeF(Math.cos(amplitude * RADIAN / 2) ** 2) / paceOf(subject)
-}
-
-/** q = 2d/L, d from pivot to centre of mass; null where the body's own d is not known. */
-export function edgeRatio(subject: BodySubject): number | null {
-  const distance = centreDistance(subject)
-  return distance === null ? null : 2 * distance / equalLength(subject)
-}
-
-function centreDistance(subject: BodySubject): number | null {
-  switch (subject.shape) {
-    case 'rod': return subject.height / 2
-    case 'block': return Math.hypot(subject.width, subject.height) / 2
-    case 'cylinder': return Math.hypot(subject.radius, subject.height / 2)
-    case 'pole': return (subject.mass * subject.height / 2 + subject.headMass * subject.headHeight) / (subject.mass + subject.headMass)
-    default: return null
-  }
-}
-
-/** q for a body on a brink: its own, or the thin rod's 3/2 where its centre isn't known or no body is named. */
-export function brinkRatio(subject: Subject | undefined): number {
-  return (subject && isBody(subject) ? edgeRatio(subject) : null) ?? ROD_RATIO
 }
 
 /**

@@ -6,7 +6,10 @@ import type { Series } from '../series'
 import type { RestingLaw } from '../standstill'
 import type { LawModel, Trace } from './model'
 import { oddRule } from './oddRule'
-import { beginSwing, confineSwing, traceSwing } from './swinging'
+import { overEdge } from './overEdge'
+import { pendulum } from './pendulum'
+import { confineSwing } from './swinging'
+import { topple } from './topple'
 
 /** Numbers: weights of 1 and x² − 1/3; x is 0 at the first key, so the apex lies there. */
 const fallFromRest: LawModel = {
@@ -23,26 +26,27 @@ const fallFromRest: LawModel = {
 }
 
 /** Numbers: ln κ and the angle at the first key, radians. `near`: numbers of the free law's fit, as one more place to begin. */
-function swingFromRest(law: 'topple' | 'pendulum', near: Float64Array): LawModel {
-  const fromTop = law === 'topple'
+function swingFromRest(free: LawModel, near: Float64Array): LawModel {
   const full = ([log = 0, angle = 0]: Float64Array) => Float64Array.of(log, angle, 0)
   return {
-    law,
+    law: free.law,
     size: 2,
     linear: false,
     full,
     trace(series, numbers, x, withColumns) {
-      const trace = traceSwing(series, full(numbers), x, withColumns, fromTop)
+      const trace = free.trace(series, full(numbers), x, withColumns)
       return { ...trace, columns: trace.columns.slice(0, 2) }
     },
     confine: confineSwing,
-    begin: (series, y) => [near.slice(0, 2), ...beginSwing(series, y, fromTop).map(numbers => numbers.slice(0, 2))],
+    begin: (series, y) => [near.slice(0, 2), ...free.begin(series, y).map(numbers => numbers.slice(0, 2))],
   }
 }
 
+const SWINGS: Record<Exclude<RestingLaw, 'odd-rule'>, LawModel> = { topple, pendulum, 'over-edge': overEdge }
+
 /** The law as it starts from rest at the first key. `near`: the free law's fit. */
 export function fromRest(law: RestingLaw, near: Float64Array): LawModel {
-  return law === 'odd-rule' ? fallFromRest : swingFromRest(law, near)
+  return law === 'odd-rule' ? fallFromRest : swingFromRest(SWINGS[law], near)
 }
 
 /** A fit's numbers as the free law counts them. */

@@ -3,6 +3,7 @@ import type { Series } from '../series'
 import type { Measure, ReadingLaw } from '../types'
 import type { LawModel } from './model'
 import { oddRule } from './oddRule'
+import { overEdge } from './overEdge'
 import { pendulum } from './pendulum'
 import { mayStop, slowIn } from './slowIn'
 import { spin } from './spin'
@@ -15,7 +16,7 @@ export { LAW_WORDS, MEASURES } from './words'
 export const LAWS: Record<ReadingLaw, LawModel> = {
   'odd-rule': oddRule, topple, pendulum, steady, 'slow-in': slowIn, spin,
   // To come: until then these are told as their nearest kin.
-  'swing-decay': pendulum, 'bounce': oddRule, 'over-edge': topple,
+  'swing-decay': pendulum, 'bounce': oddRule, 'over-edge': overEdge,
 }
 
 /** Every law that such readings can be held against. */

@@ -31,9 +31,27 @@ export function confineSwing(_series: Series, numbers: Float64Array): void {
   numbers[0] = Math.min(MOST_LOG, Math.max(LEAST_LOG, numbers[0] as number))
 }
 
+/** A motion in its own measure: τ = kt, angles in radians, and the same from the same state at whatever time that is. */
+export interface Turning {
+  /** Fills `angle` and `rate` (dθ/dτ) for the first `n` of `taus`, from (start, push) at τ = 0. */
+  fill(start: number, push: number, taus: ArrayLike<number>, n: number, angle: Float64Array, rate: Float64Array): void
+  /** d²θ/dτ² in that state. */
+  pull(start: number, push: number): number
+}
+
+export const FROM_TOP: Turning = { fill: (start, push, ...rest) => freeSwing(start, push, true, ...rest), pull: Math.sin }
+export const HANGING: Turning = { fill: (start, push, ...rest) => freeSwing(start, push, false, ...rest), pull: start => -Math.sin(start) }
+
 /** Numbers: ln κ; angle at the first key, radians; turn rate there, radians per span. */
 export function traceSwing(
   series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean, fromTop: boolean,
+): Trace {
+  return traceTurning(series, numbers, x, withColumns, fromTop ? FROM_TOP : HANGING)
+}
+
+/** The same for any such motion. */
+export function traceTurning(
+  series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean, motion: Turning,
 ): Trace {
   const kappa = Math.exp(numbers[0] as number)
   const start = numbers[1] as number
@@ -44,8 +62,8 @@ export function traceSwing(
   for (let i = 0; i < n; i++) taus[i] = (x[i] as number) * kappa
   const value = new Float64Array(n)
   const rate = new Float64Array(n)
-  freeSwing(start, push, fromTop, taus, n, value, rate)
-  const columns = withColumns ? columnsOf(kappa, start, push, n, value, rate, perRadian, fromTop) : []
+  motion.fill(start, push, taus, n, value, rate)
+  const columns = withColumns ? columnsOf(kappa, start, push, n, value, rate, perRadian, motion) : []
   for (let i = 0; i < n; i++) {
     value[i] = ((value[i] as number) - zero) * perRadian
     rate[i] = (rate[i] as number) * kappa * perRadian
@@ -58,9 +76,9 @@ export function traceSwing(
  * known exactly; only the direction across it needs a second solution close by.
  */
 function columnsOf(
-  kappa: number, start: number, push: number, n: number, angle: Float64Array, rate: Float64Array, perRadian: number, fromTop: boolean,
+  kappa: number, start: number, push: number, n: number, angle: Float64Array, rate: Float64Array, perRadian: number, motion: Turning,
 ): Float64Array[] {
-  const turn = fromTop ? Math.sin(start) : -Math.sin(start)
+  const turn = motion.pull(start, push)
   const size = Math.hypot(push, turn)
   const known = size > 1e-6
   const alongStart = known ? push / size : 1
@@ -69,10 +87,10 @@ function columnsOf(
   if (known) {
     for (let i = 0; i < n; i++) along[i] = (rate[i] as number) / size
   } else {
-    freeSwing(start + alongStart * step, push + alongPush * step, fromTop, taus, n, shifted, spare)
+    motion.fill(start + alongStart * step, push + alongPush * step, taus, n, shifted, spare)
     for (let i = 0; i < n; i++) along[i] = ((shifted[i] as number) - (angle[i] as number)) / step
   }
-  freeSwing(start - alongPush * step, push + alongStart * step, fromTop, taus, n, shifted, spare)
+  motion.fill(start - alongPush * step, push + alongStart * step, taus, n, shifted, spare)
   const byLog = new Float64Array(n)
   const byStart = new Float64Array(n)
   const byTurn = new Float64Array(n)
@@ -90,12 +108,13 @@ function columnsOf(
 
 /**
  * Beginnings for the search. Integrating θ″ = ±κ² sin θ twice along the posted readings gives θ = θ₁ + ω₁x ± κ²∬sin θ, which is
- * linear in the three unknowns, and integration smooths the pencil instead of sharpening it.
+ * linear in the three unknowns, and integration smooths the pencil instead of sharpening it. Further from 0 than `upTo` (radians) nothing
+ * pulls.
  */
-export function beginSwing(series: Series, y: Float64Array, fromTop: boolean): Float64Array[] {
+export function beginSwing(series: Series, y: Float64Array, fromTop: boolean, upTo = Infinity): Float64Array[] {
   const { n, x, perRadian, zero } = series
   const angle = y.map(reading => reading / perRadian + zero)
-  const pull = angle.map(a => (fromTop ? Math.sin(a) : -Math.sin(a)))
+  const pull = angle.map(a => (Math.abs(a) > upTo ? 0 : fromTop ? Math.sin(a) : -Math.sin(a)))
   const slope = new Float64Array(n)
   for (let i = 0; i < n; i++) {
     const left = Math.max(0, i - 1)

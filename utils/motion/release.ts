@@ -1,0 +1,109 @@
+/** Where a body going over a brink lets go: as the law has it, and as it was drawn. */
+import { DOUBT, DOUBT_WITH_FAULTS, UNNOTICED, cheapest, storyCost } from './choose'
+import { edgeEnergy, leavingCosine, releaseAt } from './edge'
+import type { Release } from './edge'
+import { MOST_TOGETHER, badDrawings, longestRun, mostMisplaced, pencil, stories, strain } from './hypotheses'
+import type { Care, Story } from './hypotheses'
+import { fullNumbers } from './laws/fromRest'
+import { ownAngle, ownRelease, overEdge } from './laws/overEdge'
+import { RADIAN } from './series'
+import type { Series } from './series'
+import { uncertainty } from './size'
+import type { Considered } from './start'
+import type { Figure, ReadingCheck } from './types'
+
+/** Drawings that must lie on the arc, and after it, before anything is said of where the one became the other. */
+const LEAST_BEFORE = 3
+const LEAST_AFTER = 2
+const STEP = 1e-5
+
+/** The list under its own leaving angle. Degrees from upright. */
+export interface OwnRelease {
+  story: Story
+  angle: number
+  /** Where this body, moving like that, would have left. */
+  leaves: number
+  /** Index of the first drawing after the brink. */
+  after: number
+}
+
+/** The release that a fit's numbers stand for, and its time in spans. */
+function releaseOf(series: Series, numbers: Float64Array): Release & { x: number } {
+  const kappa = Math.exp(numbers[0] as number)
+  const start = numbers[1] as number
+  const push = (numbers[2] as number) / kappa
+  const cosine = numbers.length > 3 ? Math.cos(ownAngle(numbers)) : leavingCosine(series.edgeRatio, edgeEnergy(start, push))
+  const release = releaseAt(start, push, cosine)
+  return { ...release, x: release.tau / kappa }
+}
+
+const degreesOut = ({ angle }: Release) => Math.abs(angle) / RADIAN
+
+/**
+ * The list's own leaving angle where it explains the list clearly better than the law's: by the same margins as another law has to, the
+ * extra number charged for. Null where it doesn't, where another law does better still, or where too little is drawn on either side.
+ */
+export function wrongRelease(series: Series, { choice, opinion }: Considered, care: Care): OwnRelease | null {
+  const { claimed, others } = choice
+  const faulted = badDrawings(series, claimed.story, care).length > 0 || claimed.story.shift !== null
+  if (opinion.kind === 'too-short' || (opinion.kind === 'law-holds' && !faulted && claimed.misfit <= UNNOTICED)) return null
+  if (series.n < ownRelease.size + 2) return null
+  const told = stories(series, ownRelease, care)
+  const sigma = Math.min(choice.sigma, pencil(told, series.n, care))
+  const story = cheapest(series, told, care, sigma)
+  const bad = badDrawings(series, story, care)
+  if (bad.length > mostMisplaced(series.n) || longestRun(bad) > MOST_TOGETHER) return null
+  const cost = storyCost(story, sigma, series.n)
+  if (cost + (faulted ? DOUBT_WITH_FAULTS : DOUBT) >= storyCost(claimed.story, sigma, series.n)) return null
+  if (others.some(({ misfit, breaking, story: other }) => misfit <= 1 && breaking <= 0.1 && storyCost(other, sigma, series.n) < cost)) return null
+
+  const { numbers } = story.fit
+  const own = releaseOf(series, numbers)
+  const law = releaseOf(series, numbers.subarray(0, 3))
+  const lag = story.shift && own.x > (series.x[story.shift.at] as number) - story.shift.by ? story.shift.by : 0
+  const after = series.x.findIndex(x => x - lag > own.x)
+  if (after < LEAST_BEFORE || series.n - after < LEAST_AFTER || !breaksTheLaw(series, story, care)) return null
+  const late = degreesOut(own) - degreesOut(law)
+  const half = uncertainty(story.fit, slopes(numbers, at => degreesOut(releaseOf(series, at)) - degreesOut(releaseOf(series, at.subarray(0, 3)))), series.n - story.out.length, care.least)
+  return Math.abs(late) > half
+    ? { story, angle: degreesOut(own), leaves: degreesOut(law), after }
+    : null
+}
+
+/** True where some drawing after the brink really lies off the law's line from the same start. */
+function breaksTheLaw(series: Series, { fit, shift }: Story, care: Care): boolean {
+  const times = shift ? series.x.map((x, i) => (i >= shift.at ? x - shift.by : x)) : series.x
+  const trace = overEdge.trace(series, fit.numbers.subarray(0, 3), times, false)
+  const strained = strain({ ...series, y: fit.trace.value }, { ...fit, trace }, care, shift)
+  return strained.some(value => value > 1)
+}
+
+/** d value / d number, by central differences. */
+function slopes(numbers: Float64Array, value: (numbers: Float64Array) => number): Float64Array {
+  return numbers.map((number, p) => {
+    const step = STEP * Math.max(1, Math.abs(number))
+    const [more, less] = [numbers.slice(), numbers.slice()]
+    more[p] = number + step
+    less[p] = number - step
+    return (value(more) - value(less)) / (2 * step)
+  })
+}
+
+/** Angle and frame of leaving with their 95 % intervals, where that lies within the list; none for other laws. */
+export function releaseFigures(request: ReadingCheck, series: Series, story: Story, lag: number, care: Care): Figure[] {
+  const { fit, out } = story
+  if (fit.model.law !== 'over-edge') return []
+  const numbersOf = (numbers: Float64Array) => fullNumbers(fit.model, numbers)
+  const { x } = releaseOf(series, numbersOf(fit.numbers))
+  if (!(x > 0 && x + lag < 1)) return []
+  const figure = (kind: Figure['kind'], unit: string, value: (numbers: Float64Array) => number): Figure => {
+    const at = value(fit.numbers)
+    const half = Math.min(Number.MAX_SAFE_INTEGER, uncertainty(fit, slopes(fit.numbers, value), series.n - out.length, care.least))
+    return { kind, value: at, low: at - half, high: at + half, unit }
+  }
+  const first = request.keys[0]?.frame ?? 0
+  return [
+    figure('release-angle', 'deg', numbers => degreesOut(releaseOf(series, numbersOf(numbers)))),
+    figure('release', 'frame', numbers => first + (lag + releaseOf(series, numbersOf(numbers)).x) * series.spanFrames),
+  ]
+}
