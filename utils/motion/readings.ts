@@ -12,7 +12,7 @@ import { ruledList, traceLine } from './line'
 import type { Line } from './line'
 import { judgeKeys, unjudged } from './perKey'
 import { claimFromRest } from './claimFromRest'
-import { releaseFigures, wrongRelease } from './release'
+import { allInTheAir, releaseFigures, wrongRelease } from './release'
 import type { OwnRelease } from './release'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
@@ -42,6 +42,7 @@ export interface Judgement {
 }
 
 const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
+const IN_THE_AIR = 'Every drawing is off the brink already: nothing of the arc is left to judge.'
 const SCALE_FLOOR = 0.03
 
 /** Judges a list of readings; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
@@ -72,9 +73,13 @@ function judgeRow(request: ReadingCheck): Judgement {
   if (atRest && moves(atRest, care) && beyondDoubt(series, atRest, plain.fit, care)) return answer(request, series, atRest, care)
   const free = consider(request, series, plain, rivals, care, range)
   if (!moves(free, care)) return undecided(request, STILL)
+  if (request.law === 'over-edge') {
+    // Before the start is doubted: a push would let go early too.
+    const own = wrongRelease(series, atRest || free, care, Boolean(atRest))
+    if (own) return letGoWrongly(request, series, own, atRest || free, care)
+    if (allInTheAir(series, free)) return undecided(request, IN_THE_AIR)
+  }
   if (atRest && alreadyMoving(series, atRest, free, care)) return notAtRest(request, series, atRest, free, care)
-  const own = request.law === 'over-edge' ? wrongRelease(series, atRest ?? free, care) : null
-  if (own) return letGoWrongly(request, series, own, atRest ?? free, care)
   return answer(request, series, atRest ?? free, care)
 }
 
@@ -169,7 +174,7 @@ function notAtRest(request: ReadingCheck, series: Series, atRest: Considered, fr
 function letGoWrongly(request: ReadingCheck, series: Series, own: OwnRelease, { choice }: Considered, care: Care): Judgement {
   const { story } = own
   const { lag } = lineOf(request, series, story)
-  const line: Line = { law: 'over-edge', numbers: Array.from(story.fit.numbers.subarray(0, 3)), lag }
+  const line: Line = { law: 'over-edge', numbers: Array.from(fullNumbers(story.fit.model, story.fit.numbers).subarray(0, 3)), lag }
   const keys = judgeKeys(request, series, traceLine(series, line, series.x))
   const drawn = story.fit.model.trace(series, story.fit.numbers, series.x.map(x => x - lag), false)
   const drawnKeys = judgeKeys(request, series, drawn)

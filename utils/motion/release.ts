@@ -4,7 +4,7 @@ import { edgeEnergy, leavingCosine, releaseAt } from './edge'
 import type { Release } from './edge'
 import { MOST_TOGETHER, badDrawings, longestRun, mostMisplaced, pencil, stories, strain } from './hypotheses'
 import type { Care, Story } from './hypotheses'
-import { fullNumbers } from './laws/fromRest'
+import { fullNumbers, ownReleaseFromRest } from './laws/fromRest'
 import { ownAngle, ownRelease, overEdge } from './laws/overEdge'
 import { RADIAN } from './series'
 import type { Series } from './series'
@@ -43,28 +43,33 @@ const degreesOut = ({ angle }: Release) => Math.abs(angle) / RADIAN
  * The list's own leaving angle where it explains the list clearly better than the law's: by the same margins as another law has to, the
  * extra number charged for. Null where it doesn't, where another law does better still, or where too little is drawn on either side.
  */
-export function wrongRelease(series: Series, { choice, opinion }: Considered, care: Care): OwnRelease | null {
+export function wrongRelease(series: Series, { choice, opinion }: Considered, care: Care, atRest: boolean): OwnRelease | null {
   const { claimed, others } = choice
-  const faulted = badDrawings(series, claimed.story, care).length > 0 || claimed.story.shift !== null
-  if (opinion.kind === 'too-short' || (opinion.kind === 'law-holds' && !faulted && claimed.misfit <= UNNOTICED)) return null
-  if (series.n < ownRelease.size + 2) return null
-  const told = stories(series, ownRelease, care)
+  const faults = (story: Story) => badDrawings(series, story, care).length + (story.shift ? 1 : 0)
+  const faulted = faults(claimed.story)
+  if (opinion.kind === 'too-short' || (opinion.kind === 'law-holds' && faulted === 0 && claimed.misfit <= UNNOTICED)) return null
+  const model = atRest ? ownReleaseFromRest : ownRelease
+  if (series.n < model.size + 2) return null
+  const told = stories(series, model, care)
   const sigma = Math.min(choice.sigma, pencil(told, series.n, care))
   const story = cheapest(series, told, care, sigma)
   const bad = badDrawings(series, story, care)
   if (bad.length > mostMisplaced(series.n) || longestRun(bad) > MOST_TOGETHER) return null
   const cost = storyCost(story, sigma, series.n)
-  if (cost + (faulted ? DOUBT_WITH_FAULTS : DOUBT) >= storyCost(claimed.story, sigma, series.n)) return null
+  // Where it doesn't do away with any other fault, only what could be noticed counts.
+  const saves = faults(story) < faulted
+  if (!saves && claimed.misfit <= UNNOTICED) return null
+  if (cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) >= storyCost(claimed.story, sigma, series.n)) return null
   if (others.some(({ misfit, breaking, story: other }) => misfit <= 1 && breaking <= 0.1 && storyCost(other, sigma, series.n) < cost)) return null
 
-  const { numbers } = story.fit
-  const own = releaseOf(series, numbers)
-  const law = releaseOf(series, numbers.subarray(0, 3))
+  const full = (numbers: Float64Array) => fullNumbers(model, numbers)
+  const own = releaseOf(series, full(story.fit.numbers))
+  const law = releaseOf(series, full(story.fit.numbers).subarray(0, 3))
   const lag = story.shift && own.x > (series.x[story.shift.at] as number) - story.shift.by ? story.shift.by : 0
   const after = series.x.findIndex(x => x - lag > own.x)
   if (after < LEAST_BEFORE || series.n - after < LEAST_AFTER || !breaksTheLaw(series, story, care)) return null
   const late = degreesOut(own) - degreesOut(law)
-  const half = uncertainty(story.fit, slopes(numbers, at => degreesOut(releaseOf(series, at)) - degreesOut(releaseOf(series, at.subarray(0, 3)))), series.n - story.out.length, care.least)
+  const half = uncertainty(story.fit, slopes(story.fit.numbers, at => degreesOut(releaseOf(series, full(at))) - degreesOut(releaseOf(series, full(at).subarray(0, 3)))), series.n - story.out.length, care.least)
   return Math.abs(late) > half
     ? { story, angle: degreesOut(own), leaves: degreesOut(law), after }
     : null
@@ -73,7 +78,7 @@ export function wrongRelease(series: Series, { choice, opinion }: Considered, ca
 /** True where some drawing after the brink really lies off the law's line from the same start. */
 function breaksTheLaw(series: Series, { fit, shift }: Story, care: Care): boolean {
   const times = shift ? series.x.map((x, i) => (i >= shift.at ? x - shift.by : x)) : series.x
-  const trace = overEdge.trace(series, fit.numbers.subarray(0, 3), times, false)
+  const trace = overEdge.trace(series, fullNumbers(fit.model, fit.numbers).subarray(0, 3), times, false)
   const strained = strain({ ...series, y: fit.trace.value }, { ...fit, trace }, care, shift)
   return strained.some(value => value > 1)
 }
@@ -106,4 +111,11 @@ export function releaseFigures(request: ReadingCheck, series: Series, story: Sto
     figure('release-angle', 'deg', numbers => degreesOut(releaseOf(series, numbersOf(numbers)))),
     figure('release', 'frame', numbers => first + (lag + releaseOf(series, numbersOf(numbers)).x) * series.spanFrames),
   ]
+}
+
+/** True where a list turns evenly and begins beyond the angle at which this body would have left from rest. */
+export function allInTheAir(series: Series, { choice, opinion }: Considered): boolean {
+  const even = opinion.kind === 'too-short' || (opinion.kind === 'wrong-law' && opinion.reads === 'steady')
+  const first = (choice.plain.fit.trace.value[0] as number) / series.perRadian + series.zero
+  return even && Math.cos(first) < leavingCosine(series.edgeRatio, 1)
 }

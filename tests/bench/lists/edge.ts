@@ -140,6 +140,8 @@ function attempt(chance: Chance, family: Family, measure: 'angle' | 'point'): Ed
   if (release) {
     const after = at.filter(frame => frame / fps > release.t).length
     if (after < 4 || at.length - after < 4) return null
+    // Nothing of an arc can be told from one that has hardly begun to be drawn.
+    if (Math.abs(release.angle) - Math.abs((states[begun] as EdgeState).angle) < 15 / DEGREE) return null
   }
   if (family === 'early' || family === 'late' || family === 'straight down') {
     // The fault has to show: somewhere it is drawn three allowances from where the body would have been.
@@ -184,6 +186,8 @@ function attempt(chance: Chance, family: Family, measure: 'angle' | 'point'): Ed
       const moved = (drawn[i] as number[]).map((value, axis) => write(value + (way[axis] as number) * by))
       // It stays between its neighbours: further, and it would be another fault.
       if (Math.abs(by) > 0.45 * between(next, before)) continue
+      const beside = [drawn[i - 1] as number[], drawn[i + 1] as number[]] as const
+      if (measure === 'angle' && ((moved[0] as number) - (beside[0][0] as number)) * ((moved[0] as number) - (beside[1][0] as number)) >= 0) continue
       drawn[i] = moved
       chosen.push(i)
     }

@@ -6,7 +6,7 @@ import type { Series } from '../series'
 import type { RestingLaw } from '../standstill'
 import type { LawModel, Trace } from './model'
 import { oddRule } from './oddRule'
-import { overEdge } from './overEdge'
+import { overEdge, ownRelease } from './overEdge'
 import { pendulum } from './pendulum'
 import { confineSwing } from './swinging'
 import { topple } from './topple'
@@ -25,20 +25,24 @@ const fallFromRest: LawModel = {
   begin: () => [new Float64Array(2)],
 }
 
-/** Numbers: ln κ and the angle at the first key, radians. `near`: numbers of the free law's fit, as one more place to begin. */
-function swingFromRest(free: LawModel, near: Float64Array): LawModel {
-  const full = ([log = 0, angle = 0]: Float64Array) => Float64Array.of(log, angle, 0)
+/** Place of the turn rate at the first key among a swing's numbers. */
+const TURN = 2
+
+/** Numbers: those of the free law but for its turn rate. `near`: numbers of the free law's fit, as one more place to begin. */
+function swingFromRest(free: LawModel, near: Float64Array | null): LawModel {
+  const full = ([log = 0, angle = 0, ...rest]: Float64Array) => Float64Array.of(log, angle, 0, ...rest)
+  const held = (_: unknown, number: number) => number !== TURN
   return {
     law: free.law,
-    size: 2,
+    size: free.size - 1,
     linear: false,
     full,
     trace(series, numbers, x, withColumns) {
       const trace = free.trace(series, full(numbers), x, withColumns)
-      return { ...trace, columns: trace.columns.slice(0, 2) }
+      return { ...trace, columns: trace.columns.filter(held) }
     },
     confine: confineSwing,
-    begin: (series, y) => [near.slice(0, 2), ...free.begin(series, y).map(numbers => numbers.slice(0, 2))],
+    begin: (series, y) => [...(near ? [near] : []), ...free.begin(series, y)].map(numbers => numbers.filter(held)),
   }
 }
 
@@ -48,6 +52,9 @@ const SWINGS: Record<Exclude<RestingLaw, 'odd-rule'>, LawModel> = { topple, pend
 export function fromRest(law: RestingLaw, near: Float64Array): LawModel {
   return law === 'odd-rule' ? fallFromRest : swingFromRest(SWINGS[law], near)
 }
+
+/** A body that goes over from rest, with a leaving angle of its own. */
+export const ownReleaseFromRest = swingFromRest(ownRelease, null)
 
 /** A fit's numbers as the free law counts them. */
 export function fullNumbers(model: LawModel, numbers: Float64Array): Float64Array {
