@@ -1,0 +1,33 @@
+/** The judge's bars on bodies over the edge, on a fixed set of lists made by the bench's own integrator (tests/bench/lists/edge.ts). */
+import { describe, expect, it } from 'vitest'
+import { scoreEdge } from '../../bench/edgeScore'
+import { makeEdgeLists } from '../../bench/lists/edge'
+
+describe('made lists of bodies over the edge', () => {
+  const score = scoreEdge(makeEdgeLists(200, 20262, ['angle']))
+
+  it('finds the right kind at the right frames in 98 of 100', () => {
+    expect(score.lists).toBe(200)
+    expect(score.right / score.lists).toBeGreaterThanOrEqual(0.98)
+  })
+
+  it('does so in every family', () => {
+    // Twenty lists a family and 95 in 100 leave room for one slip.
+    for (const row of score.rows) expect(row.lists - row.right, row.family).toBeLessThanOrEqual(1)
+  })
+
+  it('leaves clean lists alone and tells one cause once', () => {
+    expect(score.cleanFlagged).toBeLessThanOrEqual(0.01)
+    expect(score.doubled).toBeLessThanOrEqual(0.01)
+  })
+
+  it('knows where they let go, and their size', () => {
+    // 40 lists: 95 % of them is 38, and two spreads of a binomial either way are 35 to 40.
+    expect(score.covered).toBe(40)
+    expect(score.sizes).toBeGreaterThanOrEqual(35 / 40)
+    expect(score.angles).toBeGreaterThanOrEqual(35 / 40)
+    expect(score.frames).toBeGreaterThanOrEqual(35 / 40)
+    expect(score.medianSizeError).toBeLessThan(0.02)
+    expect(score.medianAngleError).toBeLessThan(1)
+  })
+})
