@@ -17,7 +17,7 @@ export function claimFromRest(request: ReadingCheck, series: Series): Key[] | nu
 }
 
 /** The laws by which a body let go starts to move by itself. */
-const FALLS = { 'odd-rule': true, 'topple': true, 'pendulum': true } satisfies Partial<Record<Law, true>>
+const FALLS = { 'odd-rule': true, 'topple': true, 'over-edge': true, 'pendulum': true } satisfies Partial<Record<Law, true>>
 
 function claimedReadings({ law, subject }: ReadingCheck, series: Series): Float64Array | null {
   if (!subject || !(law in FALLS)) return null

@@ -1,6 +1,7 @@
-/** What else a law's timing tells beside the size: where it stops, how fast it turns. */
+/** What else a law's timing tells beside the size: where it stops, how fast it turns, where it lets go. */
 import type { Fit } from './fit'
 import type { Line } from './line'
+import { releaseFigures } from './release'
 import type { Series } from './series'
 import { uncertainty } from './size'
 import { fullTurn } from './turns'
@@ -27,6 +28,7 @@ export function figuresOf(request: ReadingCheck, series: Series, fit: Fit, line:
       const way = Math.sign(numbers[1] as number) || 1
       return [figureOf('turns', 'turns/s', way * perSecond * (numbers[1] as number), [0, perSecond], fit, kept, least)]
     }
+    case 'over-edge': return releaseFigures(request, series, fit, line.lag, kept, least)
     default: return []
   }
 }

@@ -12,7 +12,7 @@ import { ruledList, traceLine } from './line'
 import type { Line } from './line'
 import { judgeKeys, unjudged } from './perKey'
 import { claimFromRest } from './claimFromRest'
-import { allInTheAir, releaseFigures, wrongRelease } from './release'
+import { allInTheAir, wrongRelease } from './release'
 import type { OwnRelease } from './release'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
@@ -187,7 +187,7 @@ function letGoWrongly(request: ReadingCheck, series: Series, own: OwnRelease, { 
     result: {
       verdict: 'breaks', reason: null, keys, findings, readsAs: ranked(choice).map(({ law, misfit }) => ({ law, misfit })),
       size: scale.size, claim: claimFrames(series, scale), ruled: ruledBy(request, series, line, scale),
-      figures: releaseFigures(request, series, story, lag, care),
+      figures: figuresOf(request, series, story.fit, line, series.n - story.out.length, care.least),
     },
   }
 }

@@ -2,8 +2,9 @@
 import { DOUBT, DOUBT_WITH_FAULTS, UNNOTICED, cheapest, storyCost } from './choose'
 import { edgeEnergy, leavingCosine, releaseAt } from './edge'
 import type { Release } from './edge'
-import { MOST_TOGETHER, badDrawings, longestRun, mostMisplaced, pencil, stories, strain } from './hypotheses'
-import type { Care, Story } from './hypotheses'
+import type { Fit } from './fit'
+import { MOST_TOGETHER, badDrawings, longestRun, mostMisplaced, pencil, plainFit, stories, strain } from './hypotheses'
+import type { Care, Plain, Story } from './hypotheses'
 import { fullNumbers, ownReleaseFromRest } from './laws/fromRest'
 import { ownAngle, ownRelease, overEdge } from './laws/overEdge'
 import { RADIAN } from './series'
@@ -50,7 +51,9 @@ export function wrongRelease(series: Series, { choice, opinion }: Considered, ca
   if (opinion.kind === 'too-short' || (opinion.kind === 'law-holds' && faulted === 0 && claimed.misfit <= UNNOTICED)) return null
   const model = atRest ? ownReleaseFromRest : ownRelease
   if (series.n < model.size + 2) return null
-  const told = stories(series, model, care)
+  const plain = plainFit(series, model, care)
+  if (!nearlyTold(series, plain, care)) return null
+  const told = stories(series, plain, care)
   const sigma = Math.min(choice.sigma, pencil(told, series.n, care))
   const story = cheapest(series, told, care, sigma)
   const bad = badDrawings(series, story, care)
@@ -75,6 +78,12 @@ export function wrongRelease(series: Series, { choice, opinion }: Considered, ca
     : null
 }
 
+/** A first look, to leave lists alone that no leaving angle would explain. */
+function nearlyTold(series: Series, { fit, base }: Plain, care: Care): boolean {
+  const breaking = (one: Fit) => strain(series, one, care).reduce((count, value) => (value > 1 ? count + 1 : count), 0)
+  return Math.min(breaking(fit), breaking(base)) <= Math.max(4, series.n / 3)
+}
+
 /** True where some drawing after the brink really lies off the law's line from the same start. */
 function breaksTheLaw(series: Series, { fit, shift }: Story, care: Care): boolean {
   const times = shift ? series.x.map((x, i) => (i >= shift.at ? x - shift.by : x)) : series.x
@@ -94,16 +103,14 @@ function slopes(numbers: Float64Array, value: (numbers: Float64Array) => number)
   })
 }
 
-/** Angle and frame of leaving with their 95 % intervals, where that lies within the list; none for other laws. */
-export function releaseFigures(request: ReadingCheck, series: Series, story: Story, lag: number, care: Care): Figure[] {
-  const { fit, out } = story
-  if (fit.model.law !== 'over-edge') return []
+/** Angle and frame of leaving with their 95 % intervals, where that lies within the list. `kept` and `least` as for `figuresOf`. */
+export function releaseFigures(request: ReadingCheck, series: Series, fit: Fit, lag: number, kept: number, least: number): Figure[] {
   const numbersOf = (numbers: Float64Array) => fullNumbers(fit.model, numbers)
   const { x } = releaseOf(series, numbersOf(fit.numbers))
   if (!(x > 0 && x + lag < 1)) return []
   const figure = (kind: Figure['kind'], unit: string, value: (numbers: Float64Array) => number): Figure => {
     const at = value(fit.numbers)
-    const half = Math.min(Number.MAX_SAFE_INTEGER, uncertainty(fit, slopes(fit.numbers, value), series.n - out.length, care.least))
+    const half = Math.min(Number.MAX_SAFE_INTEGER, uncertainty(fit, slopes(fit.numbers, value), kept, least))
     return { kind, value: at, low: at - half, high: at + half, unit }
   }
   const first = request.keys[0]?.frame ?? 0

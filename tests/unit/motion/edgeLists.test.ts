@@ -4,15 +4,15 @@ import { scoreEdge } from '../../bench/edgeScore'
 import { makeEdgeLists } from '../../bench/lists/edge'
 
 describe('made lists of bodies over the edge', () => {
-  const score = scoreEdge(makeEdgeLists(200, 20262, ['angle']))
+  const score = scoreEdge(makeEdgeLists(100, 20262, ['angle']))
 
   it('finds the right kind at the right frames in 98 of 100', () => {
-    expect(score.lists).toBe(200)
+    expect(score.lists).toBe(100)
     expect(score.right / score.lists).toBeGreaterThanOrEqual(0.98)
   })
 
   it('does so in every family', () => {
-    // Twenty lists a family and 95 in 100 leave room for one slip.
+    // Ten lists a family: one slip, and the bench asks for 95 in 100 of many more.
     for (const row of score.rows) expect(row.lists - row.right, row.family).toBeLessThanOrEqual(1)
   })
 
@@ -22,11 +22,11 @@ describe('made lists of bodies over the edge', () => {
   })
 
   it('knows where they let go, and their size', () => {
-    // 40 lists: 95 % of them is 38, and two spreads of a binomial either way are 35 to 40.
-    expect(score.covered).toBe(40)
-    expect(score.sizes).toBeGreaterThanOrEqual(35 / 40)
-    expect(score.angles).toBeGreaterThanOrEqual(35 / 40)
-    expect(score.frames).toBeGreaterThanOrEqual(35 / 40)
+    // 20 lists: 95 % of them is 19, and two spreads of a binomial below that are 17.
+    expect(score.covered).toBe(20)
+    expect(score.sizes).toBeGreaterThanOrEqual(17 / 20)
+    expect(score.angles).toBeGreaterThanOrEqual(17 / 20)
+    expect(score.frames).toBeGreaterThanOrEqual(17 / 20)
     expect(score.medianSizeError).toBeLessThan(0.02)
     expect(score.medianAngleError).toBeLessThan(1)
   })

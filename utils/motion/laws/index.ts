@@ -15,8 +15,9 @@ export { LAW_WORDS, MEASURES } from './words'
 
 export const LAWS: Record<ReadingLaw, LawModel> = {
   'odd-rule': oddRule, topple, pendulum, steady, 'slow-in': slowIn, spin,
+  'over-edge': overEdge,
   // To come: until then these are told as their nearest kin.
-  'swing-decay': pendulum, 'bounce': oddRule, 'over-edge': overEdge,
+  'swing-decay': pendulum, 'bounce': oddRule,
 }
 
 /** Every law that such readings can be held against. */

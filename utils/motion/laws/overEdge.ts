@@ -3,7 +3,7 @@ import { edgeEnergy, leavingCosine, overBrink, releaseAt } from '../edge'
 import { RADIAN } from '../series'
 import type { Series } from '../series'
 import type { LawModel, Trace } from './model'
-import { beginSwing, traceTurning } from './swinging'
+import { beginSwing, confineSwing, traceTurning } from './swinging'
 import type { Turning } from './swinging'
 
 /** Where a search may have the body let go, radians: less is no arc, more is underneath the brink. */
@@ -28,6 +28,7 @@ export const overEdge: LawModel = {
   size: 3,
   linear: false,
   trace: (series, numbers, x, withColumns) => traceTurning(series, numbers, x, withColumns, byLaw(series)),
+  confine: confineSwing,
   begin: (series, y) => {
     const rest = Math.acos(leavingCosine(series.edgeRatio, 1))
     // A push takes it off earlier, a lean to start from later.
@@ -50,6 +51,7 @@ export const ownRelease: LawModel = {
     const slope = tau > 0 && turn !== 0 ? Math.sin(angle) / Math.abs(turn) * series.perRadian : 0
     return { ...trace, columns: [...trace.columns, x.map(at => slope * Math.max(0, at * kappa - tau))] }
   },
+  confine: confineSwing,
   begin(series, y) {
     const far = y.reduce((most, reading) => Math.max(most, Math.abs(reading / series.perRadian + series.zero)), 0)
     const upTo = Math.min(far, MOST_ANGLE)
