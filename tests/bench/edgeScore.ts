@@ -95,3 +95,18 @@ export function scoreEdge(lists: readonly EdgeList[]): EdgeScore {
     covered: count.covered, medianSizeError: median(errors), medianAngleError: median(off),
   }
 }
+
+const percent = (share: number) => `${(100 * share).toFixed(1)} %`
+
+export function edgeTable(score: EdgeScore): string {
+  return [
+    'over the edge                   lists   right   two kinds',
+    ...score.rows.map(row => `${row.family.padEnd(30)}${String(row.lists).padStart(7)}${percent(row.right / row.lists).padStart(9)}${String(row.doubled).padStart(9)}`),
+    '',
+    `right kind and frames, overall     ${percent(score.right / score.lists)} of ${score.lists}`,
+    `clean lists with any finding       ${percent(score.cleanFlagged)}`,
+    `one fault told under two kinds     ${percent(score.doubled)}`,
+    `inside the 95 % interval, of ${String(score.covered).padEnd(6)}size ${percent(score.sizes)}, leaving angle ${percent(score.angles)}, its frame ${percent(score.frames)}`,
+    `median size error                  ${percent(score.medianSizeError)}; of a wrong leaving angle ${score.medianAngleError.toFixed(2)}°`,
+  ].join('\n')
+}

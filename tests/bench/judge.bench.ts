@@ -1,6 +1,8 @@
 /** The judge's score table and speed over freshly made lists. Bundle and run; no test runner needed. */
 import { judge } from '../../utils/motion'
 import type { ReadingCheck } from '../../utils/motion'
+import { edgeTable, scoreEdge } from './edgeScore'
+import { makeEdgeLists } from './lists/edge'
 import { makeLists } from './lists/make'
 import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
 import { makePointLists } from './lists/points'
@@ -70,4 +72,5 @@ export default async function run(): Promise<void> {
   console.log(runJudgeBench().table)
   console.log(`\n${spanTable(scoreSpans(makeSpans(24 * SPAN_ROUND, 7)))}`)
   console.log(`\n${pointTable(scorePoints(makePointLists(2024, 7)))}`)
+  console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(1000, 7, ['angle'])))}`)
 }
