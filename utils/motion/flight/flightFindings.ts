@@ -7,6 +7,7 @@ import type { FlightFault } from './flightRivals'
 const FAULTS: Record<Exclude<FlightFault, 'sideways'>, string> = {
   'steady': 'This is not a flight; it reads as even spacing along a straight line: nothing pulls it down.',
   'odd-rule': 'This is not a flight; it reads as the odd rule along a straight line: it gathers speed sideways too.',
+  'down': 'This is not a flight: it goes evenly sideways, but what it falls keeps no odd rule.',
   'upward': 'This is not a flight: it falls upward. If y counts the other way on this drawing, say so in the claim.',
   'neither': 'This is not a flight: it neither goes evenly sideways nor falls by the odd rule.',
 }

@@ -1,6 +1,6 @@
 /** Whether a list of points is a flight at all, and what it is otherwise. */
 import { DOUBT, DOUBT_WITH_FAULTS, UNNOTICED } from '../choose'
-import { MISPLACED_CHARGE } from '../hypotheses'
+import { mostMisplaced } from '../hypotheses'
 import { leastLine } from '../path/taubin'
 import type { LawMisfit } from '../types'
 import { flightCost, planarPencil, tooMany } from './flightStories'
@@ -14,7 +14,7 @@ const MOST_PER_DRAWING = 7
 const EVEN_ENOUGH = 0.5
 
 /** What is wrong with the law itself, in the words of the flight's two rules. */
-export type FlightFault = 'steady' | 'odd-rule' | 'sideways' | 'upward' | 'neither'
+export type FlightFault = 'steady' | 'odd-rule' | 'sideways' | 'down' | 'upward' | 'neither'
 
 export interface FlightOpinion {
   fault: FlightFault | 'too-short' | null
@@ -52,9 +52,18 @@ function alongLine({ sheet, series }: Flown, ones: Float64Array): PlanarFit {
   return { ...fit, ...back(fit.x, fit.y), cx: c01.x, cy: c01.y }
 }
 
+/** Which of the two rules breaks: the directions are fitted apart, so each is told by its own offsets. */
+function brokenRule({ sheet, care }: Flown, { fit }: FlightStory): FlightFault {
+  const allowed = planarAllowances(fit, care.slop, care.tolerance)
+  const breaks = (drawn: Float64Array, line: Float64Array) =>
+    allowed.filter((allowance, i) => Math.abs((drawn[i] as number) - (line[i] as number)) > allowance).length > mostMisplaced(sheet.n)
+  const [sideways, down] = [breaks(sheet.x, fit.x), breaks(sheet.y, fit.y)]
+  return sideways === down ? 'neither' : sideways ? 'sideways' : 'down'
+}
+
 /**
  * Keeps to the flight, doubts it, or says that the list can't tell. `agrees`: the claimed gravity itself would not be seen in so short a
- * list. `down`: gravity comes out pointing down, or can't be told from doing so.
+ * list. `down`: gravity comes out pointing down.
  */
 export function flightOpinion(flown: Flown, story: FlightStory, told: readonly FlightStory[], agrees: boolean, down: boolean): FlightOpinion {
   const { sheet, series, care } = flown
@@ -85,19 +94,16 @@ export function flightOpinion(flown: Flown, story: FlightStory, told: readonly F
   const acceptable = !tooMany(story, n)
   if (acceptable && evenDoes && !agrees) return answer(sheet.extent / 4 > Math.max(6 * sigma, care.slop) ? 'steady' : 'too-short')
   const straight = [steady, falling].filter(fits).sort((a, b) => a.charge - b.charge)[0]
-  const told2 = (rival: Rival | undefined) => (rival === steady ? 'steady' as const : 'odd-rule' as const)
+  const named = (rival: Rival | undefined) => (rival === steady ? 'steady' as const : 'odd-rule' as const)
   if (!acceptable) {
     if (evenDoes) return answer('steady')
-    if (straight && straight.charge <= curving.charge + DOUBT) return answer(told2(straight))
-    // Free sideways, it would be a flight but for its sideways speed.
-    return answer(fits(curving) ? 'sideways' : 'neither')
+    if (straight && straight.charge <= curving.charge + DOUBT) return answer(named(straight))
+    return answer(brokenRule(flown, told[0] as FlightStory))
   }
   const faulted = story.bad.length > 0 || story.shift !== null
   const margin = faulted ? DOUBT_WITH_FAULTS : DOUBT
   const doubted = (rival: Rival) => fits(rival) && (faulted || misfit > UNNOTICED) && rival.charge + margin < charge
-  if (straight && doubted(straight)) return answer(told2(straight))
+  if (straight && doubted(straight)) return answer(named(straight))
   if (doubted(curving)) return answer('sideways')
-  // A list that breaks more of its drawings than it could by chance has been charged for each; upward is no accident.
-  if (!down && story.bad.length * MISPLACED_CHARGE < charge + 1) return answer('upward')
-  return answer(null)
+  return answer(down ? null : 'upward')
 }

@@ -91,8 +91,8 @@ function lineOrArc(sheet: Sheet, allowed: Float64Array, slop: number): { kind: C
   return { kind: 'line', fit: line }
 }
 
-/** A fitted pivot that the list could be turning about by less than this many degrees in all is none. */
-const LEAST_TURN = 3
+/** A fitted pivot that the list could be turning about by less than this in all, radians, is none. */
+const LEAST_TURN = 3 * RADIAN
 /** A radius less well known than to this share of itself tells no angles. */
 const MOST_DOUBT = 0.5
 
@@ -116,10 +116,12 @@ export function courseOf(request: PointCheck, sheet: Sheet): { course: Course | 
   const line = () => distanceCourse(sheet, 'line', fitCurve(sheet, allowed, slop, false), false)
   if (turning) {
     const arc = fitCurve(sheet, allowed, slop, true)
-    const course = angleCourse(sheet, arc, false, law)
-    const { most, doubt } = turnOf(course)
-    if (most < LEAST_TURN) return { course: line(), trouble: 'straight' }
-    return doubt > MOST_DOUBT ? { course: line(), trouble: 'short' } : sound(course)
+    const { bend } = arc.curve
+    // Over an extent L a curvature 2A turns by 2AL, and bows by an eighth of that times L. So small a turn bows a long way by more than the slop; a short one hides it.
+    if (2 * (Math.abs(bend) + arc.bendSpread) * sheet.extent < LEAST_TURN) {
+      return { course: line(), trouble: sheet.extent * LEAST_TURN / 8 > slop ? 'straight' : 'short' }
+    }
+    return arc.bendSpread > MOST_DOUBT * Math.abs(bend) ? { course: line(), trouble: 'short' } : sound(angleCourse(sheet, arc, false, law))
   }
   if (path === 'circle') return sound(distanceCourse(sheet, 'circle', fitCurve(sheet, allowed, slop, true), false))
   if (path === 'line') return sound(line())
@@ -143,14 +145,6 @@ function depthOf({ fit: { curve }, readings, perUnit }: Course): number {
 export function nearlyStraight(course: Course, allowance: number): boolean {
   const { curve, bendSpread } = course.fit
   return curve.bend === 0 || depthOf(course) <= allowance || Math.abs(curve.bend) <= bendSpread
-}
-
-/** How much of a turn the list could be at most, degrees, and how well its radius is known (share of itself). */
-function turnOf({ fit: { curve, bendSpread }, readings, perUnit }: Course): { most: number, doubt: number } {
-  const length = (Math.max(...readings) - Math.min(...readings)) / Math.abs(perUnit)
-  const bend = Math.abs(curve.bend)
-  const straight = perUnit === 0 || !Number.isFinite(length)
-  return { most: straight ? 0 : 2 * (bend + bendSpread) * length / RADIAN, doubt: bend === 0 ? Infinity : bendSpread / bend }
 }
 
 /** The path in the contract's words. `allowed`: what each drawing may be off. */

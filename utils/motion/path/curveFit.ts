@@ -58,7 +58,7 @@ function equationsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Floa
 }
 
 /** Geometric least squares by Levenberg–Marquardt from a curve in hand (Chernov & Lesort as above; the usual damping). */
-function settle(sheet: Sheet, from: Curve, counts: Float64Array, curved: boolean): CurveFit {
+function settle(sheet: Sheet, from: Curve, counts: Float64Array, slop: number, curved: boolean): CurveFit {
   const size = curved ? 3 : 2
   let curve = from
   let off = distances(sheet, curve)
@@ -91,11 +91,16 @@ function settle(sheet: Sheet, from: Curve, counts: Float64Array, curved: boolean
     }
     if (!(saved > 1e-12 * cost)) break
   }
-  return { curve, off, counts, bendSpread: curved ? bendSpread(sheet, curve, off, counts) : 0 }
+  return { curve, off, counts, bendSpread: curved ? bendSpread(sheet, curve, off, counts, slop) : 0 }
+}
+
+/** The pencil's variance across the path: a third of the slop counts as four drawings seen before the first one is (as for readings). */
+function pencilSquared(off: Float64Array, counts: Float64Array, kept: number, slop: number): number {
+  return (4 * (slop / 3) ** 2 + weighed(off, counts)) / (4 + kept - 3)
 }
 
 /** One spread's steps in φ, D and A that together make up the fit's covariance (its Cholesky factor's columns); null where it is not settled. */
-function stepsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array): Float64Array[] | null {
+function stepsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array, slop: number): Float64Array[] | null {
   const kept = counts.reduce((sum, count) => sum + count, 0)
   const { a } = equationsOf(sheet, curve, off, counts, true)
   if (kept < 4) return null
@@ -103,7 +108,7 @@ function stepsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64A
   for (let p = 0; p < 3; p++) {
     const column = new Float64Array(3)
     if (!solveInto(a, [p === 0 ? 1 : 0, p === 1 ? 1 : 0, p === 2 ? 1 : 0], 3, column)) return null
-    covariance.push(column.map(value => value * weighed(off, counts) / (kept - 3)))
+    covariance.push(column.map(value => value * pencilSquared(off, counts, kept, slop)))
   }
   const steps = [new Float64Array(3), new Float64Array(3), new Float64Array(3)]
   for (let q = 0; q < 3; q++) {
@@ -117,14 +122,14 @@ function stepsOf(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64A
   return steps
 }
 
-function bendSpread(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array): number {
-  const steps = stepsOf(sheet, curve, off, counts)
+function bendSpread(sheet: Sheet, curve: Curve, off: Float64Array, counts: Float64Array, slop: number): number {
+  const steps = stepsOf(sheet, curve, off, counts, slop)
   return steps ? student95(counts.reduce((sum, count) => sum + count, 0) - 3) * Math.hypot(...steps.map(step => step[2] as number)) : Infinity
 }
 
 /** Curves that lie one spread off a fitted one, three ways that don't lean on one another; none where the fit is not settled. */
-export function neighbours(sheet: Sheet, { curve, off, counts }: CurveFit): Curve[] {
-  return (stepsOf(sheet, curve, off, counts) ?? []).map(([turn = 0, shift = 0, bend = 0]) => (
+export function neighbours(sheet: Sheet, { curve, off, counts }: CurveFit, slop: number): Curve[] {
+  return (stepsOf(sheet, curve, off, counts, slop) ?? []).map(([turn = 0, shift = 0, bend = 0]) => (
     { base: curve.base, normal: curve.normal + turn, shift: curve.shift + shift, bend: curve.bend + bend }
   ))
 }
@@ -203,7 +208,7 @@ export function fitCurve(sheet: Sheet, allowed: Float64Array, slop: number, curv
     const [p, q, r] = [placeOf(sheet, i), placeOf(sheet, j), placeOf(sheet, k)]
     return (curved ? curveThrough(p, q, r) : lineThrough(p, r)) ?? []
   })
-  return robust(sheet, first, others, allowed, slop, curved, (from, counts) => settle(sheet, from, counts, curved))
+  return robust(sheet, first, others, allowed, slop, curved, (from, counts) => settle(sheet, from, counts, slop, curved))
 }
 
 /** The circle about a given centre: only its radius is looked for. Null where every drawing sits on the centre. */

@@ -51,7 +51,7 @@ export function withPivotDoubt(sheet: Sheet, course: Course, check: ReadingCheck
   const byReading = paceByReading(check, line, result.keys)
   if (!byReading) return judged
   let variance = 0
-  for (const curve of neighbours(sheet, course.fit)) {
+  for (const curve of neighbours(sheet, course.fit, check.slop / Math.abs(course.perUnit))) {
     const moved = angleCourse(sheet, { ...course.fit, curve }, false, check.law)
     const change = byReading.reduce((sum, slope, i) => sum + slope * ((moved.readings[i] as number) - (course.readings[i] as number)), 0)
     variance += change * change
