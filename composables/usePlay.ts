@@ -5,7 +5,7 @@ const REST_SECONDS = 0.7
  * The clock of Play: whole frames from 0 to `last` at the true rate, over and over. It runs by itself once on screen, never
  * where the person asked their system for less motion: there it waits to be started by hand, and stops when they ask meanwhile.
  */
-export function useBenchPlay(last: () => number, fps: () => number) {
+export function usePlay(last: () => number, fps: () => number) {
   const frame = ref(0)
   const playing = ref(false)
   let waiting = 0
