@@ -1,5 +1,6 @@
 import type { Subject } from '~/utils/motion/types'
 import type { ArcTrack } from '~/utils/drawing/track'
+import { circlePath } from '~/utils/drawing/circle'
 import type { Point } from '~/utils/drawing/strokes'
 import { outlinePath, px } from '~/utils/drawing/strokes'
 
@@ -8,9 +9,6 @@ import { outlinePath, px } from '~/utils/drawing/strokes'
 const ROD_WIDTH = 0.035
 /** A pencil line is never thinner than this many pixels, whatever the body's proportions. */
 const THINNEST = 5
-
-const circle = (at: Point, r: number) =>
-  `M${px(at.x - r)} ${px(at.y)}a${px(r)} ${px(r)} 0 1 0 ${px(2 * r)} 0a${px(r)} ${px(r)} 0 1 0 ${px(-2 * r)} 0Z`
 
 /** Width over height of what is seen from the side, where the body stands on an edge. */
 function slab(subject: Subject | undefined): { width: number; height: number } | null {
@@ -56,7 +54,7 @@ export function bodyPath(subject: Subject | undefined, degrees: number, length: 
       const top = Math.max(subject.height, subject.headHeight)
       const head = Math.max(6, length * 0.06)
       const reach = length - head
-      return bar(THINNEST, (reach * subject.height) / top) + circle(at((reach * subject.headHeight) / top, 0), head)
+      return bar(THINNEST, (reach * subject.height) / top) + circlePath(at((reach * subject.headHeight) / top, 0), head)
     }
     if (subject.shape === 'bob') return bobPath(at, length)
     if (subject.shape === 'custom' && track.hangs) return bobPath(at, length)
@@ -69,5 +67,5 @@ function bobPath(at: (out: number, across: number) => Point, length: number): st
   const bob = Math.max(6, length * 0.06)
   const end = at(length - 2 * bob, 0)
   const start = at(0, 0)
-  return `M${px(start.x)} ${px(start.y)}L${px(end.x)} ${px(end.y)}${circle(at(length - bob, 0), bob)}`
+  return `M${px(start.x)} ${px(start.y)}L${px(end.x)} ${px(end.y)}${circlePath(at(length - bob, 0), bob)}`
 }

@@ -7,7 +7,7 @@ import { TICK } from '~/utils/drawing/stripLayout'
 import type { Spot } from '~/utils/drawing/strokes'
 import { px } from '~/utils/drawing/strokes'
 import type { ArcTrack } from '~/utils/drawing/track'
-import { arcTrack, degreesOf } from '~/utils/drawing/track'
+import { arcTrack, degreesOf, hangs, stands } from '~/utils/drawing/track'
 
 const HEIGHT = 320
 /** A motion that goes over the top needs room on all sides of its pivot. */
@@ -16,7 +16,7 @@ const SMALL_HEIGHT = 150
 
 /** Something that turns about a pivot: the true arc, the body at its centre, posted ticks outside and the law's inside. */
 export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean): StripLayout {
-  const hangs = claim.law === 'pendulum'
+  const swings = hangs(claim)
   const degrees = keys.map(({ reading }) => degreesOf(claim, reading)!)
   const lawDegrees = keys.map(({ law }) => (law === null ? null : degreesOf(claim, law)))
   const all = [...degrees, ...lawDegrees.filter((one) => one !== null)]
@@ -25,7 +25,7 @@ export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: nu
   const [from, to] = shownArc(low, high, claim, falls)
 
   const height = small ? SMALL_HEIGHT : to - from > 200 ? ROUND_HEIGHT : HEIGHT
-  const track = arcTrack(from, to, hangs, { width, height }, marginsOf(small, hangs), besidePivot(claim, falls))
+  const track = arcTrack(from, to, swings, { width, height }, marginsOf(small, swings), besidePivot(claim, falls))
   const span = high - low
   const passes = passesOf(
     keys.map((_, i) => lawDegrees[i] ?? degrees[i]!),
@@ -47,7 +47,7 @@ export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: nu
     pivot: track.pivot,
     base:
       Array.from({ length: used }, (_, n) => track.path(from, to, track.radius - n * lane)).join('') +
-      (hangs ? ceiling(track) : claim.law === 'topple' ? ground(track, width, falls, Math.max(high * falls, low * falls)) : ''),
+      (swings ? ceiling(track) : stands(claim) ? ground(track, width, falls, Math.max(high * falls, low * falls)) : ''),
     posted,
     law: lawDegrees.map((angle, i) => (angle === null ? null : track.spot(angle, radiusOf(i)))),
     framePlace: (i) => {
@@ -69,27 +69,27 @@ export function stripArc(keys: readonly StripKey[], claim: StripClaim, width: nu
 }
 
 /** The arc that is drawn: a topple's whole quarter from upright to flat, anything else as far as it goes. */
-function shownArc(low: number, high: number, claim: StripClaim, falls: 1 | -1): [number, number] {
-  if (claim.law === 'topple') return falls > 0 ? [Math.min(low, 0), Math.max(high, 90)] : [Math.min(low, -90), Math.max(high, 0)]
-  if (claim.law === 'pendulum') {
+export function shownArc(low: number, high: number, claim: StripClaim, falls: 1 | -1): [number, number] {
+  if (stands(claim)) return falls > 0 ? [Math.min(low, 0), Math.max(high, 90)] : [Math.min(low, -90), Math.max(high, 0)]
+  if (hangs(claim)) {
     const reach = Math.max(Math.abs(low), Math.abs(high))
     return reach < 180 ? [-reach, reach] : [low, high]
   }
   return high > low ? [low, high] : [low - 1, high + 1]
 }
 
-function marginsOf(small: boolean, hangs: boolean) {
+function marginsOf(small: boolean, swings: boolean) {
   const words = small ? 26 : TICK.cross + 16
   const foot = small ? 10 : 26
-  return hangs
+  return swings
     ? { top: small ? 10 : 18, right: words, bottom: words, left: words }
     : { top: words, right: words, bottom: foot, left: words }
 }
 
 /** A standing block takes up its own width behind the pivot, in radii. */
-function besidePivot(claim: StripClaim, falls: 1 | -1): { left?: number; right?: number } {
+export function besidePivot(claim: StripClaim, falls: 1 | -1): { left?: number; right?: number } {
   const subject = claim.subject
-  if (claim.law !== 'topple' || !subject || !('shape' in subject)) return {}
+  if (!stands(claim) || !subject || !('shape' in subject)) return {}
   const size =
     subject.shape === 'block'
       ? [subject.width, subject.height]
@@ -116,7 +116,7 @@ function outwards(spot: Spot): Place[] {
 }
 
 /** The floor a body falls to; a brink where it goes on past flat. */
-function ground(track: ArcTrack, width: number, falls: 1 | -1, furthest: number): string {
+export function ground(track: ArcTrack, width: number, falls: 1 | -1, furthest: number): string {
   const { pivot, radius } = track
   const far = (sideways: number) => Math.min(Math.max(pivot.x + sideways, 4), width - 4)
   const behind = far(-falls * radius * 0.6)
@@ -125,7 +125,7 @@ function ground(track: ArcTrack, width: number, falls: 1 | -1, furthest: number)
 }
 
 /** What a pendulum hangs from. */
-function ceiling({ pivot, radius }: ArcTrack): string {
+export function ceiling({ pivot, radius }: ArcTrack): string {
   const half = Math.min(36, radius * 0.2)
   return `M${px(pivot.x - half)} ${px(pivot.y)}h${px(2 * half)}`
 }

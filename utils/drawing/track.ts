@@ -23,8 +23,14 @@ export function degreesOf(claim: Pick<Claim, 'measure' | 'radius' | 'zeroAt'>, r
   return null
 }
 
-/** True where the path of action is an arc about a pivot. */
-export const turns = (claim: Pick<Claim, 'measure'>) => claim.measure !== 'distance'
+/** True where the readings say how far something has turned about a pivot. */
+export const turns = (claim: Pick<Claim, 'measure'>) => claim.measure === 'angle' || claim.measure === 'arc'
+
+/** Laws of what hangs; whatever else turns is counted from upright. */
+export const hangs = (claim: Pick<Claim, 'law'>) => claim.law === 'pendulum' || claim.law === 'swing-decay'
+
+/** Laws of what stands and goes over: drawn on its ground, from upright on. */
+export const stands = (claim: Pick<Claim, 'law'>) => claim.law === 'topple' || claim.law === 'over-edge'
 
 export interface LineTrack {
   kind: 'line'
@@ -57,13 +63,13 @@ export interface ArcTrack {
 }
 
 /** Direction of an angle: a topple counts from upright, a pendulum from hanging; both grow to the right. */
-function direction(degrees: number, hangs: boolean): Point {
+export function direction(degrees: number, hangs: boolean): Point {
   const angle = (degrees * Math.PI) / 180
   return { x: Math.sin(angle), y: hangs ? Math.cos(angle) : -Math.cos(angle) }
 }
 
 /** The part of the unit circle between two angles, with its pivot, as a box: [left, top, right, bottom]. */
-function reach(from: number, to: number, hangs: boolean): [number, number, number, number] {
+export function reach(from: number, to: number, hangs: boolean): [number, number, number, number] {
   const points: Point[] = [{ x: 0, y: 0 }, direction(from, hangs), direction(to, hangs)]
   for (let quarter = Math.ceil(from / 90) * 90; quarter <= to && quarter < from + 450; quarter += 90)
     points.push(direction(quarter, hangs))
@@ -97,6 +103,11 @@ export function arcTrack(
     x: margins.left + roomX / 2 - ((left + right) / 2) * radius,
     y: margins.top + roomY / 2 - ((top + bottom) / 2) * radius,
   }
+  return trackAt(pivot, radius, hangs)
+}
+
+/** An arc about a pivot, both in pixels. */
+export function trackAt(pivot: Point, radius: number, hangs: boolean): ArcTrack {
   const spot = (degrees: number, at: number): Spot => {
     const way = direction(degrees, hangs)
     return { x: pivot.x + way.x * at, y: pivot.y + way.y * at, nx: way.x, ny: way.y }
