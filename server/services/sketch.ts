@@ -1,6 +1,6 @@
 import type { Claim } from '~/utils/contracts/production'
 import type { TakeSketch } from '~/utils/contracts/take'
-import type { CheckResult, JudgedKey } from '~/utils/motion/types'
+import type { CheckResult, JudgedKey, Place } from '~/utils/motion/types'
 import { headline } from './headline'
 
 /** A sheet has room for no more. */
@@ -17,14 +17,18 @@ export function makeSketch(number: number, answer: CheckResult, claim: Claim): T
     verdict: answer.verdict,
     headline: headline(answer, claim),
     drawings: answer.keys.length,
-    marks: chosen(answer.keys).map(({ frame, reading, law, breaks }) => ({
+    marks: chosen(answer.keys).map(({ frame, reading, law, breaks, point, lawPoint }) => ({
       frame,
       reading: round(reading),
       law: law === null ? null : round(law),
       breaks,
+      ...(point && { point: onPaper(point), lawPoint: lawPoint ? onPaper(lawPoint) : null }),
     })),
   }
 }
+
+/** A tenth of a drawing unit is finer than any sheet of the wall. */
+const onPaper = ({ x, y }: Place): Place => ({ x: Number(x.toFixed(1)), y: Number(y.toFixed(1)) })
 
 function rounder(keys: readonly JudgedKey[]): (value: number) => number {
   const readings = keys.map((key) => key.reading)

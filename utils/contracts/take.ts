@@ -5,6 +5,7 @@ import { clientId, frame, line, LIMITS, prose, serverId, shotCode, slug, version
 import type { Time } from './common'
 import type { PersonName } from './people'
 import type { Claim, Decision, Desk, Sequence } from './production'
+import type { Place } from '../motion/types'
 import type { Thread } from './thread'
 
 const takeNumber = z.coerce.number().int().min(1).max(100_000)
@@ -102,8 +103,8 @@ export interface TakeSketch {
   /** One short sentence: "Frame 61 lands 0.8 frame early." */
   headline: string
   drawings: number
-  /** `law` is null where no law could be fitted (verdict `undecided`). */
-  marks: { frame: number; reading: number; law: number | null; breaks: boolean }[]
+  /** `law` is null where no law could be fitted (verdict `undecided`); points only of lists that were posted as points. */
+  marks: { frame: number; reading: number; law: number | null; breaks: boolean; point?: Place; lawPoint?: Place | null }[]
 }
 /** What is known of a shot itself: the answer to every change of it, and what a stale write is compared with. */
 export interface ShotFacts {

@@ -2,10 +2,13 @@ import type { Box, Placed, Wanted } from '~/utils/drawing/labels'
 import { placeLabels, spreadOrder } from '~/utils/drawing/labels'
 import { stripArc } from '~/utils/drawing/stripArc'
 import { TICK } from '~/utils/drawing/stripLayout'
-import type { StripClaim, StripKey, StripLayout } from '~/utils/drawing/stripLayout'
+import type { StripClaim, StripKey, StripLayout, StripPaths } from '~/utils/drawing/stripLayout'
 import { stripLine } from '~/utils/drawing/stripLine'
+import { noJoints, stripJoints } from '~/utils/drawing/stripJoints'
+import type { StripJoints } from '~/utils/drawing/stripJoints'
+import { offPathMarks, stripPath } from '~/utils/drawing/stripPath'
 import type { Point, Spot } from '~/utils/drawing/strokes'
-import { crossesPath, keepApart, px, ticksPath } from '~/utils/drawing/strokes'
+import { crossesPath, dotsPath, keepApart, px, ticksPath } from '~/utils/drawing/strokes'
 import { turns } from '~/utils/drawing/track'
 import { earlyOrLate } from '~/utils/drawing/words'
 
@@ -31,6 +34,12 @@ export interface StripDrawing {
   broken: string
   crosses: string
   leaders: string
+  /** Posted drawings that are points on the paper: dots, to be stroked with round caps. */
+  dots: string
+  brokenDots: string
+  /** Drawings off the path: a shape round each, and a hair to the path. */
+  offPath: { rings: string; hairs: string }
+  joints: StripJoints
   frames: Placed<number>[]
   breaks: Placed<number>[]
   /** One per key, for finding the drawing nearest to a pointer. */
@@ -46,10 +55,11 @@ const CROSS_ARM = 4.5
 const severity = (key: StripKey) => Math.abs(key.offset ?? key.reading - (key.law ?? key.reading)) / (key.allowance || 1)
 
 /**
- * Draws the strip of a list for a width in pixels. `small` leaves the words out: for the sheets of the wall.
+ * Draws the strip of a list for a width in pixels. `small` leaves the words out: for the sheets of the wall. `found` is what the
+ * judge found besides the drawings.
  */
-export function drawStrip(keys: readonly StripKey[], claim: StripClaim, width: number, small = false): StripDrawing {
-  const layout = (turns(claim) ? stripArc : stripLine)(keys, claim, width, small)
+export function drawStrip(keys: readonly StripKey[], claim: StripClaim, width: number, small = false, found: StripPaths = {}): StripDrawing {
+  const layout = layOut(keys, claim, width, small, found)
   const broken = keys.map((key, i) => ({ key, i })).filter(({ key }) => key.breaks)
   const crossAt = (i: number): Point => {
     const spot = layout.posted[i]!
@@ -60,14 +70,19 @@ export function drawStrip(keys: readonly StripKey[], claim: StripClaim, width: n
     broken.map(({ i }) => crossAt(i)),
     small ? 9 : 11,
   )
-  const words = small ? { frames: [], breaks: [] } : placeWords(keys, layout, crosses, broken)
+  const joints = small ? noJoints : stripJoints(keys, layout, found)
+  const words = small ? { frames: [], breaks: [] } : placeWords(keys, layout, crosses, broken, joints)
   const held = layout.posted.filter((_, i) => !keys[i]!.breaks)
   return {
     width,
     height: layout.height,
     base: layout.base,
     pivot: layout.pivot,
-    posted: ticksPath(held, TICK.from, TICK.to),
+    posted: layout.dots ? '' : ticksPath(held, TICK.from, TICK.to),
+    dots: layout.dots ? dotsPath(held) : '',
+    brokenDots: layout.dots ? dotsPath(broken.map(({ i }) => layout.posted[i]!)) : '',
+    offPath: offPathMarks(layout.offPath ?? []),
+    joints,
     law: ticksPath(
       layout.law.filter((spot) => spot !== null),
       -TICK.from,
@@ -75,7 +90,7 @@ export function drawStrip(keys: readonly StripKey[], claim: StripClaim, width: n
     ),
     broken: ticksPath(
       broken.map(({ i }) => layout.posted[i]!),
-      TICK.from,
+      layout.dots ? 6 : TICK.from,
       small ? TICK.to : TICK.broken,
     ),
     crosses: crossesPath(crosses, CROSS_ARM),
@@ -92,18 +107,24 @@ export function drawStrip(keys: readonly StripKey[], claim: StripClaim, width: n
   }
 }
 
+function layOut(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean, found: StripPaths): StripLayout {
+  if (keys.some(({ point }) => point)) return stripPath(keys, claim, width, small, found)
+  return turns(claim) ? stripArc(keys, claim, width, small) : stripLine(keys, claim, width, small, found)
+}
+
 /** Numbers of frames along the law's side and words at the worst of the breaking drawings: none touches another. */
 function placeWords(
   keys: readonly StripKey[],
   layout: StripLayout,
   crosses: readonly Point[],
   broken: { key: StripKey; i: number }[],
+  joints: StripJoints,
 ): { frames: Placed<number>[]; breaks: Placed<number>[] } {
   const bounds: Box = { x: 1, y: 1, width: layout.width - 2, height: layout.height - 2 }
   const frames = placeLabels<number>(
     spreadOrder(keys.length).map((i) => ({ item: i, text: String(keys[i]!.frame), places: [layout.framePlace(i)] })),
     bounds,
-    [],
+    joints.words.map(({ box }) => box),
     { gap: 8 },
   )
   const every = Math.ceil(layout.posted.length / 400)
@@ -119,7 +140,7 @@ function placeWords(
       const text = off ? `${key.frame} · ${off}` : String(key.frame)
       return { item: i, text, places: layout.breakPlaces(i, text) }
     })
-  const breaks = placeLabels(wanted, bounds, [...marks, ...ticks, ...frames.map(({ box }) => box)], {
+  const breaks = placeLabels(wanted, bounds, [...marks, ...ticks, ...[...frames, ...joints.words].map(({ box }) => box)], {
     bold: true,
     most: layout.width < 480 ? 4 : 8,
   })

@@ -1,7 +1,7 @@
 import { textWidth } from '~/utils/drawing/labels'
 import type { Place } from '~/utils/drawing/labels'
 import { passesOf } from '~/utils/drawing/passes'
-import type { StripClaim, StripKey, StripLayout } from '~/utils/drawing/stripLayout'
+import type { StripClaim, StripKey, StripLayout, StripPaths } from '~/utils/drawing/stripLayout'
 import type { Point } from '~/utils/drawing/strokes'
 import { px } from '~/utils/drawing/strokes'
 import { lineTrack } from '~/utils/drawing/track'
@@ -10,9 +10,11 @@ const MOST_LANES = 4
 const ABOVE_PLAIN = 26
 const ABOVE_BROKEN = 74
 const BELOW = 40
+/** More, where spans meet: the words of their laws. */
+const JOINT_WORDS = 26
 
 /** A fall, a ramp, a throw: drawn level, posted above the line and the law's below. Each way there and back has its own line. */
-export function stripLine(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean): StripLayout {
+export function stripLine(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean, { joints = [] }: StripPaths = {}): StripLayout {
   const readings = keys.flatMap(({ reading, law }) => (law === null ? [reading] : [reading, law]))
   const track = lineTrack(readings, width, small ? 14 : 28)
   const span = Math.max(...readings) - Math.min(...readings)
@@ -29,7 +31,7 @@ export function stripLine(keys: readonly StripKey[], claim: StripClaim, width: n
     const breaks = keys.some((key, i) => key.breaks && lanes[i] === lane)
     const above = small ? 30 : breaks ? ABOVE_BROKEN : ABOVE_PLAIN
     baselines.push(height + above)
-    height += above + (small ? 22 : BELOW)
+    height += above + (small ? 22 : BELOW + (joints.length > 0 ? JOINT_WORDS : 0))
   }
   const yOf = (i: number) => baselines[lanes[i]!]!
   const posted = keys.map(({ reading }, i) => track.spot(reading, yOf(i)))
