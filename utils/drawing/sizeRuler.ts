@@ -1,6 +1,8 @@
 import { scaleLog } from 'd3-scale'
 import { placeLabels, spreadRow, textWidth } from '~/utils/drawing/labels'
 import type { Placed } from '~/utils/drawing/labels'
+import { landmarks, pulls } from '~/utils/drawing/landmarks'
+import { sizeWithInterval } from '~/utils/drawing/verdict'
 import { metres, roundFigure, sizeFigure } from '~/utils/drawing/words'
 import type { SizeReading } from '~/utils/motion/types'
 
@@ -9,27 +11,22 @@ import type { SizeReading } from '~/utils/motion/types'
 export interface SizeRuler {
   x: (size: number) => number
   ticks: { at: number; tall: boolean }[]
-  names: Placed<number>[]
+  names: (Placed<number> & { mark: number; outline: string })[]
   reads: { at: number; from: number; to: number; labelAt: number; text: string }
   claimed: { at: number; labelAt: number; text: string } | null
+  /** Between what it reads as and what was claimed: how many times too small or too large. Null where they are close. */
+  apart: { from: number; to: number; at: number; text: string } | null
 }
 
-/** Sizes that everyone has stood beside, the most useful first. */
-const LANDMARKS: [number, string][] = [
-  [0.05, 'matchbox 5 cm'],
-  [100, 'tower 100 m'],
-  [1.7, 'person'],
-  [10, 'house 10 m'],
-  [0.45, 'chair'],
-  [1_000, '1 km'],
-  [0.001, '1 mm'],
-]
+/** Baselines: sizes over the ruler, how far they lie apart just over it, and the landmarks' names under it. */
+export const RULER = { sizes: 13, apart: 30, line: 44, names: 82, height: 88 } as const
 
 function rangeOf(values: number[], unit: string): [number, number] {
   const low = Math.min(...values)
   const high = Math.max(...values)
   // Metres keep the same ruler from take to take, unless something lies beyond it.
   if (unit === 'm') return [Math.min(0.05, low / 1.5), Math.max(100, high * 1.5)]
+  if (unit === 'm/s²') return [Math.min(1, low / 1.5), Math.max(40, high * 1.5)]
   return [low / 4, high * 4]
 }
 
@@ -44,22 +41,25 @@ export function sizeRuler(size: SizeReading, claimed: number | null, width: numb
     .clamp(true)
   const decades = []
   for (let power = Math.ceil(Math.log10(low) - 1e-9); power <= Math.log10(high) + 1e-9; power++) decades.push(10 ** power)
-  const landmarks: [number, string][] =
-    size.unit === 'm'
-      ? LANDMARKS.filter(([at]) => at >= low * 0.999 && at <= high * 1.001)
-      : decades.map((at) => [at, sizeFigure(at, size.unit)])
+  const known = size.unit === 'm' ? landmarks : size.unit === 'm/s²' ? pulls : null
+  const marks = known
+    ? known.filter((one) => one.size >= low * 0.999 && one.size <= high * 1.001)
+    : decades.map((at) => ({ size: at, name: sizeFigure(at, size.unit), outline: '' }))
   const bounds = { x: 0, y: 0, width, height: 100 }
   const names = placeLabels(
-    landmarks.map(([at, text]) => {
-      const half = textWidth(text) / 2
-      return { item: at, text, places: [{ x: Math.min(Math.max(x(at), half + 1), width - half - 1), y: 52, anchor: 'middle' as const }] }
+    marks.map(({ size: at, name }) => {
+      const half = textWidth(name) / 2
+      return { item: at, text: name, places: [{ x: Math.min(Math.max(x(at), half + 1), width - half - 1), y: RULER.names, anchor: 'middle' as const }] }
     }),
     bounds,
     [],
     { gap: 10 },
-  )
-  const readsText = `reads ${sizeFigure(size.value, size.unit)}`
+  ).map((name) => ({ ...name, mark: x(name.item), outline: marks.find(({ size: at }) => at === name.item)?.outline ?? '' }))
   const claimedText = claimed === null ? '' : `claimed ${size.unit === 'm' ? metres(claimed, 3) : `${roundFigure(claimed, 3)} ${size.unit}`}`
+  const whole = `reads ${sizeWithInterval(size)}`
+  // Where both won't fit beside each other, the interval is left to the bar.
+  const roomy = textWidth(whole, 12, true) + textWidth(claimedText, 12, true) + 12 <= width
+  const readsText = roomy ? whole : `reads ${sizeFigure(size.value, size.unit)}`
   const row = [readsText, claimedText].filter(Boolean).map((text, i) => ({
     x: i === 0 ? x(size.value) : x(claimed!),
     width: textWidth(text, 12, true),
@@ -72,5 +72,18 @@ export function sizeRuler(size: SizeReading, claimed: number | null, width: numb
     ticks: [...new Set([...decades, ...tall])].map((at) => ({ at: x(at), tall: tall.has(at) })),
     reads: { at: x(size.value), from: x(Math.max(size.low, low)), to: x(size.high), labelAt: readsAt!, text: readsText },
     claimed: claimed === null ? null : { at: x(claimed), labelAt: claimedAt!, text: claimedText },
+    apart: claimed === null ? null : apartBetween(size.value, claimed, x, width),
   }
+}
+
+/** Nearer than this they lie on top of each other, and the interval tells more. */
+const NEAR = 1.25
+
+function apartBetween(reads: number, claimed: number, x: (size: number) => number, width: number): SizeRuler['apart'] {
+  const times = Math.max(reads / claimed, claimed / reads)
+  if (!(times > NEAR) || !Number.isFinite(times)) return null
+  const text = `${roundFigure(times, 2)} times too ${reads < claimed ? 'small' : 'large'}`
+  const [from, to] = [x(reads), x(claimed)]
+  const half = textWidth(text, 12, true) / 2 + 1
+  return { from, to, at: Math.min(Math.max((from + to) / 2, half), width - half), text }
 }

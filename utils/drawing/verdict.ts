@@ -1,5 +1,6 @@
 import type { Claim } from '~/utils/contracts/production'
-import { claimedSize, frameCount, lawWords, metres, roundFigure, sizeFigure, verdictWords } from '~/utils/drawing/words'
+import { claimedSize, frameCount, metres, roundFigure, sizeFigure, verdictWords } from '~/utils/drawing/words'
+import { LAW_WORDS } from '~/utils/motion'
 import type { CheckResult, SizeReading } from '~/utils/motion/types'
 
 /** The sentence at the head of a take: what the list is, what it reads as, what to do about it. */
@@ -19,13 +20,10 @@ export function sizeWithInterval(size: SizeReading): string {
 /** Words for the number of drawings that break, apart from those that a finding already tells of. */
 const brokenCount = (answer: CheckResult) => answer.keys.filter((key) => key.breaks).length
 
-function withArticle(law: string): string {
-  return /^[aeiou]/.test(law) ? `an ${law}` : `a ${law}`
-}
-
-function lawAsMotion(claim: SaidClaim): string {
-  if (claim.law === 'topple' || claim.law === 'pendulum') return withArticle(lawWords[claim.law])
-  return claim.law === 'steady' ? 'steady' : 'the odd rule'
+/** "a topple"; of a list under several laws, "a slow in, then even spacing, then a slow in". */
+function lawAsMotion(answer: Pick<CheckResult, 'spans'>, claim: SaidClaim): string {
+  const named = answer.spans?.map(({ law }) => LAW_WORDS[law])
+  return named && named.length > 1 ? named.join(', then ') : LAW_WORDS[claim.law]
 }
 
 function wrongScale(answer: CheckResult, claim: SaidClaim): string {
@@ -35,7 +33,7 @@ function wrongScale(answer: CheckResult, claim: SaidClaim): string {
   const needs = answer.claim
     ? `: that size needs ${frameCount(answer.claim.frames, 0)}, this takes ${roundFigure(answer.claim.usedFrames, 4)}`
     : ''
-  return `The shape is ${lawAsMotion(claim)}, but it reads as ${sizeWithInterval(size)}, not ${metres(claimed, 3)}${needs}.`
+  return `The shape is ${lawAsMotion(answer, claim)}, but it reads as ${sizeWithInterval(size)}, not ${metres(claimed, 3)}${needs}.`
 }
 
 /** The verdict's word and the rest of its sentence. */
@@ -44,7 +42,8 @@ export function verdictInWords(answer: CheckResult, claim: SaidClaim): { word: s
   const word = `${verdictWords[answer.verdict]}.`
   if (answer.verdict === 'holds') {
     const size = answer.size && answer.size.unit === 'm' ? ` of ${sizeWithInterval(answer.size)}` : ''
-    return { word, rest: `Every drawing sits inside its allowance: it reads as ${lawAsMotion(claim)}${size}${claim.start === 'rest' ? ', from rest' : ''}.` }
+    const met = answer.joints?.length ? ', and the joints hold' : ''
+    return { word, rest: `Every drawing sits inside its allowance${met}: it reads as ${lawAsMotion(answer, claim)}${size}${claim.start === 'rest' ? ', from rest' : ''}.` }
   }
   if (answer.findings.some(({ kind }) => kind === 'wrong-law')) return { word, rest: answer.findings.find(({ kind }) => kind === 'wrong-law')!.text }
   // Where the motion is under way before the list begins, that comes before its size.

@@ -192,9 +192,12 @@ export function exposureInWords(frames: readonly number[]): string | null {
   return ['on ones', 'on twos', 'on threes', 'on fours'][step - 1] ?? `every ${step} frames`
 }
 
+/** How badly a law fits, as far as it says anything: 0.3, 1.8, over 99. */
+export const misfitFigure = (misfit: number) => (misfit < 99.5 ? roundFigure(misfit) : 'over 99')
+
 /** What the list reads as, in a clause: "odd rule 0.3, topple 1.8" with the misfit (1 is at the edge of notice). */
 export function readsAsInWords(readsAs: readonly LawMisfit[]): string {
-  return readsAs.map(({ law, misfit }) => `${lawWords[law]} ${misfit < 99.5 ? roundFigure(misfit) : 'over 99'}`).join(', ')
+  return readsAs.map(({ law, misfit }) => `${lawWords[law]} ${misfitFigure(misfit)}`).join(', ')
 }
 
 /** Up to two letters for a name in any script: "Mira Ilves" → MI, "王小明" → 王. */

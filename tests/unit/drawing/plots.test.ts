@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { frameTicks, nearest, paddedRange, readingTicks, tickDecimals } from '~/utils/drawing/axis'
 import { drawCurve } from '~/utils/drawing/curve'
 import { brokenRunsPath, drawGaps, gapsOf, thinGaps } from '~/utils/drawing/gaps'
-import { keyRows } from '~/utils/drawing/keyRows'
+import { keyTable } from '~/utils/drawing/keyRows'
 import { textWidth } from '~/utils/drawing/labels'
 import { frameScale } from '~/utils/drawing/plot'
 import { sizeRuler } from '~/utils/drawing/sizeRuler'
@@ -103,12 +103,29 @@ describe('gaps', () => {
   })
 })
 
-describe('key rows', () => {
+describe('key table', () => {
+  const said = (table: ReturnType<typeof keyTable>, index: number) => Object.fromEntries(table.columns.map(({ head }, i) => [head, table.row(index).cells[i]]))
+
   it('writes figures with a true minus and the finding in words', () => {
-    const rows = keyRows({ keys: fall, findings: [{ kind: 'misplaced', frames: [5], amount: 10, text: '' }] })
-    expect(rows[2]).toMatchObject({ frame: 5, offset: '+10.0', offsetFrames: '+2.7', words: '✕ misplaced, 2.7 early' })
-    expect(rows[1]).toMatchObject({ offset: '0.0', words: '' })
-    expect(rows[4]!.gap).toBe('–')
+    const table = keyTable({ keys: fall, findings: [{ kind: 'misplaced', frames: [5], amount: 10, text: '' }] }, 'px')
+    expect(table.row(2)).toMatchObject({ frame: 5, breaks: true })
+    expect(said(table, 2)).toMatchObject({ 'off by px': '+10.0', 'off by, frames': '+2.7', finding: '✕ misplaced, 2.7 early' })
+    expect(said(table, 1)).toMatchObject({ 'off by px': '0.0', finding: '' })
+    expect(said(table, 4)['gap px']).toBe('–')
+  })
+  it('has columns for points only where there are points, and for going sideways only of a flight', () => {
+    const heads = (keys: JudgedKey[]) => keyTable({ keys, findings: [] }, 'deg', 'px').columns.map(({ head }) => head)
+    expect(heads(fall).join()).not.toMatch(/x px|off the path|sideways/)
+    const points = fall.map((one) => ({ ...one, point: { x: one.reading, y: 2 }, lawPoint: { x: one.law!, y: 2 }, offPath: 0.4 }))
+    expect(heads(points)).toEqual(expect.arrayContaining(['x px', 'y px', 'posted °', 'off the path px']))
+    expect(heads(points).join()).not.toContain('sideways')
+    const flight = points.map((one) => ({ ...one, sideways: { reading: 1, law: 1, offset: 0, breaks: false } }))
+    expect(heads(flight)).toEqual(expect.arrayContaining(['down °', 'sideways px', 'law sideways px']))
+  })
+  it('marks where spans meet, a contact by a sign of its own', () => {
+    const joint = { before: 1, after: 1, apart: 0, holds: true }
+    const table = keyTable({ keys: fall, findings: [], joints: [{ ...joint, frame: 3, contact: false }, { ...joint, frame: 7, contact: true }] }, 'px')
+    expect([said(table, 1).finding, said(table, 3).finding]).toEqual(['¦ joint', '▾ contact'])
   })
 })
 
@@ -122,6 +139,10 @@ describe('size ruler', () => {
         expect(ruler.claimed!.at).toBeGreaterThanOrEqual(0)
         expect(ruler.claimed!.at).toBeLessThanOrEqual(width)
       }
+  })
+  it('says how far apart what it reads as and what was claimed lie, once they do', () => {
+    const apart = (claimed: number | null) => sizeRuler({ value: 8.2, low: 7.8, high: 8.6, unit: 'm' }, claimed, 640).apart?.text
+    expect([38, 2, 8.5, null].map(apart)).toEqual(['4.6 times too small', '4.1 times too large', undefined, undefined])
   })
   it('goes by ratio: four times the size, the same step', () => {
     const { x } = sizeRuler({ value: 1, low: 0.9, high: 1.1, unit: 'm' }, null, 500)

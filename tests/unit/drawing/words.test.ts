@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { laws } from '~/utils/contracts/check'
 import { findingKey } from '~/utils/drawing/findings'
 import { sizeWithInterval, verdictInWords } from '~/utils/drawing/verdict'
 import {
@@ -118,6 +119,13 @@ describe('the verdict in a sentence', () => {
     const scale: Finding = { kind: 'wrong-scale', frames: [], amount: 0.22, text: 'unused' }
     expect(verdictInWords({ ...answer, verdict: 'breaks', size, findings: [moving, scale] }, claim).rest).toBe(`${moving.text} One more finding below.`)
     expect(verdictInWords(answer, { ...claim, start: 'rest' }).rest).toBe('Every drawing sits inside its allowance: it reads as a topple, from rest.')
+  })
+  it('names every law of a list under several, and every single one', () => {
+    const span = { contact: false, verdict: 'holds', reason: null, misfit: 0.2, readsAs: [], size: null, figures: [] } as const
+    const joint = { frame: 20, contact: false, before: 4, after: 4, apart: 0, holds: true }
+    const thrown: CheckResult = { ...answer, spans: [{ ...span, readsAs: [], figures: [], from: 1, to: 20, law: 'slow-in' }, { ...span, readsAs: [], figures: [], from: 20, to: 40, law: 'steady' }], joints: [joint] }
+    expect(verdictInWords(thrown, { law: 'slow-in', unit: 'px' }).rest).toBe('Every drawing sits inside its allowance, and the joints hold: it reads as a slow in, then even spacing.')
+    for (const law of laws) expect(verdictInWords(answer, { law, unit: 'px' }).rest).toMatch(/it reads as (an? |the |even )[a-z ]+\.$/)
   })
   it('gives the reason where nothing can be told', () => {
     expect(verdictInWords({ ...answer, verdict: 'undecided', reason: 'Four keys are too few.' }, claim).rest).toBe('Four keys are too few.')
