@@ -132,11 +132,12 @@ function placeWords(
     .filter((_, i) => i % every === 0)
     .map((s) => ({ x: s.x + s.nx * TICK.to - 2, y: s.y + s.ny * TICK.to - 2, width: 4, height: 4 }))
   const marks = crosses.map(({ x, y }) => ({ x: x - CROSS_ARM, y: y - CROSS_ARM, width: 2 * CROSS_ARM, height: 2 * CROSS_ARM }))
+  const strayed = new Set(layout.offPath?.map(({ index }) => index))
   const wanted: Wanted<number>[] = [...broken]
     .sort((a, b) => severity(b.key) - severity(a.key))
     .slice(0, 60)
     .map(({ key, i }) => {
-      const off = earlyOrLate(key.offsetFrames ?? null)
+      const off = strayed.has(i) ? 'off the path' : earlyOrLate(key.offsetFrames ?? null)
       const text = off ? `${key.frame} · ${off}` : String(key.frame)
       return { item: i, text, places: layout.breakPlaces(i, text) }
     })

@@ -11,6 +11,7 @@ const TALLEST = 340
 const SMALL = 150
 /** A level path still leaves room for the words over and under it. */
 const LOWEST = 120
+const WORTH_A_PIVOT = 0.6
 
 /** The true path of action on the drawing: posted points where they are, the law's ticks across the path. */
 export function stripPath(keys: readonly StripKey[], claim: StripClaim, width: number, small: boolean, { path = null, spans, findings = [] }: StripPaths): StripLayout {
@@ -20,9 +21,12 @@ export function stripPath(keys: readonly StripKey[], claim: StripClaim, width: n
   const places = [...onPaper, ...lawful.filter((one) => one !== null)]
   const inside = { x: small ? 16 : Math.min(64, width * 0.12), y: small ? 18 : 52 }
   const pivot = path?.kind === 'circle' && !path.nearlyStraight ? path.centre : null
-  const box = boxOf(pivot && near(pivot, places) ? [...places, pivot] : places, up)
   const room = { x: width - 2 * inside.x, y: (small ? SMALL : TALLEST) - 2 * inside.y }
-  const scale = Math.min(room.x / Math.max(box.width, 1e-9), room.y / Math.max(box.height, 1e-9))
+  const fit = (box: { width: number; height: number }) => Math.min(room.x / Math.max(box.width, 1e-9), room.y / Math.max(box.height, 1e-9))
+  const [bare, whole] = [boxOf(places, up), boxOf(pivot ? [...places, pivot] : places, up)]
+  // A pivot that would make the drawings small stays off the paper.
+  const box = fit(whole) >= WORTH_A_PIVOT * fit(bare) ? whole : bare
+  const scale = fit(box)
   const height = small ? SMALL : Math.max(LOWEST, Math.ceil(box.height * scale) + 2 * inside.y)
   const left = inside.x + (room.x - box.width * scale) / 2
   const top = (height - box.height * scale) / 2
@@ -60,13 +64,6 @@ function boxOf(places: readonly Place[], up: boolean) {
   const ys = places.map(({ y }) => (up ? -y : y))
   const [left, top] = [Math.min(...xs), Math.min(...ys)]
   return { left, top, width: Math.max(...xs) - left, height: Math.max(...ys) - top }
-}
-
-/** A pivot far beyond the drawings would make them small: then it stays off the paper. */
-function near(pivot: Place, places: readonly Place[]): boolean {
-  const box = boxOf(places, false)
-  const reach = 1.6 * Math.max(box.width, box.height)
-  return Math.abs(pivot.x - box.left - box.width / 2) < reach && Math.abs(pivot.y - box.top - box.height / 2) < reach
 }
 
 /** Unit direction that points away from the path, in pixels: outwards of a circle, up from a level path. */

@@ -45,6 +45,7 @@ describe('the strip of points', () => {
   it('marks a drawing off the path by a shape of its own and a hair to the path', () => {
     const drawing = drawStrip(arc((i) => (i === 4 ? 224 : 200)), claim, 720, false, { ...circle, findings: [{ kind: 'off-path', frames: [5], amount: 24, text: '' }] })
     expect([strokes(drawing.offPath.rings), strokes(drawing.offPath.hairs), strokes(drawing.brokenDots)]).toEqual([1, 1, 1])
+    expect(drawing.breaks.map(({ text }) => text)).toEqual(['5 · off the path'])
     const clean = drawStrip(arc(), claim, 720, false, circle)
     expect(clean.offPath).toEqual({ rings: '', hairs: '' })
   })
