@@ -1,0 +1,142 @@
+/** The cheapest division: from the best outlines, joint by joint and law by law, downhill. */
+import { MISPLACED_CHARGE, mostMisplaced } from '../../hypotheses'
+import { chargeOf, piecesOf } from './division'
+import type { Division, Known, Rates } from './division'
+import { outlines } from './outline'
+import { dot } from './piece'
+import type { Kind, Piece } from './piece'
+import { without } from './scene'
+import type { Scene } from './scene'
+
+export interface Found {
+  division: Division
+  pieces: Piece[]
+  charge: number
+  /** With the drawings that it sets aside. */
+  scene: Scene
+}
+
+const KINDS: readonly Kind[] = ['even', 'curved', 'swing']
+
+/**
+ * The cheapest division for every number of spans from one up to `most` that can be had, fewest spans first. Drawings that the cheapest of
+ * all calls misplaced have bent the others too: they get a second look without them.
+ */
+export function divisions(scene: Scene, most: number, rates: Rates): Found[] {
+  const found = divisionsAtOnce(scene, most, rates)
+  const best = cheapest(found)
+  if (!best || aside(best.scene) === aside(scene)) return found
+  const again = divisionsAtOnce(best.scene, most, rates)
+  return found.map(first => [first, ...again.filter(({ pieces }) => pieces.length === first.pieces.length)].reduce((a, b) => (b.charge < a.charge ? b : a)))
+}
+
+export function cheapest(found: readonly Found[]): Found | null {
+  return found.reduce<Found | null>((best, one) => (best && best.charge <= one.charge ? best : one), null)
+}
+
+function divisionsAtOnce(scene: Scene, most: number, rates: Rates): Found[] {
+  const known: Known = new Map()
+  const found: Found[] = []
+  for (const outline of outlines(scene, most, rates.sigma)) {
+    const fewer = found[found.length - 1]
+    let best: Found | null = null
+    for (const { joints, kinds } of [outline, ...(fewer ? [split(scene, fewer.division)] : [])]) {
+      for (const contact of joints.length > 0 ? [false, true] : [false]) {
+        const from = looked(scene, { joints, kinds, contacts: joints.map(() => contact) }, rates, known)
+        const down = from && downhill(scene, from, rates, known)
+        if (down && (!best || down.charge < best.charge)) best = down
+      }
+    }
+    if (best) found.push(relieved(scene, best, rates))
+  }
+  return found
+}
+
+function looked(scene: Scene, division: Division, rates: Rates, known: Known): Found | null {
+  const pieces = piecesOf(scene, division, known)
+  if (!pieces) return null
+  const charge = chargeOf(scene, division, pieces, rates) + MISPLACED_CHARGE * aside(scene)
+  return Number.isFinite(charge) ? { division, pieces, charge, scene } : null
+}
+
+const aside = ({ weights }: Scene) => weights.reduce((count, weight) => count + (weight === 0 ? 1 : 0), 0)
+
+/** The same with lone drawings set aside that cost more than calling them misplaced would, the dearest first. */
+function relieved(scene: Scene, found: Found, rates: Rates): Found {
+  let best = found
+  for (let round = 0; round < mostMisplaced(scene.n); round++) {
+    const worst = dearest(best)
+    if (!worst || worst.gain <= 2 * rates.sigma * rates.sigma * MISPLACED_CHARGE) break
+    const calmer = without(best.scene, worst.at)
+    const known: Known = new Map()
+    const from = looked(calmer, best.division, rates, known)
+    const down = from && downhill(calmer, from, rates, known)
+    if (!down || down.charge >= best.charge) break
+    best = down
+  }
+  return best
+}
+
+/** The drawing whose going would save most: r²/(1 − h), h its leverage (common least-squares algebra). */
+function dearest({ division: { joints }, pieces, scene: { n, rows, weights } }: Found): { at: number, gain: number } | null {
+  let worst: { at: number, gain: number } | null = null
+  pieces.forEach((piece, s) => {
+    const from = s === 0 ? 0 : (joints[s - 1] as number) + 1
+    const to = joints[s] ?? n - 1
+    for (let i = from; i <= to; i++) {
+      if (weights[i] === 0) continue
+      const { values, byValue } = piece.at(i)
+      const room = 1 - dot(byValue, piece.solve(byValue))
+      if (room < 0.02) continue
+      let off = 0
+      rows.forEach((row, r) => { off += ((row[i] as number) - (values[r] as number)) ** 2 })
+      if (!worst || off / room > worst.gain) worst = { at: i, gain: off / room }
+    }
+  })
+  return worst
+}
+
+/** A division with its longest span cut in half: another place to begin. */
+function split({ n }: Scene, { joints, kinds }: Division): { joints: number[], kinds: Kind[] } {
+  const ends = [0, ...joints, n - 1]
+  let longest = 0
+  for (let s = 1; s + 1 < ends.length; s++) {
+    if ((ends[s + 1] as number) - (ends[s] as number) > (ends[longest + 1] as number) - (ends[longest] as number)) longest = s
+  }
+  const cut = ((ends[longest] as number) + (ends[longest + 1] as number)) >> 1
+  const kind = kinds[longest] as Kind
+  return { joints: [...joints.slice(0, longest), cut, ...joints.slice(longest)], kinds: [...kinds.slice(0, longest), kind, ...kinds.slice(longest)] }
+}
+
+/** Moves one joint, changes one span's law or one contact at a time for as long as that is cheaper. */
+function downhill(scene: Scene, from: Found, rates: Rates, known: Known): Found {
+  const kinds = KINDS.filter(kind => kind !== 'swing' || scene.pull)
+  let best = from
+  const steps = [1, 2, 4, ...(scene.n > 300 ? [8, 16] : [])]
+  for (let round = 0; round < 40; round++) {
+    const { division: { joints, kinds: of, contacts } } = best
+    const next: Division[] = []
+    joints.forEach((at, j) => {
+      for (const step of steps) {
+        for (const to of [at - step, at + step]) next.push({ joints: joints.with(j, to), kinds: of, contacts })
+      }
+      next.push({ joints, kinds: of, contacts: contacts.with(j, !contacts[j]) })
+    })
+    of.forEach((kind, s) => {
+      for (const other of kinds) if (other !== kind) next.push({ joints, kinds: of.with(s, other), contacts })
+    })
+    let better: Found | null = null
+    for (const division of next) {
+      if (!inOrder(division.joints, scene.n)) continue
+      const tried = looked(scene, division, rates, known)
+      if (tried && tried.charge < (better ?? best).charge - 1e-9) better = tried
+    }
+    if (!better) break
+    best = better
+  }
+  return best
+}
+
+function inOrder(joints: readonly number[], n: number): boolean {
+  return joints.every((at, j) => at > (joints[j - 1] ?? 0) && at < n - 1)
+}
