@@ -9,7 +9,7 @@ import { makePointLists } from './lists/points'
 import { scoreLists } from './judgeScore'
 import type { Score } from './judgeScore'
 import { pointTable, scorePoints } from './pointScore'
-import { scoreSpans, spanTable } from './spanScore'
+import { finderTable, isWhole, scoreFinder, scoreSpans, spanTable } from './spanScore'
 
 export interface JudgeBench {
   score: Score
@@ -70,7 +70,9 @@ export function runJudgeBench(count = 2000, seed = 7): JudgeBench {
 
 export default async function run(): Promise<void> {
   console.log(runJudgeBench().table)
-  console.log(`\n${spanTable(scoreSpans(makeSpans(24 * SPAN_ROUND, 7)))}`)
+  const divided = makeSpans(24 * SPAN_ROUND, 7)
+  console.log(`\n${spanTable(scoreSpans(divided))}`)
+  console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)
   console.log(`\n${pointTable(scorePoints(makePointLists(2024, 7)))}`)
   console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(1000, 7, ['angle'])))}`)
 }

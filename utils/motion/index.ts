@@ -1,5 +1,6 @@
 /** The judge and what the screens need around it. */
 export { judge, judgeInDepth } from './judge'
+export { findSpans } from './spans/index'
 export type { Judgement } from './readings'
 export { lawCurve } from './line'
 export type { Line } from './line'

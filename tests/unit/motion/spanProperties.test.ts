@@ -101,3 +101,28 @@ describe('every answer on a divided list', () => {
     }), RUNS)
   })
 })
+
+describe('every search for joints', () => {
+  const searches = requests.map(({ spans: _spans, ...request }): ReadingCheck => ({ ...request, spans: 'find' }))
+
+  it('is finite, complete, and the same twice', () => {
+    fc.assert(fc.property(searches, (request) => {
+      const result = judge(request)
+      everyNumber(result, number => expect(Number.isFinite(number)).toBe(true))
+      expect(result.keys.map(({ frame }) => frame)).toEqual(request.keys.map(({ frame }) => frame))
+      const spans = result.spans ?? []
+      expect(spans.length).toBeGreaterThanOrEqual(1)
+      expect(spans.length).toBeLessThanOrEqual(4)
+      expect(spans[0]?.from).toBe(request.keys[0]?.frame)
+      expect(spans[spans.length - 1]?.to).toBe(request.keys[request.keys.length - 1]?.frame)
+      spans.slice(1).forEach(({ from }, i) => expect(from).toBe(spans[i]?.to))
+      expect(JSON.stringify(judge(request))).toBe(JSON.stringify(result))
+    }), { ...RUNS, numRuns: 50 })
+  })
+
+  it('does not depend on which number the first frame has', () => {
+    fc.assert(fc.property(searches, (request) => {
+      expect(outline(judge(later(request, 5000)))).toEqual(outline(judge(request)))
+    }), { ...RUNS, numRuns: 40 })
+  })
+})

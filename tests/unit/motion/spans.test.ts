@@ -1,6 +1,6 @@
 /** Lists divided into spans: how parts are put together, what is said of joints, and what is told once. Readings are school algebra, worked beside each. */
 import { describe, expect, it } from 'vitest'
-import { judge, judgeInDepth, lawCurve } from '../../../utils/motion'
+import { findSpans, judge, judgeInDepth, lawCurve } from '../../../utils/motion'
 import type { Key, ReadingCheck, Span } from '../../../utils/motion'
 
 /** From rest 4 px per frame more every two frames' gap up to frame 1021 (r = 2i² at the i-th drawing), then even gaps of `gap`. */
@@ -155,5 +155,37 @@ describe('a divided list', () => {
     const drawn = first?.judgement.line && lawCurve(first.judgement.line, first.request as ReadingCheck, [1006])
     // Halfway between the third and the fourth drawing: 2 · 2.5².
     expect(drawn?.[0]).toBeCloseTo(12.5, 6)
+  })
+})
+
+describe('joints looked for', () => {
+  it('finds where the law changes and judges the list by that', () => {
+    const found = request(outThenEven(40), 'find')
+    const spans: Span[] = [{ from: 1001, to: 1021, law: 'odd-rule' }, { from: 1021, to: 1037, law: 'steady' }]
+    expect(findSpans(found)).toEqual(spans)
+    expect(judge(found)).toEqual(judge(request(outThenEven(40), spans)))
+  })
+
+  it('says contact where the speed jumps', () => {
+    const spans = findSpans(request(outThenEven(-30), 'find'))
+    expect(spans).toEqual([{ from: 1001, to: 1021, law: 'odd-rule', contact: true }, { from: 1021, to: 1037, law: 'steady' }])
+  })
+
+  it('leaves a single law whole, and judges it as ever', () => {
+    const keys = outThenEven(40).slice(0, 11)
+    const found = judge(request(keys, 'find'))
+    const { spans, joints, ...rest } = found
+    expect(spans?.map(({ from, to, law, verdict }) => [from, to, law, verdict])).toEqual([[1001, 1021, 'odd-rule', 'holds']])
+    expect(joints).toEqual([])
+    const { spans: _none, ...plain } = request(keys)
+    expect(rest).toEqual(judge(plain))
+    expect(findSpans(request(keys, 'find'))).toEqual([{ from: 1001, to: 1021, law: 'odd-rule' }])
+  })
+
+  it('keeps a lone misplaced drawing inside its span', () => {
+    const keys = outThenEven(40).map(key => (key.frame === 1011 ? { ...key, reading: 68 } : key))
+    const result = judge(request(keys, 'find'))
+    expect(result.spans?.map(({ from, to }) => [from, to])).toEqual([[1001, 1021], [1021, 1037]])
+    expect(result.findings.map(({ kind, frames }) => [kind, frames])).toEqual([['misplaced', [1011]]])
   })
 })

@@ -95,7 +95,8 @@ function inListOrder(findings: Finding[]): Finding[] {
     .map(({ finding }) => finding)
 }
 
-function spanOf({ span, judgement: { result }, request }: JudgedPart, settled: ReadonlySet<number>): JudgedSpan {
+/** How one span came out. `settled`: frames of joints whose drawing has been told of already. */
+export function spanOf({ span, judgement: { result }, request }: JudgedPart, settled: ReadonlySet<number>): JudgedSpan {
   // A drawing that the joint answers for is no fault of the span.
   const clear = result.findings.length > 0
     && result.findings.every(({ kind, frames: [frame] }) => frame !== undefined && OF_ONE_DRAWING.includes(kind) && settled.has(frame))

@@ -22,6 +22,11 @@ export function judgePart(part: Part): JudgedPart {
   return { ...part, judgement: named(judgement, part) }
 }
 
+/** Judges a part that is the whole list: what concerns it all names no frames. */
+export function judgeAsWhole(part: Part): JudgedPart {
+  return { ...part, judgement: judgeAlone(part.request) }
+}
+
 function judgeAlone(request: CheckRequest): Judgement {
   const judgement = request.keys.length < CHECKED_KEYS
     ? tooFew(request)

@@ -21,8 +21,10 @@ export interface Rates {
 
 /** For saying that there is a joint at all, to which the choice among n places is added. */
 const JOINT_CHARGE = 1
+/** For saying that a span curves: even spacing has the name until it plainly fails. */
+const CURVE_CHARGE = 2.5
 /** For saying that speed doesn't carry over there. */
-const CONTACT_CHARGE = 3
+const CONTACT_CHARGE = 5
 
 /** Pieces by what they cover: neighbouring divisions share most of theirs. */
 export type Known = Map<string, Piece | null>
@@ -47,15 +49,16 @@ export function piecesOf(scene: Scene, { joints, kinds }: Division, known: Known
 /**
  * What a division costs, nats: squares left over with the joints' conditions kept, free numbers, joints and contacts. Holding a line to
  * a condition d = 0 adds dᵀS⁻¹d to its squares, S the covariance of d per unit variance (common algebra of restricted least squares).
- * Infinity where lines don't meet at a contact.
+ * An infinite charge where lines don't meet at a contact.
  */
-export function chargeOf({ n, frames, rows }: Pick<Scene, 'n' | 'frames' | 'rows'>, { joints, contacts }: Division, pieces: readonly Piece[], rates: Rates): number {
+export function chargeOf(scene: Scene, { joints, kinds, contacts }: Division, pieces: readonly Piece[], rates: Rates): { charge: number, squares: number } {
+  const { n, rows } = scene
   const conditions: { joint: number, ofSpeed: boolean }[] = []
   let loose = 0
   for (let j = 0; j < joints.length; j++) {
     if (contacts[j]) {
-      const atKey = meetsAt(frames, joints[j] as number, pieces[j] as Piece, pieces[j + 1] as Piece, rates)
-      if (atKey === 'never') return Infinity
+      const atKey = meetsAt(scene, joints[j] as number, pieces[j] as Piece, pieces[j + 1] as Piece, rates)
+      if (atKey === 'never') return { charge: Infinity, squares: Infinity }
       // Between two drawings the lines meet by themselves, but when is one more number.
       if (atKey === 'between') loose++
       else conditions.push({ joint: j, ofSpeed: false })
@@ -71,28 +74,31 @@ export function chargeOf({ n, frames, rows }: Pick<Scene, 'n' | 'frames' | 'rows
   }
   cost += heldTogether(joints, pieces, conditions, rows.length)
   const free = rows.length * (numbers - conditions.length) - loose * (rows.length - 1)
-  return cost / (2 * rates.sigma * rates.sigma) + 0.5 * Math.log(n) * free
+  const charge = cost / (2 * rates.sigma * rates.sigma) + 0.5 * Math.log(n) * free
     + joints.length * (JOINT_CHARGE + Math.log(n)) + contacts.filter(Boolean).length * CONTACT_CHARGE
+    + kinds.filter(kind => kind !== 'even').length * CURVE_CHARGE
+  return { charge, squares: cost }
 }
 
 /** Where the lines of two spans meet at a contact: at the joint's drawing, before the next one on either side, or nowhere near. */
-function meetsAt(frames: Float64Array, joint: number, before: Piece, after: Piece, { slop, tolerance }: Rates): 'key' | 'between' | 'never' {
+function meetsAt(
+  { n, frames }: Pick<Scene, 'n' | 'frames'>, joint: number, before: Piece, after: Piece, { sigma, slop, tolerance }: Rates,
+): 'key' | 'between' | 'never' {
   const here = before.at(joint)
   const there = after.at(joint)
   const exposure = Math.max(
     (frames[joint + 1] as number) - (frames[joint] as number), (frames[joint] as number) - (frames[Math.max(0, joint - 1)] as number),
   )
-  const [apart, change, speed] = [0, 0, 0]
-  const sums = { apart, change, speed }
-  here.values.forEach((value, r) => {
-    sums.apart += ((there.values[r] as number) - value) ** 2
-    sums.change += ((there.speeds[r] as number) - (here.speeds[r] as number)) ** 2
-    sums.speed += (here.speeds[r] as number) ** 2
-  })
-  const allowance = slop + tolerance * exposure * Math.sqrt(sums.speed)
-  const distance = Math.sqrt(sums.apart)
-  if (distance <= allowance) return 'key'
-  return distance <= allowance + exposure * Math.sqrt(sums.change) ? 'between' : 'never'
+  const apart = distance(here.values, there.values)
+  const allowance = slop + tolerance * exposure * Math.hypot(...here.speeds)
+  if (apart > allowance + exposure * distance(here.speeds, there.speeds)) return 'never'
+  const spread = dot(here.byValue, before.solve(here.byValue)) + dot(there.byValue, after.solve(there.byValue))
+  // Held to the drawing where that costs less than one more number.
+  return apart <= allowance && apart * apart <= Math.log(n) * sigma * sigma * spread ? 'key' : 'between'
+}
+
+function distance(a: readonly number[], b: readonly number[]): number {
+  return Math.hypot(...a.map((value, r) => value - (b[r] as number)))
 }
 
 /** Squares that the conditions add, all rows together. */

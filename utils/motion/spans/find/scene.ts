@@ -16,7 +16,7 @@ export interface Scene {
 interface Pull { sine: Float64Array, once: Float64Array, twice: Float64Array }
 
 export function sceneOf(request: CheckRequest): Scene {
-  const frames = Float64Array.from(request.keys, ({ frame }) => frame - (request.keys[0]?.frame ?? 0))
+  const frames = Float64Array.from(request.keys.map(({ frame }) => frame - (request.keys[0]?.frame ?? 0)))
   const rows = request.measure === 'point'
     ? [centred(request.keys.map(({ x }) => x)), centred(request.keys.map(({ y }) => y))]
     : [centred(request.keys.map(({ reading }) => reading))]

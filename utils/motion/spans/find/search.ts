@@ -7,11 +7,15 @@ import { dot } from './piece'
 import type { Kind, Piece } from './piece'
 import { without } from './scene'
 import type { Scene } from './scene'
+import { exactSwing } from './swing'
+import type { ReadingCheck } from '../../types'
 
 export interface Found {
   division: Division
   pieces: Piece[]
+  /** Nats, and the squares left over that are part of it. */
   charge: number
+  squares: number
   /** With the drawings that it sets aside. */
   scene: Scene
 }
@@ -49,14 +53,31 @@ function divisionsAtOnce(scene: Scene, most: number, rates: Rates): Found[] {
     }
     if (best) found.push(relieved(scene, best, rates))
   }
+  // What was found for more spans may be better with a joint less than what was found for fewer.
+  for (let at = found.length - 1; at > 0; at--) {
+    const { division, scene: calmer } = found[at] as Found
+    const merged = division.joints.flatMap((_, j) => fewerByOne(division, j)).flatMap(each => looked(calmer, each, rates, new Map()) ?? [])
+    const best = cheapest(merged)
+    const fewer = found[at - 1] as Found
+    if (best && best.pieces.length === fewer.pieces.length && best.charge < fewer.charge) found[at - 1] = relieved(calmer, downhill(calmer, best, rates, new Map()), rates)
+  }
   return found
+}
+
+/** A division without its joint j: either span's law for both. */
+function fewerByOne({ joints, kinds, contacts }: Division, j: number): Division[] {
+  const drop = <T>(list: readonly T[], at: number) => list.filter((_, i) => i !== at)
+  return [j, j + 1].map(s => ({ joints: drop(joints, j), kinds: drop(kinds, s), contacts: drop(contacts, j) }))
 }
 
 function looked(scene: Scene, division: Division, rates: Rates, known: Known): Found | null {
   const pieces = piecesOf(scene, division, known)
-  if (!pieces) return null
-  const charge = chargeOf(scene, division, pieces, rates) + MISPLACED_CHARGE * aside(scene)
-  return Number.isFinite(charge) ? { division, pieces, charge, scene } : null
+  return pieces && foundWith(scene, division, pieces, rates)
+}
+
+function foundWith(scene: Scene, division: Division, pieces: Piece[], rates: Rates): Found | null {
+  const { charge, squares } = chargeOf(scene, division, pieces, rates)
+  return Number.isFinite(charge) ? { division, pieces, scene, squares, charge: charge + MISPLACED_CHARGE * aside(scene) } : null
 }
 
 const aside = ({ weights }: Scene) => weights.reduce((count, weight) => count + (weight === 0 ? 1 : 0), 0)
@@ -118,7 +139,11 @@ function downhill(scene: Scene, from: Found, rates: Rates, known: Known): Found 
     const next: Division[] = []
     joints.forEach((at, j) => {
       for (const step of steps) {
-        for (const to of [at - step, at + step]) next.push({ joints: joints.with(j, to), kinds: of, contacts })
+        for (const to of [at - step, at + step]) {
+          next.push({ joints: joints.with(j, to), kinds: of, contacts })
+          // A contact one drawing off fits better than none there.
+          if (step === 1) next.push({ joints: joints.with(j, to), kinds: of, contacts: contacts.with(j, !contacts[j]) })
+        }
       }
       next.push({ joints, kinds: of, contacts: contacts.with(j, !contacts[j]) })
     })
@@ -139,4 +164,42 @@ function downhill(scene: Scene, from: Found, rates: Rates, known: Known): Found 
 
 function inOrder(joints: readonly number[], n: number): boolean {
   return joints.every((at, j) => at > (joints[j - 1] ?? 0) && at < n - 1)
+}
+
+/**
+ * The same with every swing in it exact, its joints moved, its laws and contacts changed for as long as that is cheaper: summed up from the drawings
+ * themselves, a swing carries their pencil along.
+ */
+export function exactly(request: ReadingCheck, found: Found, rates: Rates): Found {
+  if (!found.division.kinds.includes('swing')) return found
+  const { scene } = found
+  const known: Known = new Map()
+  const exact: Known = new Map()
+  const look = (division: Division): Found | null => {
+    const rough = piecesOf(scene, division, known)
+    const pieces = rough?.map((piece, s) => {
+      if (piece.kind !== 'swing') return piece
+      const from = s === 0 ? 0 : (division.joints[s - 1] as number) + 1
+      const to = division.joints[s] ?? scene.n - 1
+      const name = `${piece.pull} ${from} ${to}`
+      const swing = exact.get(name) ?? exactSwing(request, scene, piece, from, to) ?? piece
+      exact.set(name, swing)
+      return swing
+    })
+    return pieces ? foundWith(scene, division, pieces, rates) : null
+  }
+  let best = look(found.division) ?? found
+  for (let round = 0; round < 5; round++) {
+    const { joints, kinds, contacts } = best.division
+    const moved = joints.flatMap((at, j) => [at - 1, at + 1].map(to => joints.with(j, to))).filter(places => inOrder(places, scene.n))
+    const nearer = [
+      ...moved.map(places => ({ ...best.division, joints: places })),
+      ...contacts.map((contact, j) => ({ ...best.division, contacts: contacts.with(j, !contact) })),
+      ...kinds.flatMap((kind, s) => KINDS.filter(other => other !== kind).map(other => ({ ...best.division, kinds: kinds.with(s, other) }))),
+    ].flatMap(division => look(division) ?? [])
+    const next = cheapest(nearer)
+    if (!next || next.charge >= best.charge) break
+    best = next
+  }
+  return best
 }
