@@ -96,6 +96,25 @@ export interface Choice {
   sigma: number
 }
 
+/** True where a law explains a list: the misfit is below notice, and of ten drawings at most one breaks. */
+const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
+
+/** True where a law can be kept by a story: few drawings are bad, and no run of them is a motion of its own. */
+function acceptable(series: Series, story: Story, care: Care): boolean {
+  const off = badDrawings(series, story, care)
+  return off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER && !leavesAtEnd(off, series.n)
+}
+
+/**
+ * True where the claimed law or a plain rival explains the list. Laws with more freedom cost more to fit and could explain much: they are
+ * asked only where this is false. A swing saved by several faults may be one that dies.
+ */
+export function explained(series: Series, { claimed, others }: Choice, care: Care): boolean {
+  if (others.some(fits)) return true
+  if (claimed.law === 'pendulum' && (claimed.story.shift || claimed.story.out.length > 1)) return false
+  return acceptable(series, claimed.story, care)
+}
+
 /** A law that the list is compared with, and its plain best. */
 export interface Rival { law: ReadingLaw, story: Story }
 
@@ -145,22 +164,26 @@ export type Opinion =
 /** Keeps to the claimed law, doubts it, or says that the list can't tell. */
 export function opine(series: Series, choice: Choice, care: Care, range: number, scale: Scale): Opinion {
   const { claimed, others, sigma } = choice
-  const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.1
   const off = badDrawings(series, claimed.story, care)
-  const acceptable = off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER && !leavesAtEnd(off, series.n)
+  const kept = acceptable(series, claimed.story, care)
   const rivals = others.filter(fits).sort((a, b) => a.charge - b.charge)
   const steady = others.find(other => other.law === 'steady')
 
   // The claimed law only fits by not curving: what is there is even spacing, if the list is long enough to have shown anything else.
-  if (acceptable && steady && steady.misfit <= EVEN_ENOUGH && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
+  if (kept && steady && steady.misfit <= EVEN_ENOUGH && steady.breaking === 0 && steady.charge <= claimed.charge + DOUBT) {
     // At some claimed sizes nothing else could be seen in so short a time: the list agrees with its claim, or can't tell.
     if (scale.pace !== null && Math.abs(scale.pace * scale.pace - 1) <= scale.reach) {
       return { kind: scale.spread < SURE ? 'law-holds' : 'too-short' }
     }
     return range / 4 > Math.max(6 * sigma, care.slop) ? { kind: 'wrong-law', reads: 'steady' } : { kind: 'too-short' }
   }
+  // A bounce that never touches the ground is a fall, whatever its free numbers say.
+  const fall = claimed.law === 'bounce' ? others.find(other => other.law === 'odd-rule') : undefined
+  if (kept && fall && fall.misfit <= EVEN_ENOUGH && fall.breaking === 0 && fall.charge <= claimed.charge + DOUBT) {
+    return { kind: 'wrong-law', reads: 'odd-rule' }
+  }
   const [rival] = rivals
-  if (!acceptable) return { kind: 'wrong-law', reads: rival ? simplest(rivals, rival).law : null }
+  if (!kept) return { kind: 'wrong-law', reads: rival ? simplest(rivals, rival).law : null }
   const faulted = off.length > 0 || claimed.story.shift !== null
   // A fault under the claimed law has been charged for already; without one, only what could be noticed is held against it.
   const margin = faulted ? DOUBT_WITH_FAULTS : DOUBT

@@ -26,7 +26,8 @@ function every(series: Series, y: Float64Array, stride: number): Series {
 
 /** Fit to keys from..to (exclusive) alone, traced over the whole list: where one half is sound, it shows up what is wrong with the other. */
 export function partFit(series: Series, model: LawModel, y: Float64Array, from: number, to: number): Fit {
-  const { numbers } = fitPiece(model, part(series, y, from, to), null, THOROUGH)
+  const found = fitPiece(model, part(series, y, from, to), null, THOROUGH).numbers
+  const numbers = model.fromStart ? model.fromStart(found) : found
   return refine(model, series, series.x, series.y, new Float64Array(series.n), numbers, { steps: 0, enough: 1 })
 }
 
@@ -47,7 +48,7 @@ function fitPiece(model: LawModel, piece: Series, from: Float64Array | null, eff
  */
 export function firstFit(series: Series, model: LawModel, y: Float64Array, noticeable: number, effort: Effort): Fit {
   const whole = part(series, y, 0, series.n)
-  if (model.linear || series.n <= AT_ONCE) return fitPiece(model, whole, null, effort)
+  if (model.linear || model.kinked || series.n <= AT_ONCE) return fitPiece(model, whole, null, effort)
   if (effort === PASSING && series.n > 2 * ENOUGH_TO_COMPARE) {
     const thin = every(series, y, Math.ceil(series.n / ENOUGH_TO_COMPARE))
     return fitPiece(model, whole, fitPiece(model, thin, null, effort).numbers, { steps: 1, enough: 1 })

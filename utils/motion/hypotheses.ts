@@ -150,7 +150,7 @@ export interface Plain { fit: Fit, base: Fit }
 
 /** A plain fit of a law with lone bad drawings smoothed over at the start of the search. */
 export function plainFit(series: Series, model: LawModel, care: Care, effort: Effort = THOROUGH): Plain {
-  const calm = smoothed(series.x, series.y, 2 * care.slop)
+  const calm = model.kinked ? series.y : smoothed(series.x, series.y, 2 * care.slop)
   const ones = new Float64Array(series.n).fill(1)
   const noticeable = care.slop + care.tolerance * typicalGap(series) + 3 * care.least
   const base = firstFit(series, model, calm, noticeable, effort)
@@ -169,7 +169,7 @@ function typicalGap(series: Series): number {
  * Drawings that break a line which gives way to none of them: a few rounds of least squares, each drawing weighing less the further it
  * was off in the round before (weights of Cauchy's distribution; common robust practice).
  */
-function doubted(series: Series, from: Fit, care: Care): number[] {
+function doubted(series: Series, from: Fit, care: Care): { fit: Fit, off: number[] } {
   let fit = from
   for (let round = 0; round < 6; round++) {
     const strained = strain(series, fit, care)
@@ -179,7 +179,7 @@ function doubted(series: Series, from: Fit, care: Care): number[] {
     fit = refine(fit.model, series, series.x, series.y, weights, fit.numbers, { steps: 3, enough: 1e-3 })
   }
   const strained = strain(series, fit, care)
-  return Array.from(strained.keys()).filter(i => (strained[i] as number) > 1)
+  return { fit, off: Array.from(strained.keys()).filter(i => (strained[i] as number) > 1) }
 }
 
 /** Fits the cheapest `most` of the candidates that have not been heard yet and adds them to the stories told. */
@@ -229,11 +229,15 @@ export function stories(series: Series, { fit, base }: Plain, care: Care): Story
   if (!told.some(story => story.breaking === 0)) {
     const half = Math.ceil(n / 2)
     if (half >= model.size + 2) {
-      for (const [from, to] of [[0, half], [n - half, n]] as const) {
+      const long = Math.ceil(2 * n / 3)
+      // Half a list may hold too few corners to know the law by.
+      const parts = model.kinked ? [[0, half], [n - half, n], [0, long], [n - long, n]] as const : [[0, half], [n - half, n]] as const
+      for (const [from, to] of parts) {
         hear(series, model, care, told, bestShifts(series, partFit(series, model, y, from, to), y, sizes), 2)
       }
     }
-    const off = doubted(series, fit, care)
+    const { fit: sturdy, off } = doubted(series, fit, care)
+    if (model.kinked) hear(series, model, care, told, bestShifts(series, sturdy, y, sizes), 3)
     if (off.length <= Math.min(spare, mostMisplaced(n))) told.push(tell(series, model, off, null, fit.numbers, care))
   }
 

@@ -1,4 +1,5 @@
 /** When a motion that is already under way was let go. */
+import { stillPhase, swingsTake } from './dyingSwing'
 import { incompleteF, ladder } from './elliptic'
 import type { Series } from './series'
 import type { Law } from './types'
@@ -9,10 +10,33 @@ import type { Law } from './types'
  * `numbers`: the free law's own.
  */
 export function letGoFrames(law: Law, series: Series, numbers: Float64Array): number | null {
-  const spans = law === 'odd-rule' ? apexBefore(numbers) : law === 'steady' ? null : standstillBefore(numbers, law !== 'pendulum')
+  const spans = standstill(law, numbers)
   if (spans === null) return null
   const frames = spans * series.spanFrames
   return Number.isFinite(frames) ? frames : null
+}
+
+function standstill(law: Law, numbers: Float64Array): number | null {
+  switch (law) {
+    case 'odd-rule': return apexBefore(numbers)
+    case 'topple': case 'over-edge': case 'pendulum': return standstillBefore(numbers, law !== 'pendulum')
+    case 'swing-decay': return dyingStandstill(numbers)
+    case 'bounce': return apexOfHop(numbers)
+    default: return null
+  }
+}
+
+/** The apex of the hop that ends in the first contact, or the one after it. */
+function apexOfHop([contact = 0, , , hop = 0, e = 1]: Float64Array): number {
+  const before = hop / (2 * e) - contact
+  const after = -(contact + hop / 2)
+  return Math.abs(after) < Math.abs(before) ? after : before
+}
+
+/** Swings back to the nearest standstill, in the time that swings of the amplitude at the first key take. */
+function dyingStandstill([log = 0, amplitude = 0.1, phase = 0, decrement = 0]: Float64Array): number {
+  const past = phase - stillPhase(Math.abs(amplitude), decrement)
+  return -swingsTake(Math.round(2 * past) / 2 - past, Math.abs(amplitude), decrement) / Math.exp(log)
 }
 
 /** Speed over acceleration at the first key, z = −1: (2c₁ − 4c₂)/8c₂ spans. */

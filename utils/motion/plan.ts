@@ -1,5 +1,9 @@
 /** The bench: a spacing list worked out before anything is drawn. */
 import { pathAcceleration } from './bodies'
+import { dyingSwing, fullSwing, stillPhase, swingsTake } from './dyingSwing'
+import type { Moment } from './dyingSwing'
+import { contactAfter, hopsBy } from './laws/hops'
+import { LEAST_DECREMENT } from './laws/swingDecay'
 import { RADIAN } from './series'
 import { freeSwing } from './swing'
 import { paceOf, swingPeriod, toppleTime } from './times'
@@ -28,6 +32,10 @@ export type Plan = OnPaper & (
   | { law: 'slow-in', travel: number } & ({ seconds: number } | { deceleration: number })
   /** `turns` full turns at a constant rate; a negative rate turns the other way. Readings in degrees run on past 360. */
   | { law: 'spin', turns: number, turnsPerSecond: number }
+  /** Let go at `amplitude` degrees (up to 165), for `swings` full swings, each losing `share` (0 to 0.5) of the amplitude. */
+  | { law: 'swing-decay', subject: BodySubject, amplitude: number, swings: number, share: number }
+  /** From rest over `drop` drawing units, then `bounces` hops; each contact gives back `restitution` (0 to 1) of the speed. Readings count from where it was let go. */
+  | { law: 'bounce', subject: PathSubject & { unitsPerMetre: number }, drop: number, restitution: number, bounces: number }
 )
 
 export interface PlannedList {
@@ -38,6 +46,8 @@ export interface PlannedList {
   frames: number
 }
 
+const moment: Moment = { angle: 0, rate: 0, byAmplitude: 0, byPhase: 0, byDecrement: 0, swings: 0 }
+
 /** No plan has more keys than a list may have. */
 const MOST_KEYS = 2000
 
@@ -46,12 +56,28 @@ export function secondsFor(plan: Plan): number {
   switch (plan.law) {
     case 'topple': return toppleTime(plan.subject, plan.lean, plan.to ?? 90)
     case 'pendulum': return swingPeriod(plan.subject, plan.amplitude) * plan.swings
-    case 'odd-rule': return Math.sqrt(2 * Math.abs(plan.travel) / (plan.subject.unitsPerMetre * pathAcceleration(plan.subject)))
+    case 'odd-rule': return fallTime(plan.travel, plan.subject)
     case 'steady': return plan.seconds
     // travel = ½at².
     case 'slow-in': return 'seconds' in plan ? plan.seconds : Math.sqrt(2 * Math.abs(plan.travel) / plan.deceleration)
     case 'spin': return plan.turns / Math.abs(plan.turnsPerSecond)
+    case 'swing-decay': return swingsTake(plan.swings, plan.amplitude * RADIAN, decrementOf(plan.share)) / paceOf(plan.subject)
+    case 'bounce': {
+      // The hops last 2e, 2e², … times the first fall.
+      const fall = fallTime(plan.drop, plan.subject)
+      return fall + contactAfter(plan.bounces, 2 * plan.restitution * fall, plan.restitution)
+    }
   }
+}
+
+/** t = √(2s/a). */
+function fallTime(travel: number, subject: PathSubject & { unitsPerMetre: number }): number {
+  return Math.sqrt(2 * Math.abs(travel) / (subject.unitsPerMetre * pathAcceleration(subject)))
+}
+
+/** δ = −ln(1 − share). */
+function decrementOf(share: number): number {
+  return Math.max(LEAST_DECREMENT, -Math.log1p(-share))
 }
 
 /** Frames the planned motion needs, rounded up to whole ones; Infinity where it never ends. Sizes scale as time squared. */
@@ -94,7 +120,32 @@ function readingsAt(plan: Plan, times: Float64Array): Float64Array {
       return times.map(t => plan.travel * (1 - Math.max(0, 1 - t / seconds) ** 2))
     }
     case 'spin': return times.map(t => 360 * plan.turnsPerSecond * t)
+    case 'swing-decay': return dying(plan.subject, plan.amplitude * RADIAN, decrementOf(plan.share), times)
+    case 'bounce': return dropped(plan.drop, fallTime(plan.drop, plan.subject), plan.restitution, times)
   }
+}
+
+function dying(subject: BodySubject, amplitude: number, decrement: number, times: Float64Array): Float64Array {
+  const k = paceOf(subject)
+  const perSwing = fullSwing(amplitude)
+  const phase = stillPhase(amplitude, decrement)
+  return times.map((t) => {
+    dyingSwing(k * t, amplitude, phase, decrement, k * t / perSwing, moment)
+    return moment.angle / RADIAN
+  })
+}
+
+/** Distance from where it was let go: the drop itself less the height of the hop it is in. */
+function dropped(drop: number, fall: number, restitution: number, times: Float64Array): Float64Array {
+  const a = 2 * drop / (fall * fall)
+  const hop = 2 * restitution * fall
+  return times.map((t) => {
+    if (t <= fall) return a * t * t / 2
+    const k = hopsBy(t - fall, hop, restitution)
+    if (k === Infinity) return drop
+    const s = t - fall - contactAfter(k, hop, restitution)
+    return drop - a / 2 * s * (hop * restitution ** k - s)
+  })
 }
 
 function turned(subject: BodySubject, start: number, fromTop: boolean, times: Float64Array): Float64Array {

@@ -1,12 +1,12 @@
 /** A list of readings under one law, judged. */
-import { opine, plainRivals, ranked, weigh } from './choose'
+import { explained, opine, plainRivals, ranked, weigh } from './choose'
 import type { Rival } from './choose'
 import { figuresOf } from './figures'
 import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongReleaseFinding, wrongScaleFinding } from './findings'
 import { badDrawings, plainFit, stories } from './hypotheses'
 import type { Care, Plain, Story } from './hypotheses'
 import { fromRest, fullNumbers } from './laws/fromRest'
-import { LAWS, LAW_WORDS, MEASURES, rivalsOf } from './laws/index'
+import { LAWS, LAW_WORDS, MEASURES, freerThan, rivalsOf } from './laws/index'
 import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
@@ -22,7 +22,7 @@ import { canRest } from './standstill'
 import { alreadyMoving, beyondDoubt } from './start'
 import type { Considered } from './start'
 import { joined, toldInTheirTurn, turnsToAdd } from './turns'
-import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Place, ReadingCheck } from './types'
+import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Law, Place, ReadingCheck } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -44,6 +44,7 @@ export interface Judgement {
 const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
 const IN_THE_AIR = 'Every drawing is off the brink already: nothing of the arc is left to judge.'
 const SCALE_FLOOR = 0.03
+const TURNING: readonly Law[] = ['pendulum', 'swing-decay', 'bounce']
 
 /** Judges a list of readings; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
 export function judgeReadings(request: ReadingCheck): Judgement {
@@ -91,7 +92,13 @@ function moves({ choice }: Considered, { slop }: Care): boolean {
 
 /** Holds a law, as it is or as it starts from rest, against a list beside every other that the measure can take. */
 function consider(request: ReadingCheck, series: Series, plain: Plain, rivals: readonly Rival[], care: Care, range: number): Considered {
-  const choice = weigh(series, plain.fit.model.law, rivals, stories(series, plain, care), care)
+  const { law } = plain.fit.model
+  const told = stories(series, plain, care)
+  let choice = weigh(series, law, rivals, told, care)
+  if (!explained(series, choice, care)) {
+    const known = [law, ...rivals.map(rival => rival.law)]
+    choice = weigh(series, law, [...rivals, ...plainRivals(series, law, freerThan(known, request.measure), care)], told, care)
+  }
   const { story } = choice.claimed
   const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)
   return { choice, scale, opinion: opine(series, choice, care, range, scale) }
@@ -243,8 +250,8 @@ function shiftFindings(series: Series, story: Story, keys: readonly JudgedKey[])
 function drawingFindings(
   request: ReadingCheck, series: Series, story: Story, keys: readonly JudgedKey[], rate: Float64Array, care: Care,
 ): Finding[] {
-  // A swing turns by its nature, whatever part of it a list shows.
-  const way = request.law === 'pendulum' ? 0 : oneWay(keys, rate, request.slop)
+  // A swing and a bounce turn by their nature, whatever part of them a list shows.
+  const way = TURNING.includes(request.law) ? 0 : oneWay(keys, rate, request.slop)
   // Rounding alone can add one step to what the slop allows.
   const least = (request.slop + roundingStep(series.y)) * (1 + 1e-9)
   const bad = badDrawings(series, story, care)

@@ -6,7 +6,7 @@ import { accelerationOf } from './laws/oddRule'
 import type { Series } from './series'
 import { solve3 } from './solve'
 import { student95 } from './student'
-import type { BodySubject, ReadingCheck, PathSubject, SizeReading } from './types'
+import type { BodySubject, Law, ReadingCheck, PathSubject, SizeReading } from './types'
 
 export interface Scale {
   size: SizeReading | null
@@ -25,6 +25,9 @@ export interface Scale {
   /** The claimed value in the size's own unit. */
   claimed: number | null
 }
+
+/** Laws whose pace is the root of gravity over a length. */
+const TURNING: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay']
 
 const NOTHING: Scale = { size: null, pace: null, spread: Infinity, reach: Infinity, claimed: null }
 /** A size known to no better than this factor either way is printed as this factor, so that an interval is always finite. */
@@ -52,8 +55,8 @@ function halfWidth(fit: Fit, index: number, kept: number, least: number): number
 
 /** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
 export function scaleOf(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
-  if (request.law === 'topple' || request.law === 'over-edge' || request.law === 'pendulum') return bodyScale(request, series, fit, kept, least)
-  if (request.law === 'odd-rule' && request.measure !== 'angle') return pathScale(request, series, fit, kept, least)
+  if (TURNING.includes(request.law)) return bodyScale(request, series, fit, kept, least)
+  if ((request.law === 'odd-rule' && request.measure !== 'angle') || request.law === 'bounce') return pathScale(request, series, fit, kept, least)
   return NOTHING
 }
 
@@ -79,12 +82,17 @@ function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number
 
 function pathScale(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
   const path: PathSubject = request.subject && !isBody(request.subject) ? request.subject : { gravity: gravityOf(request.subject) }
-  const a = Math.abs(accelerationOf(fullNumbers(fit.model, fit.numbers), series.span))
-  // The acceleration is the last free number, whether the fall starts from rest or not.
-  const last = fit.model.size - 1
+  const bounces = request.law === 'bounce'
+  const pull = (numbers: Float64Array) => {
+    const full = fullNumbers(fit.model, numbers)
+    return Math.abs(bounces ? (full[2] ?? 0) / (series.span * series.span) : accelerationOf(full, series.span))
+  }
+  const a = pull(fit.numbers)
+  // The acceleration is the last free number of a fall and the third of a bounce, whether it starts from rest or not.
+  const index = bounces ? 2 : fit.model.size - 1
   const off = new Float64Array(fit.model.size)
-  off[last] = halfWidth(fit, last, kept, least)
-  const half = Math.min(a * WIDEST, Math.abs(accelerationOf(fullNumbers(fit.model, off), series.span)))
+  off[index] = halfWidth(fit, index, kept, least)
+  const half = Math.min(a * WIDEST, pull(off))
   const perMetre = path.unitsPerMetre
   const unit = perMetre === undefined ? pathAcceleration(path) : perMetre * pathShare(path)
   if (!(unit > 0) || !(a > 0)) return NOTHING

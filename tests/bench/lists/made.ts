@@ -1,6 +1,7 @@
 /** What a made list is: a check as it would be sent, and the truth about it. */
 
 export type Law = 'odd-rule' | 'topple' | 'pendulum' | 'steady'
+export type MoreLaw = 'slow-in' | 'spin' | 'swing-decay' | 'bounce'
 
 export interface TruthOf {
   kind: 'clean' | 'not-at-rest' | 'misplaced' | 'held' | 'skipped' | 'wrong-law' | 'wrong-scale' | 'backward' | 'undecided'
@@ -16,7 +17,7 @@ export interface MadeList {
   family: string
   // Written out here on purpose: the judge's own types are not imported.
   request: {
-    law: Law, fps: number, measure: 'angle' | 'distance' | 'arc', unit: string
+    law: Law | MoreLaw, fps: number, measure: 'angle' | 'distance' | 'arc', unit: string
     slop: number, tolerance: number, keys: { frame: number, reading: number }[], radius?: number, zeroAt?: number, start?: 'rest'
     subject?: { shape: 'rod', height: number } | { shape: 'bob', length: number } | { unitsPerMetre: number }
   }

@@ -2,22 +2,21 @@
 import type { Series } from '../series'
 import type { Measure, ReadingLaw } from '../types'
 import type { LawModel } from './model'
+import { bounce } from './bounce'
 import { oddRule } from './oddRule'
 import { overEdge } from './overEdge'
 import { pendulum } from './pendulum'
 import { mayStop, slowIn } from './slowIn'
 import { spin } from './spin'
 import { steady } from './steady'
+import { swingDecay } from './swingDecay'
 import { topple } from './topple'
 import { MEASURES } from './words'
 
 export { LAW_WORDS, MEASURES } from './words'
 
 export const LAWS: Record<ReadingLaw, LawModel> = {
-  'odd-rule': oddRule, topple, pendulum, steady, 'slow-in': slowIn, spin,
-  'over-edge': overEdge,
-  // To come: until then these are told as their nearest kin.
-  'swing-decay': pendulum, 'bounce': oddRule,
+  'odd-rule': oddRule, topple, pendulum, steady, 'slow-in': slowIn, spin, bounce, 'swing-decay': swingDecay, 'over-edge': overEdge,
 }
 
 /** Every law that such readings can be held against. */
@@ -38,4 +37,9 @@ export function rivalsOf(law: ReadingLaw, measure: Measure, series: Series): Rea
   const laws = baseLaws(measure).filter(other => law !== 'spin' || other !== 'steady')
   if (law !== 'slow-in' && mayStop(series)) laws.push('slow-in')
   return laws.includes(law) ? laws : [law, ...laws]
+}
+
+/** The laws with more freedom, which have their say where none of the plain ones explains a list. */
+export function freerThan(laws: readonly ReadingLaw[], measure: Measure): ReadingLaw[] {
+  return (['bounce', 'swing-decay'] as const).filter(law => MEASURES[law].includes(measure) && !laws.includes(law))
 }

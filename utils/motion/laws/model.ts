@@ -18,8 +18,15 @@ export interface LawModel {
   readonly size: number
   /** True where the line is a weighted sum of fixed columns, so that one step of least squares is the answer. */
   readonly linear: boolean
+  /**
+   * True where the line has corners: smoothing over lone bad drawings would round them off, and a few drawings from the start of a long
+   * list may hold none of them.
+   */
+  readonly kinked?: boolean
   /** Traces the line for times x (0 to 1 is the list's span; outside it the law is carried on). */
   trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace
+  /** For numbers found on the end of a list alone: the same line told from the list's first key on. */
+  fromStart?(numbers: Float64Array): Float64Array
   /** Told where the numbers are not the law's own: those that the law without any restriction counts the same line by. Linear in them for linear laws. */
   full?(numbers: Float64Array): Float64Array
   /** Keeps a search inside the range where the law means something, in place; not for linear laws. */

@@ -107,11 +107,11 @@ function columnsOf(
 }
 
 /**
- * Beginnings for the search. Integrating θ″ = ±κ² sin θ twice along the posted readings gives θ = θ₁ + ω₁x ± κ²∬sin θ, which is
- * linear in the three unknowns, and integration smooths the pencil instead of sharpening it. Further from 0 than `upTo` (radians) nothing
- * pulls.
+/**
+ * The pull along the posted readings and its integral taken twice, radians: ±∬sin θ over x. Cubic between keys: integrals of Hermite's
+ * form over one gap. Further from 0 than `upTo` (radians) nothing pulls.
  */
-export function beginSwing(series: Series, y: Float64Array, fromTop: boolean, upTo = Infinity): Float64Array[] {
+export function pullTwice(series: Series, y: Float64Array, fromTop: boolean, upTo = Infinity): { angle: Float64Array, twice: Float64Array } {
   const { n, x, perRadian, zero } = series
   const angle = y.map(reading => reading / perRadian + zero)
   const pull = angle.map(a => (Math.abs(a) > upTo ? 0 : fromTop ? Math.sin(a) : -Math.sin(a)))
@@ -124,7 +124,6 @@ export function beginSwing(series: Series, y: Float64Array, fromTop: boolean, up
   const twice = new Float64Array(n)
   let once = 0
   for (let i = 1; i < n; i++) {
-    // Cubic between keys: integrals of Hermite's form over one gap.
     const h = (x[i] as number) - (x[i - 1] as number)
     const p0 = pull[i - 1] as number
     const p1 = pull[i] as number
@@ -133,24 +132,36 @@ export function beginSwing(series: Series, y: Float64Array, fromTop: boolean, up
     twice[i] = (twice[i - 1] as number) + once * h + h * h * (0.35 * p0 + 0.15 * p1) + h * h * h * (s0 / 20 - s1 / 30)
     once += h / 2 * (p0 + p1) + h * h / 12 * (s0 - s1)
   }
-  const a = new Float64Array(9)
-  const b = new Float64Array(3)
-  for (let i = 0; i < n; i++) {
-    const row = [twice[i] as number, 1, x[i] as number]
-    for (let p = 0; p < 3; p++) {
-      b[p] = (b[p] as number) + (row[p] as number) * (angle[i] as number)
-      for (let q = 0; q < 3; q++) a[3 * p + q] = (a[3 * p + q] as number) + (row[p] as number) * (row[q] as number)
-    }
-  }
-  const found = solve3(a, b, 3)
-  const starts: Float64Array[] = []
+  return { angle, twice }
+}
+
+/** Least squares of `angle` on columns (at most six); null where they don't settle it. */
+export function weighted(columns: readonly Float64Array[], angle: Float64Array): Float64Array | null {
+  const size = columns.length
+  const a = new Float64Array(size * size)
+  const b = new Float64Array(size)
+  columns.forEach((cp, p) => {
+    for (let i = 0; i < angle.length; i++) b[p] = (b[p] as number) + (cp[i] as number) * (angle[i] as number)
+    columns.forEach((cq, q) => {
+      for (let i = 0; i < angle.length; i++) a[size * p + q] = (a[size * p + q] as number) + (cp[i] as number) * (cq[i] as number)
+    })
+  })
+  return solve3(a, b, size)
+}
+
+/**
+ * Beginnings for the search. Integrating θ″ = ±κ² sin θ twice along the posted readings gives θ = θ₁ + ω₁x ± κ²∬sin θ, which is
+ * linear in the three unknowns, and integration smooths the pencil instead of sharpening it. Further from 0 than `upTo` (radians) nothing
+ * pulls.
+ */
+export function beginSwing(series: Series, y: Float64Array, fromTop: boolean, upTo = Infinity): Float64Array[] {
+  const { n, x } = series
+  const { angle, twice } = pullTwice(series, y, fromTop, upTo)
+  const found = weighted([twice, new Float64Array(n).fill(1), x], angle)
   if (found && (found[0] as number) > 0.01) {
     const log = Math.min(MOST_LOG, Math.max(LEAST_LOG, 0.5 * Math.log(found[0] as number)))
-    starts.push(Float64Array.from([log, found[1] as number, found[2] as number]))
-  } else {
-    const firstAngle = angle[0] as number
-    const travel = (angle[n - 1] as number) - firstAngle
-    starts.push(Float64Array.from([Math.log(0.3), firstAngle, travel]))
+    return [Float64Array.of(log, found[1] as number, found[2] as number)]
   }
-  return starts
+  const firstAngle = angle[0] as number
+  return [Float64Array.of(Math.log(0.3), firstAngle, (angle[n - 1] as number) - firstAngle)]
 }
