@@ -18,18 +18,21 @@ const FULL = 2 * Math.PI
 function nomeOf(amplitude: number): { q: number, slope: number } {
   const root = Math.sqrt(Math.cos(amplitude / 2))
   // 1 − √k′ without cancelling: 1 − k′ = 2 sin²(A/4).
-  const eps = (Math.sin(amplitude / 4) / (1 + root)) ** 2
-  const e4 = eps ** 4
+  const part = Math.sin(amplitude / 4) / (1 + root)
+  const eps = part * part
+  const e2 = eps * eps
+  const e4 = e2 * e2
   const q = eps * (1 + e4 * (2 + e4 * (15 + e4 * (150 + e4 * 1707))))
   const byEps = 1 + e4 * (10 + e4 * (135 + e4 * (1950 + e4 * 29019)))
-  const slope = byEps * Math.sin(amplitude / 2) / (4 * root * (1 + root) ** 2)
+  const slope = byEps * Math.sin(amplitude / 2) / (4 * root * (1 + root) * (1 + root))
   return { q, slope }
 }
 
 /** 4K, the full swing's length in τ = kt. */
 function swingOf(q: number): number {
-  const q4 = q ** 4
-  return FULL * (1 + 2 * q + 2 * q4 + 2 * q * q4 * q4 + 2 * q4 ** 4) ** 2
+  const q4 = q * q * q * q
+  const theta = 1 + 2 * (q + q4 * (1 + q * q4 + q4 * q4 * q4))
+  return FULL * theta * theta
 }
 
 /** ∫₀ᴬ (4K − 2π)/a da on an even grid, with its slope: what a swing from A loses on the small one by the time it has died. */
@@ -66,6 +69,9 @@ function lagOf(amplitude: number): number {
   return v0 + u * (s0 + u * (3 * (v1 - v0) - 2 * s0 - s1 + u * (2 * (v0 - v1) + s0 + s1)))
 }
 
+const NO_NOME = { q: 0, slope: 0 }
+let started = { amplitude: NaN, lag: 0, swing: FULL }
+
 /** One moment of a dying swing; angles in radians, swings counted whole. */
 export interface Moment {
   angle: number
@@ -77,6 +83,8 @@ export interface Moment {
   byDecrement: number
   /** Full swings since the start. */
   swings: number
+  /** τ of a full swing of the amplitude it now has. */
+  swing: number
 }
 
 /**
@@ -84,15 +92,18 @@ export interface Moment {
  * start; `decrement` δ > 0: the amplitude falls by e^(−δ) per full swing; `guess`: swings done by then, or thereabouts.
  */
 export function dyingSwing(tau: number, amplitude: number, phase: number, decrement: number, guess: number, moment: Moment): void {
-  const lagAtStart = lagOf(amplitude)
-  const swing0 = swingOf(nomeOf(Math.min(WIDEST_SWING, amplitude)).q)
+  // A line is traced drawing by drawing from the same start.
+  if (started.amplitude !== amplitude) {
+    started = { amplitude, lag: lagOf(amplitude), swing: fullSwing(Math.min(WIDEST_SWING, amplitude)) }
+  }
+  const { lag: lagAtStart, swing: swing0 } = started
   // τ = 2πN + (lag(A₀) − lag(A₀e^(−δN)))/δ has one answer N: the right side grows by 4K(A) per swing.
   let swings = guess
   let now = amplitude
   let clamped = now
   let swing = swing0
   let behind = 0
-  let nome = nomeOf(Math.min(WIDEST_SWING, amplitude))
+  let nome = NO_NOME
   for (let round = 0; round < 30; round++) {
     now = amplitude * Math.exp(-decrement * swings)
     clamped = Math.min(WIDEST_SWING, now)
@@ -134,6 +145,7 @@ export function dyingSwing(tau: number, amplitude: number, phase: number, decrem
   const swingsByDecrement = (behind - (swing - FULL) * swings) / (decrement * swing)
   moment.angle = 8 * angle
   moment.swings = swings
+  moment.swing = swing
   moment.rate = (bySwings - byNow * decrement * now) / swing
   moment.byPhase = bySwings
   moment.byAmplitude = bySwings * swingsByStart + byNow * now * (1 / amplitude - decrement * swingsByStart)

@@ -46,7 +46,7 @@ export interface PlannedList {
   frames: number
 }
 
-const moment: Moment = { angle: 0, rate: 0, byAmplitude: 0, byPhase: 0, byDecrement: 0, swings: 0 }
+const moment: Moment = { angle: 0, rate: 0, byAmplitude: 0, byPhase: 0, byDecrement: 0, swings: 0, swing: 1 }
 
 /** No plan has more keys than a list may have. */
 const MOST_KEYS = 2000

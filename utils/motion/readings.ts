@@ -97,7 +97,7 @@ function consider(request: ReadingCheck, series: Series, plain: Plain, rivals: r
   let choice = weigh(series, law, rivals, told, care)
   if (!explained(series, choice, care)) {
     const known = [law, ...rivals.map(rival => rival.law)]
-    choice = weigh(series, law, [...rivals, ...plainRivals(series, law, freerThan(known, request.measure), care)], told, care)
+    choice = weigh(series, law, [...rivals, ...plainRivals(series, law, freerThan(known, request.measure, series, request.slop), care)], told, care)
   }
   const { story } = choice.claimed
   const scale = scaleOf(request, series, story.fit, series.n - story.out.length, care.least)

@@ -64,7 +64,7 @@ function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number
   const { subject } = request
   const claimed = subject && isBody(subject) ? subject : null
   // With no body named, a topple is read as a rod on its foot and a swing as a bob on a cord: the plainest of either.
-  const body: BodySubject = claimed ?? (request.law === 'pendulum' ? { shape: 'bob', length: 1 } : { shape: 'rod', height: 1 })
+  const body: BodySubject = claimed ?? (request.law === 'pendulum' || request.law === 'swing-decay' ? { shape: 'bob', length: 1 } : { shape: 'rod', height: 1 })
   const gravity = gravityOf(subject)
   const k = Math.exp(fit.numbers[0] as number) / series.span
   const value = sizeForLength(body, gravity / (k * k))

@@ -39,7 +39,22 @@ export function rivalsOf(law: ReadingLaw, measure: Measure, series: Series): Rea
   return laws.includes(law) ? laws : [law, ...laws]
 }
 
-/** The laws with more freedom, which have their say where none of the plain ones explains a list. */
-export function freerThan(laws: readonly ReadingLaw[], measure: Measure): ReadingLaw[] {
+/**
+ * The laws with more freedom, which have their say where none of the plain ones explains a list. Both turn on the way, so a list that
+ * only ever goes one way, save for the slop, is spared them.
+ */
+export function freerThan(laws: readonly ReadingLaw[], measure: Measure, series: Series, slop: number): ReadingLaw[] {
+  if (!turnsBack(series.y, 2 * slop)) return []
   return (['bounce', 'swing-decay'] as const).filter(law => MEASURES[law].includes(measure) && !laws.includes(law))
+}
+
+function turnsBack(y: Float64Array, room: number): boolean {
+  let [low, high, risen, fallen] = [Infinity, -Infinity, false, false]
+  for (const reading of y) {
+    low = Math.min(low, reading)
+    high = Math.max(high, reading)
+    risen ||= reading - low > room
+    fallen ||= high - reading > room
+  }
+  return risen && fallen
 }

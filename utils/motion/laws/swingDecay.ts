@@ -11,7 +11,7 @@ export const LEAST_DECREMENT = 1e-5
 const MOST_DECREMENT = Math.LN2
 /** Radians. */
 const LEAST_AMPLITUDE = 1e-3
-const moment: Moment = { angle: 0, rate: 0, byAmplitude: 0, byPhase: 0, byDecrement: 0, swings: 0 }
+const moment: Moment = { angle: 0, rate: 0, byAmplitude: 0, byPhase: 0, byDecrement: 0, swings: 0, swing: 1 }
 
 /**
  * Numbers: ln κ (κ = k·span); amplitude at the first key, radians, negative where the phase counts from the other side; phase there,
@@ -35,13 +35,14 @@ export const swingDecay: LawModel = {
     const byAmplitude = new Float64Array(n)
     const byPhase = new Float64Array(n)
     const byDecrement = new Float64Array(n)
-    const swing = fullSwing(amplitude)
+    let swing = fullSwing(amplitude)
     let [tauBefore, swingsBefore] = [0, 0]
     for (let i = 0; i < n; i++) {
       const tau = (x[i] as number) * kappa
       dyingSwing(tau, amplitude, phase, decrement, swingsBefore + (tau - tauBefore) / swing, moment)
       tauBefore = tau
       swingsBefore = moment.swings
+      swing = moment.swing
       value[i] = per * moment.angle - zero * perRadian
       rate[i] = per * kappa * moment.rate
       byLog[i] = per * tau * moment.rate
