@@ -1,15 +1,19 @@
 import { gravityNames } from '~/utils/bench/gravities'
-import { benchLaws, exposures, freshSetup, MOST_BESIDE, ranges, within } from '~/utils/bench/setup'
+import { benchLaws, hasBody, hasScale, hasSize, weighs } from '~/utils/bench/laws'
+import type { BenchLaw } from '~/utils/bench/laws'
+import { exposures, freshSetup, MOST_BESIDE, ranges, within } from '~/utils/bench/setup'
 import type { BenchSetup, NumberField } from '~/utils/bench/setup'
-import { shapeFields, shapesFor, turns } from '~/utils/claiming/form'
+import { shapeFields, shapesFor } from '~/utils/claiming/form'
 import { rolls } from '~/utils/contracts/check'
 
 /** The bench in the address bar: plain words and numbers, so that it can be read, sent and typed. */
 
 type Query = Record<string, string | null | undefined | (string | null)[]>
 
-/** The names in the address, where they are shorter than the field's own. */
-const NAMES: Partial<Record<NumberField, string>> = { ownGravity: 'g' }
+/** The names in the address, where the page calls a number by fewer letters than the code does. No law has two of one name. */
+const NAMES: Partial<Record<NumberField, string>> = {
+  ownGravity: 'g', startSpeed: 'speed', throwSpeed: 'speed', stopAfter: 'seconds', throwAngle: 'angle',
+}
 const nameOf = (field: NumberField) => NAMES[field] ?? field
 
 const textIn = (query: Query, name: string) => {
@@ -20,19 +24,40 @@ function oneOf<T extends string>(all: readonly T[], text: string, usual: T): T {
   return all.find((each) => each === text) ?? usual
 }
 function numberIn(text: string, field: NumberField): number | null {
-  if (!/^\d{1,9}(\.\d{1,12})?$/.test(text)) return null
+  if (!/^-?\d{1,9}(\.\d{1,12})?$/.test(text)) return null
   const value = Number(text)
   return within(field, value) ? value : null
 }
 
-/** Numbers that a setup of this law and body is made of: the others are not worth a place in the address. */
-function fieldsOf(setup: BenchSetup): NumberField[] {
-  const gravity: NumberField[] = setup.gravity === 'own' ? ['ownGravity'] : []
-  if (setup.law === 'topple') return [...shapeFields[setup.body], 'lean', ...gravity, 'fps']
-  if (setup.law === 'pendulum') return [...shapeFields[setup.body], 'amplitude', 'swings', ...gravity, 'fps']
-  if (setup.law === 'odd-rule') return ['way', 'slope', 'scale', ...gravity, 'fps']
-  return ['way', 'speed', 'scale', 'fps']
+/** What a law's motion is told by, besides its body, its scale and gravity. */
+const own: Record<BenchLaw, readonly NumberField[]> = {
+  'odd-rule': ['way', 'slope'],
+  'slow-in': ['way'],
+  steady: ['way', 'speed'],
+  bounce: ['way', 'back', 'bounces'],
+  flight: ['throwSpeed', 'throwAngle', 'landing'],
+  topple: ['lean'],
+  'over-edge': ['lean', 'brink'],
+  pendulum: ['amplitude', 'swings'],
+  'swing-decay': ['amplitude', 'swings', 'lost'],
+  spin: ['rate', 'turns'],
 }
+
+/** Numbers that a setup of this law and body is made of: the others are not worth a place in the address. */
+export function fieldsOf(setup: BenchSetup): NumberField[] {
+  const { law } = setup
+  return [
+    ...(hasBody(law) ? shapeFields[setup.body] : []),
+    ...own[law],
+    ...(law === 'slow-in' ? [setup.by === 'seconds' ? 'stopAfter' : 'startSpeed'] as const : []),
+    ...(hasScale(law) ? ['scale'] as const : []),
+    ...(weighs(law) && setup.gravity === 'own' ? ['ownGravity'] as const : []),
+    'fps',
+  ]
+}
+
+/** What the motion is called by is always said, so that an address can be understood without the page. */
+const hushed: readonly NumberField[] = ['scale', 'ownGravity', 'fps', 'slope', 'swings', 'speed']
 
 /** Reads an address. Whatever can't be read, or lies out of range, is as on a fresh bench. */
 export function readBench(query: Query): BenchSetup {
@@ -42,15 +67,16 @@ export function readBench(query: Query): BenchSetup {
   const setup: BenchSetup = {
     ...fresh,
     law,
-    body: turns(law) ? oneOf(shapes, textIn(query, 'body'), shapes[0]!) : fresh.body,
+    body: hasBody(law) ? oneOf(shapes, textIn(query, 'body'), shapes[0]!) : fresh.body,
     roll: law === 'odd-rule' ? oneOf(rolls, textIn(query, 'roll'), fresh.roll) : fresh.roll,
-    gravity: law === 'steady' ? fresh.gravity : oneOf(gravityNames, textIn(query, 'gravity'), fresh.gravity),
+    by: law === 'slow-in' && textIn(query, 'seconds') === '' && textIn(query, 'speed') !== '' ? 'speed' : fresh.by,
+    gravity: weighs(law) ? oneOf(gravityNames, textIn(query, 'gravity'), fresh.gravity) : fresh.gravity,
     on: exposures.find((each) => String(each) === textIn(query, 'on')) ?? fresh.on,
     have: numberIn(textIn(query, 'have'), 'have'),
   }
   for (const field of fieldsOf(setup)) setup[field as 'lean'] = numberIn(textIn(query, nameOf(field)), field) ?? ranges[field].usual
   const sizes = textIn(query, 'beside').split(/[\s,]+/).map((text) => numberIn(text, 'height'))
-  setup.beside = [...new Set(sizes.filter((size) => size !== null))].slice(0, MOST_BESIDE)
+  if (hasSize(law)) setup.beside = [...new Set(sizes.filter((size) => size !== null))].slice(0, MOST_BESIDE)
   return setup
 }
 
@@ -58,17 +84,15 @@ export function readBench(query: Query): BenchSetup {
 export function writeBench(setup: BenchSetup): Record<string, string> {
   const fresh = freshSetup()
   const query: Record<string, string> = { law: setup.law }
-  if (turns(setup.law)) query.body = setup.body
+  if (hasBody(setup.law)) query.body = setup.body
   for (const field of fieldsOf(setup)) {
-    // What the size is called by is always said, so that an address can be understood without the page.
-    const telling = shapeFields[setup.body].includes(field as never) || field === 'way' || field === 'lean' || field === 'amplitude'
-    if (telling || setup[field] !== fresh[field]) query[nameOf(field)] = plain(setup[field]!)
+    if (!hushed.includes(field) || setup[field] !== fresh[field]) query[nameOf(field)] = plain(setup[field]!)
   }
   if (setup.law === 'odd-rule' && setup.roll !== fresh.roll) query.roll = setup.roll
-  if (setup.law !== 'steady' && setup.gravity !== fresh.gravity) query.gravity = setup.gravity
+  if (weighs(setup.law) && setup.gravity !== fresh.gravity) query.gravity = setup.gravity
   if (setup.on !== fresh.on) query.on = String(setup.on)
   if (setup.have !== null) query.have = plain(setup.have)
-  if (setup.beside.length > 0) query.beside = setup.beside.map(plain).join(',')
+  if (hasSize(setup.law) && setup.beside.length > 0) query.beside = setup.beside.map(plain).join(',')
   return query
 }
 

@@ -1,41 +1,16 @@
-import { atSize, ownGravityOf, sizeIn, subjectIn } from '~/utils/bench/setup'
+import { courseIn, momentsIn } from '~/utils/bench/course'
+import type { Course, Moment } from '~/utils/bench/course'
+import { hasBody, measureFor } from '~/utils/bench/laws'
+import { pathIn } from '~/utils/bench/plans'
+import { atSize, lastingFor, sizeIn } from '~/utils/bench/size'
+import { subjectIn } from '~/utils/bench/setup'
 import type { BenchSetup } from '~/utils/bench/setup'
-import { turns } from '~/utils/claiming/form'
 import type { Claim } from '~/utils/contracts/production'
-import { roundFigure } from '~/utils/drawing/words'
-import { framesFor, plannedList, secondsFor, uprightLean } from '~/utils/motion'
-import type { JudgedKey, Key, PathSubject, Plan } from '~/utils/motion'
+import type { JudgedKey, Key, PointKey } from '~/utils/motion'
 
 /** From what lies on the bench to figures and drawings. Metres, degrees, drawing units; frames count from 1. */
 
-/** A body lies flat where its own side meets the ground: sooner than 90° past balance for what stands broad. */
-export const flatAngle = (setup: BenchSetup) => 90 - uprightLean(subjectIn(setup))
-
-const pathIn = (setup: BenchSetup): PathSubject & { unitsPerMetre: number } => ({
-  unitsPerMetre: setup.scale, slope: setup.slope, roll: setup.roll, ...ownGravityOf(setup),
-})
-
-/** The motion sheet's plan of a setup. */
-export function planIn(setup: BenchSetup): Plan {
-  const paper = { fps: setup.fps, exposure: setup.on }
-  switch (setup.law) {
-    case 'topple': return { ...paper, law: 'topple', subject: subjectIn(setup), lean: setup.lean, to: flatAngle(setup) }
-    case 'pendulum': return { ...paper, law: 'pendulum', subject: subjectIn(setup), amplitude: setup.amplitude, swings: setup.swings }
-    case 'odd-rule': return { ...paper, law: 'odd-rule', subject: pathIn(setup), travel: setup.way * setup.scale }
-    case 'steady': return { ...paper, law: 'steady', travel: setup.way * setup.scale, seconds: setup.way / setup.speed }
-  }
-}
-
-/** What keeps a setup from moving at all, in one sentence; null where nothing does. */
-export function problemIn(setup: BenchSetup): string | null {
-  if (setup.law !== 'topple') return null
-  const flat = flatAngle(setup)
-  return setup.lean < flat ? null : `This body lies flat ${roundFigure(flat, 3)}° past balance: lean it less than that.`
-}
-
 export interface Outcome {
-  /** Metres. */
-  size: number
   seconds: number
   /** Not rounded: where the motion ends between two drawings. */
   frames: number
@@ -45,75 +20,102 @@ export interface Outcome {
   drawings: number
 }
 
-/** How long the planned motion takes, at its own size or another. */
-export function outcomeIn(setup: BenchSetup, size = sizeIn(setup)): Outcome {
-  const plan = planIn(atSize(setup, size))
-  const seconds = secondsFor(plan)
-  const frames = seconds * setup.fps
-  return { size, seconds, frames, wholeFrames: framesFor(plan), drawings: Math.floor(frames / setup.on + 1e-9) + 1 }
+export function outcomeOf(setup: BenchSetup, { seconds, frames }: Pick<Course, 'seconds' | 'frames'>): Outcome {
+  const exposures = frames / setup.on
+  // What stays where it stopped is drawn there once, even where the stop falls between two drawings.
+  const drawings = (setup.law === 'slow-in' ? Math.ceil(exposures - 1e-9) : Math.floor(exposures + 1e-9)) + 1
+  return { seconds, frames, wholeFrames: Math.ceil(frames - 1e-9), drawings }
 }
 
-/** The planned size and those beside it, smallest first. */
-export const comparedIn = (setup: BenchSetup): Outcome[] =>
-  [...new Set([sizeIn(setup), ...setup.beside])].sort((a, b) => a - b).map((size) => outcomeIn(setup, size))
+/** How long the planned motion takes. */
+export const outcomeIn = (setup: BenchSetup): Outcome => outcomeOf(setup, courseIn(setup))
 
-/** The size in metres as which the same motion reads when it takes `frames`. Sizes go by time squared; at a given speed, ways go by time. */
-export function sizeForFrames(setup: BenchSetup, frames: number): number {
-  const need = outcomeIn(setup)
-  const share = frames / need.frames
-  return need.size * (setup.law === 'steady' ? share : share ** 2)
+/** The planned thing, or the same at a size beside it. */
+export interface Compared { setup: BenchSetup; planned: boolean }
+
+/** The planned thing among its sizes, smallest first. */
+export function comparedIn(setup: BenchSetup): Compared[] {
+  const size = sizeIn(setup)
+  if (size === null) return [{ setup, planned: true }]
+  const others = setup.beside.filter((other) => other !== size)
+  return [size, ...others].sort((a, b) => a - b).map((each) => ({ setup: atSize(setup, each), planned: each === size }))
 }
+
+/** The same motion over `frames`: at the size, or the rate, that it then reads as. */
+export const setupForFrames = (setup: BenchSetup, frames: number): BenchSetup => lastingFor(setup, frames / courseIn(setup).frames)
 
 /** What readings are rounded to: a tenth, finer where the whole list spans little. */
 export function pencilStep(span: number): number {
   return span > 0 ? Math.min(0.1, 10 ** Math.floor(Math.log10(span / 200))) : 0.1
 }
-const spanOf = (setup: BenchSetup) => (turns(setup.law) ? 90 : setup.way * setup.scale)
+/** toFixed drops the stray last bits of a multiple of 0.1. */
+const written = (value: number, step: number) => Number((Math.round(value / step) * step).toFixed(9))
 
-/** The spacing list: rounded readings on the exposure's frames, from frame 1. At most 2,000 drawings. */
-export const listIn = (setup: BenchSetup): Key[] => plannedList({ ...planIn(setup), step: pencilStep(spanOf(setup)) }).keys
+const spread = (values: readonly number[]) => Math.max(...values) - Math.min(...values)
+const readingStep = (setup: BenchSetup) => (measureFor(setup.law) === 'angle' ? 0.1 : pencilStep(setup.way * setup.scale))
+const pointStep = (points: readonly PointKey[]) => pencilStep(Math.max(spread(points.map(({ x }) => x)), spread(points.map(({ y }) => y))))
 
-/** Unrounded readings, one per drawing, for bodies that move; where it has ended, `end` is what it rests at. */
-export function motionIn(setup: BenchSetup, size: number): { readings: number[]; end: number; frames: number } {
-  const plan = planIn(atSize(setup, size))
-  const { keys, frames } = plannedList(plan)
-  const readings = keys.map(({ reading }) => reading)
-  const end = plan.law === 'topple' ? plan.to! : plan.law === 'pendulum' ? swungTo(setup) : 'travel' in plan && readings.length > 0 ? plan.travel : 0
-  return { readings, end, frames }
+/** The spacing list of readings: rounded, on the exposure's frames, from frame 1. At most 2,000 drawings. */
+export function listIn(setup: BenchSetup, course = courseIn(setup)): Key[] {
+  const step = course.flight ? pointStep(course.points!) : readingStep(setup)
+  return course.keys.map(({ frame, reading }) => ({ frame, reading: written(reading, step) }))
 }
-/** Where the last swing is when its time is up: a list of two drawings, the first and the one at the very end. */
-function swungTo(setup: BenchSetup): number {
-  const plan = planIn(setup)
-  return plannedList({ ...plan, exposure: secondsFor(plan) * setup.fps }).keys.at(-1)?.reading ?? setup.amplitude
+
+/** The spacing list of points, rounded; null where the law has none. */
+export function pointListIn(setup: BenchSetup, course = courseIn(setup)): PointKey[] | null {
+  if (!course.points) return null
+  const step = pointStep(course.points)
+  return course.points.map(({ frame, x, y }) => ({ frame, x: written(x, step), y: written(y, step) }))
+}
+
+/** What moves on the stage: one moment per drawing, and where it rests when its frames are over. */
+export function motionIn(setup: BenchSetup): { moments: Moment[]; end: Moment; frames: number } {
+  const course = courseIn(setup)
+  return { moments: momentsIn(setup, course), end: course.end, frames: course.frames }
 }
 
 /** The claim that the take drawings draw by. */
 export function claimIn(setup: BenchSetup): Claim {
-  const angle = turns(setup.law)
+  const measure = measureFor(setup.law)
+  const subject = setup.law === 'spin' ? undefined : hasBody(setup.law) ? subjectIn(setup) : pathIn(setup)
   return {
-    law: setup.law,
-    measure: angle ? 'angle' : 'distance',
-    unit: angle ? 'deg' : 'px',
-    slop: 0.3,
-    tolerance: 0.1,
-    subject: angle ? subjectIn(setup) : pathIn(setup),
+    law: setup.law, measure, unit: measure === 'angle' ? 'deg' : 'px', slop: 0.3, tolerance: 0.1,
+    ...(subject ? { subject } : {}), ...(setup.law === 'flight' ? { path: 'parabola' } : {}),
   }
+}
+
+/** What the timing chart spaces its ticks by: the readings; of a throw the way along its path, drawing by drawing. */
+export function chartKeysIn(course: Course): Key[] {
+  if (!course.flight) return course.keys
+  let way = 0
+  return course.points!.map(({ frame, x, y }, i) => {
+    const before = course.points![i - 1]
+    if (before) way += Math.hypot(x - before.x, y - before.y)
+    return { frame, reading: way }
+  })
 }
 
 /** Six decimals: the same text on every machine, whatever the last bits of a sine were. */
 const settle = (value: number) => Number(value.toFixed(6))
 
 /** The list with the exact law beside the rounded readings, in the shape that the drawings take. */
-export function planKeysIn(setup: BenchSetup): JudgedKey[] {
-  const exact = plannedList(planIn(setup)).keys
-  const rounded = listIn(setup)
+export function planKeysIn(setup: BenchSetup, course = courseIn(setup)): JudgedKey[] {
+  const rounded = listIn(setup, course)
+  const points = pointListIn(setup, course)
   return rounded.map(({ frame, reading }, i) => {
-    const law = settle(exact[i]!.reading)
-    const [next, nextLaw] = [rounded[i + 1]?.reading, exact[i + 1]?.reading]
+    const law = settle(course.keys[i]!.reading)
+    const [next, nextLaw] = [rounded[i + 1]?.reading, course.keys[i + 1]?.reading]
     return {
       frame, reading, law, offset: settle(reading - law), offsetFrames: null, allowance: null, breaks: false,
       gap: next === undefined ? null : settle(next - reading),
       lawGap: nextLaw === undefined ? null : settle(nextLaw - law),
+      ...(points ? pointedOut(points[i]!, course, i) : {}),
     }
   })
+}
+
+function pointedOut({ x, y }: PointKey, course: Course, i: number): Partial<JudgedKey> {
+  const exact = course.points![i]!
+  const point = { point: { x, y }, lawPoint: { x: settle(exact.x), y: settle(exact.y) } }
+  return course.flight ? { ...point, sideways: { reading: x, law: settle(exact.x), offset: settle(x - exact.x), breaks: false } } : point
 }
