@@ -45,11 +45,9 @@ export interface Touch {
   drop: number
   /** The ground is met while the body still turns on the brink. */
   tooSoon: boolean
-  /** The brink holds it at the start. */
-  held: boolean
 }
 
-const LOOKS = 400
+const LOOKS = 160
 
 /** When a body let go at rest at `lean` degrees on a brink `height` metres above ground first touches it: looked for along the fall, then halved down to it. */
 export function touchesAfter(subject: BodySubject, lean: number, height: number): Touch {
@@ -70,10 +68,10 @@ export function touchesAfter(subject: BodySubject, lean: number, height: number)
       break
     }
   }
-  for (let i = 0; i < 60; i++) {
+  for (let i = 0; i < 50; i++) {
     const middle = (low + high) / 2
     if (above(middle) > 0) low = middle
     else high = middle
   }
-  return { seconds: high, drop: -motion.at(high).centre.y, tooSoon: above(leaves) <= 0, held: leaves > 0 }
+  return { seconds: high, drop: -motion.at(high).centre.y, tooSoon: above(leaves) <= 0 }
 }

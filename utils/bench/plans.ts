@@ -60,7 +60,6 @@ export function problemIn(setup: BenchSetup): string | null {
   }
   if (setup.law === 'flight' && setup.landing === 0 && setup.throwAngle <= 0) return 'Thrown level or downward, it needs a drop to land in.'
   if (setup.law !== 'over-edge') return null
-  const touch = touchesAfter(subjectIn(setup), setup.lean, setup.brink)
-  if (touch.tooSoon) return 'The ground is so near that the body lies on it before it lets go of the brink: put the brink higher.'
-  return touch.held ? null : 'Leaned this far, nothing holds it on the brink: lean it less.'
+  const { tooSoon } = touchesAfter(subjectIn(setup), setup.lean, setup.brink)
+  return tooSoon ? 'The ground is so near that the body lies on it before it lets go of the brink: put the brink higher.' : null
 }

@@ -1,12 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import { chartLine, stretches } from '~/utils/bench/chart'
-import { listIn, motionIn } from '~/utils/bench/planning'
+import { comparedIn, listIn, motionIn } from '~/utils/bench/planning'
 import { freshSetup } from '~/utils/bench/setup'
 import type { BenchSetup } from '~/utils/bench/setup'
 import { drawStage } from '~/utils/bench/stage'
 import { overlaps } from '~/utils/drawing/labels'
 
 const bench = (part: Partial<BenchSetup>): BenchSetup => ({ ...freshSetup(), ...part })
+/** Where the lines of a path begin and bend, across. */
+const acrossIn = (path: string) => [...path.matchAll(/[ML](-?\d+(?:\.\d+)?) /g)].map(([, x]) => Number(x))
 const numbersIn = (path: string) => path.match(/-?\d+(\.\d+)?/g)!.map(Number)
 
 describe('the timing chart', () => {
@@ -54,10 +56,19 @@ describe('the stage', () => {
     ['falls', bench({ law: 'odd-rule', way: 1 })],
     ['ramps', bench({ law: 'odd-rule', way: 1, slope: 15, roll: 'ball' })],
     ['ways', bench({ law: 'steady', way: 1 })],
+    ['stops', bench({ law: 'slow-in', way: 1 })],
+    ['bounces', bench({ law: 'bounce', way: 1 })],
+    ['throws', bench({ law: 'flight' })],
+    ['throws down a cliff', bench({ law: 'flight', throwAngle: -60, landing: 30 })],
+    ['dying swings', bench({ law: 'swing-decay', body: 'hung-rod', length: 1, amplitude: 40, swings: 3 })],
+    ['rods over the edge', bench({ law: 'over-edge', height: 1 })],
+    ['blocks over the edge', bench({ law: 'over-edge', body: 'block', width: 0.6, height: 1, brink: 12 })],
+    ['spins', bench({ law: 'spin' })],
   ]
   describe.each(setups)('%s', (_, setup) => {
     it.each([260, 700, 1100])('stand inside %s px, with words that do not touch', (width) => {
-      const stage = drawStage(setup, [1, 4, 16, 64], width)
+      const several = { ...setup, beside: [4, 16, 64] }
+      const stage = drawStage(several, width)
       const boxes = stage.bodies.map(({ label, labelX, labelY }) => ({ x: labelX - label.length * 3.8, y: labelY - 10, width: label.length * 7.6, height: 13 }))
       boxes.forEach((box, i) => {
         expect(box.x).toBeGreaterThanOrEqual(-1)
@@ -65,14 +76,18 @@ describe('the stage', () => {
         for (const other of boxes.slice(i + 1)) expect(overlaps(box, other, 0)).toBe(false)
       })
       for (const [i, body] of stage.bodies.entries()) {
-        const { readings, end } = motionIn(setup, [1, 4, 16, 64][i]!)
-        for (const reading of [...readings, end]) expect(numbersIn(body.pose(reading)).every(Number.isFinite)).toBe(true)
+        const { moments, end } = motionIn(comparedIn(several)[i]!.setup)
+        for (const moment of [...moments, end]) {
+          expect(body.pose(moment)).not.toContain('NaN')
+          for (const x of acrossIn(body.pose(moment))) expect(x >= -1 && x <= width + 1).toBe(true)
+        }
+        expect(body.path + body.scene).not.toContain('NaN')
       }
     })
   })
 
   it('is to one scale: the second fall is four times as long on paper', () => {
-    const paths = drawStage(bench({ law: 'odd-rule', way: 1 }), [1, 4], 700).bodies.map(({ path }) => numbersIn(path))
+    const paths = drawStage(bench({ law: 'odd-rule', way: 1, beside: [4] }), 700).bodies.map(({ path }) => numbersIn(path))
     const long = ([, from, , to]: number[]) => to! - from!
     expect(long(paths[1]!) / long(paths[0]!)).toBeCloseTo(4, 1)
   })

@@ -1,11 +1,14 @@
 import { describe, expect, it } from 'vitest'
-import { comparedIn, claimIn, flatAngle, listIn, motionIn, outcomeIn, pencilStep, planKeysIn, problemIn, sizeForFrames } from '~/utils/bench/planning'
-import { atSize, freshSetup, sizeIn } from '~/utils/bench/setup'
+import { comparedIn, claimIn, listIn, motionIn, outcomeIn, pencilStep, planKeysIn, setupForFrames } from '~/utils/bench/planning'
+import { flatAngle, problemIn } from '~/utils/bench/plans'
+import { atSize, sizeIn } from '~/utils/bench/size'
+import { freshSetup } from '~/utils/bench/setup'
 import type { BenchSetup } from '~/utils/bench/setup'
 import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
 
 const bench = (part: Partial<BenchSetup>): BenchSetup => ({ ...freshSetup(), ...part })
+const outcomeAt = (setup: BenchSetup, size: number) => outcomeIn(atSize(setup, size))
 
 describe('size → frames', () => {
   // The table of the motion sheet: a rod of 1 m, standard gravity, from rest at a lean until it lies.
@@ -28,19 +31,30 @@ describe('size → frames', () => {
     expect(outcomeIn(bench({ height: 1, lean: 1, on: 3 })).drawings).toBe(11)
   })
 
+  // Whatever gravity moves scales by time squared (dimensions alone); so does what brakes as hard.
   it.each([
     bench({ height: 1 }),
     bench({ body: 'block', width: 0.4, height: 1.2 }),
     bench({ body: 'cylinder', radius: 0.2, height: 1.2 }),
     bench({ body: 'pole' }),
     bench({ law: 'pendulum', body: 'bob', amplitude: 70 }),
+    bench({ law: 'swing-decay', body: 'hung-rod', amplitude: 40, swings: 2 }),
+    bench({ law: 'over-edge', height: 1.2 }),
+    bench({ law: 'over-edge', body: 'block', width: 0.4, height: 1.2 }),
     bench({ law: 'odd-rule', way: 1, slope: 20, roll: 'ball' }),
+    bench({ law: 'bounce', way: 1 }),
+    bench({ law: 'flight' }),
+    bench({ law: 'slow-in', way: 1 }),
   ])('four times the size, twice the frames (%#)', (setup) => {
-    const size = sizeIn(setup)
-    expect(outcomeIn(setup, 4 * size).frames / outcomeIn(setup, size).frames).toBeCloseTo(2, 10)
-    expect(comparedIn({ ...setup, beside: [16 * size, 4 * size] }).map(({ frames }) => frames / outcomeIn(setup).frames)).toEqual([
-      expect.closeTo(1, 10), expect.closeTo(2, 10), expect.closeTo(4, 10),
+    const size = sizeIn(setup)!
+    expect(outcomeAt(setup, 4 * size).frames / outcomeIn(setup).frames).toBeCloseTo(2, 9)
+    expect(comparedIn({ ...setup, beside: [16 * size, 4 * size] }).map((each) => outcomeIn(each.setup).frames / outcomeIn(setup).frames)).toEqual([
+      expect.closeTo(1, 9), expect.closeTo(2, 9), expect.closeTo(4, 9),
     ])
+  })
+
+  it.each([bench({ law: 'steady', way: 3 }), bench({ law: 'slow-in', way: 3, by: 'speed' })])('a given speed takes four times as long for four times the way (%#)', (setup) => {
+    expect(outcomeAt(setup, 12).frames / outcomeIn(setup).frames).toBeCloseTo(4, 10)
   })
 
   it('a free fall of 4.903325 m takes one second; on the Moon longer by the root of the gravities', () => {
@@ -60,7 +74,7 @@ describe('size → frames', () => {
     expect(flatAngle(block)).toBeCloseTo(45, 12)
     expect(problemIn(block)).toBeNull()
     expect(problemIn({ ...block, lean: 45 })).toContain('45°')
-    expect(motionIn(block, 1).end).toBeCloseTo(45, 12)
+    expect(motionIn(block).end.reading).toBeCloseTo(45, 12)
   })
 })
 
@@ -68,16 +82,29 @@ describe('frames → size', () => {
   it.each([
     bench({ height: 1 }),
     bench({ body: 'block', width: 6, height: 38, lean: 1.5 }),
+    bench({ law: 'over-edge', body: 'block', width: 6, height: 38, lean: 1.5, brink: 60 }),
     bench({ law: 'pendulum', body: 'hung-rod', amplitude: 120, swings: 1.5 }),
+    bench({ law: 'swing-decay', body: 'bob', amplitude: 20, swings: 3 }),
     bench({ law: 'odd-rule', way: 3, slope: 12, roll: 'hoop', gravity: 'mars' }),
+    bench({ law: 'bounce', way: 2, back: 60, bounces: 4 }),
+    bench({ law: 'flight', throwAngle: -20, landing: 3, gravity: 'moon' }),
+    bench({ law: 'slow-in', way: 3, stopAfter: 1.25 }),
+    bench({ law: 'slow-in', way: 3, by: 'speed', startSpeed: 5 }),
     bench({ law: 'steady', way: 3, speed: 1.25 }),
   ])('the size that so many frames read as needs so many frames (%#)', (setup) => {
     for (const frames of [9, 48, 187.5]) {
-      const size = sizeForFrames(setup, frames)
-      expect(outcomeIn(setup, size).frames).toBeCloseTo(frames, 8)
-      expect(sizeIn(atSize(setup, size))).toBeCloseTo(size, 9)
+      const there = setupForFrames(setup, frames)
+      expect(outcomeIn(there).frames).toBeCloseTo(frames, 7)
+      expect(sizeIn(atSize(setup, sizeIn(there)!))).toBeCloseTo(sizeIn(there)!, 8)
     }
-    expect(sizeForFrames(setup, outcomeIn(setup).frames)).toBeCloseTo(sizeIn(setup), 10)
+    expect(sizeIn(setupForFrames(setup, outcomeIn(setup).frames))).toBeCloseTo(sizeIn(setup)!, 9)
+  })
+
+  it('a spin has no size: so many frames read as a rate', () => {
+    const spin = bench({ law: 'spin', rate: 2, turns: 3 })
+    expect(sizeIn(spin)).toBeNull()
+    expect(comparedIn({ ...spin, beside: [1, 4] })).toEqual([{ setup: { ...spin, beside: [1, 4] }, planned: true }])
+    expect(setupForFrames(spin, 72).rate).toBeCloseTo(1, 12)
   })
 })
 
@@ -114,7 +141,7 @@ describe('the list', () => {
   })
 
   it('knows where a swing comes to its end, however long it takes', () => {
-    const swing = (swings: number, length = 1) => motionIn(bench({ law: 'pendulum', body: 'bob', amplitude: 30, swings, length }), length).end
+    const swing = (swings: number, length = 1) => motionIn(bench({ law: 'pendulum', body: 'bob', amplitude: 30, swings, length })).end.reading
     expect(swing(0.5)).toBeCloseTo(-30, 6)
     expect(swing(0.25)).toBeCloseTo(0, 6)
     expect(swing(50, 900)).toBeCloseTo(30, 4)
