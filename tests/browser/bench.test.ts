@@ -74,6 +74,61 @@ describe('the bench', () => {
     await counts(other.getByRole('button', { name: /Start a take/ }), 0)
   })
 
+  it('chooses every law by keyboard, from groups that say what they are', async () => {
+    const page = await open(animator, BENCH)
+    for (const group of ['Along a path', 'Thrown', 'Turning']) await visible(page.getByRole('group', { name: group }))
+    await page.getByRole('radio', { name: 'Topple' }).focus()
+    const seen = new Set<string>()
+    for (let i = 0; i < 10; i++) {
+      await page.keyboard.press('ArrowDown')
+      const law = await page.locator('input[name="bench-law"]:checked').inputValue()
+      await page.waitForURL((address) => address.searchParams.get('law') === law)
+      await visible(page.getByRole('table', { name: /Spacing list/ }))
+      await shows(said(page, 'frames'), /^[\d.]+ frames$/)
+      seen.add(law)
+    }
+    expect(seen.size).toBe(10)
+  })
+
+  // School formulas, standard gravity: fall √(2h/g), restitution by e; range v²·sin 2α/g; way = ½·v·t; rod over a brink 53.13° (motion sheet).
+  it.each([
+    ['law=bounce&way=4.903325&back=50&bounces=2&on=1', '48.0 frames', ['Contact 1\nframe 25.0, comes back to 1.23 m', 'Contact 2\nframe 49.0, the last']],
+    ['law=flight&speed=9.80665&angle=30&landing=0&on=1', '24.0 frames', ['Apex\nframe 13.0, 1.23 m above the hand', 'Lands\nframe 25.0, 8.49 m away']],
+    ['law=slow-in&way=3&seconds=1.5&on=1', '36.0 frames', ['Starts with\n4 m/s', 'Stands\nframe 37.0, after 1.50 s']],
+    ['law=spin&rate=2&turns=3&on=2', '36.0 frames', ['From drawing to drawing\n60.0°', 'One turn\n12 frames']],
+    ['law=over-edge&body=rod&height=1&lean=0.01&brink=5', / frames$/, [/Lets go of the brink\nframe [\d.]+, at 53.1° from balance/, /Touches the ground\nframe [\d.]+, turned to [\d.]+°/]],
+    ['law=swing-decay&body=bob&length=1&amplitude=10&swings=2&lost=10', / frames$/, [/Amplitude left\nframe [\d.]+, 8.1°/]],
+  ] as const)('%s says what happens when, in another window too', async (query, frames, told) => {
+    const page = await open(guest, `${BENCH}?${query}`)
+    await shows(said(page, 'frames'), frames as string)
+    for (const words of told) await shows(said(page, 'happenings'), words)
+    await visible(page.getByText('For drawing only; stunts and rigs are for a licensed engineer and local rules.'))
+    const slider = page.getByRole('slider', { name: 'Frame of the motion' })
+    const before = await poses(page)
+    await slider.focus()
+    await page.keyboard.press('End')
+    await expect.poll(() => poses(page), { timeout: 10_000 }).not.toBe(before)
+    expect(await poses(page)).not.toContain('NaN')
+  })
+
+  it('says that a block’s topple is planned until its side meets the ground', async () => {
+    const page = await open(guest, `${BENCH}?law=topple&body=block&width=1&height=1&lean=2`)
+    await shows(said(page, 'early'), /45\.0° past balance.*The judge counts a topple up to 90°/)
+  })
+
+  it('goes the other way round: frames to a range, frames to a rate, and plans at it', async () => {
+    const page = await open(animator, `${BENCH}?law=flight&speed=9.80665&angle=30&landing=0&on=1&have=48`)
+    // Twice the time: four times the range, twice the speed.
+    await shows(said(page, 'reads'), '34 m')
+    await page.getByRole('button', { name: 'Plan at that size' }).click()
+    await page.waitForURL((address) => address.searchParams.get('speed') === '19.61')
+    await page.goto(`${BENCH}?law=spin&rate=2&turns=3&have=72`)
+    await page.waitForLoadState('networkidle')
+    await shows(said(page, 'reads'), '1 turn/s')
+    await page.getByRole('button', { name: 'Plan at that rate' }).click()
+    await shows(said(page, 'frames'), '72.0 frames')
+  })
+
   it('an address that nobody can read opens a bench all the same', async () => {
     const page = await open(animator, `${BENCH}?law=gallop&height=tall&fps=-1&on=9`)
     await shows(said(page, 'frames'), '46.4 frames')

@@ -12,25 +12,25 @@ type Words = Omit<AskedField, 'field'>
 const words: Partial<Record<NumberField, Words>> = {
   amplitude: { label: 'Amplitude', unit: 'degrees' },
   swings: { label: 'Swings', unit: '', hint: 'One is there and back.' },
-  lost: { label: 'Lost per swing', unit: '%', hint: 'Of the amplitude, there and back.' },
+  lost: { label: 'Lost per swing', unit: '%', hint: 'Of the amplitude.' },
   slope: { label: 'Slope', unit: 'degrees', hint: '90 is a free fall.' },
   speed: { label: 'Speed', unit: 'm/s' },
   stopAfter: { label: 'Stops after', unit: 's' },
   startSpeed: { label: 'Starts with', unit: 'm/s' },
   throwSpeed: { label: 'Speed', unit: 'm/s' },
-  throwAngle: { label: 'Angle of throw', unit: 'degrees', hint: 'From level; below it with a minus.' },
-  landing: { label: 'Drop to landing', unit: 'm', hint: '0 lands as high as it left.' },
-  brink: { label: 'Brink above ground', unit: 'm' },
-  rate: { label: 'Rate of turning', unit: 'turns/s' },
+  throwAngle: { label: 'Angle', unit: 'degrees', hint: 'From level; a minus throws down.' },
+  landing: { label: 'Drop', unit: 'm', hint: 'To where it lands; 0 is level.' },
+  brink: { label: 'Brink', unit: 'm', hint: 'Above the ground.' },
+  rate: { label: 'Turns per second', unit: '' },
   turns: { label: 'Turns', unit: '' },
-  back: { label: 'Gives back', unit: '% of the speed', hint: 'Heights go by its square.' },
+  back: { label: 'Gives back', unit: '%', hint: 'Of the speed, each time.' },
   bounces: { label: 'Contacts', unit: '', hint: 'The last one ends it.' },
   scale: { label: 'Scale', unit: 'px per m' },
 }
 
 function wordsFor(field: NumberField, setup: BenchSetup): Words {
   if (field === 'way') return { label: setup.law === 'bounce' || (setup.law === 'odd-rule' && setup.slope >= 90) ? 'Drop' : 'Way', unit: 'm' }
-  if (field === 'lean') return { label: 'Lean', unit: 'degrees', hint: setup.law === 'topple' ? `Lies flat at ${roundFigure(flatAngle(setup), 3)}°.` : 'Past balance, let go at rest.' }
+  if (field === 'lean') return { label: 'Lean', unit: 'degrees', hint: setup.law === 'topple' ? `Lies flat at ${roundFigure(flatAngle(setup), 3)}°.` : 'Past balance, at rest.' }
   const known = words[field]
   if (known) return known
   // The claim form's words carry their unit behind a comma.

@@ -19,7 +19,7 @@ export function happeningsIn(setup: BenchSetup, course: Course): Happening[] {
     case 'flight': return thrown(setup, course)
     case 'bounce': return contacts(setup)
     case 'slow-in': return [
-      { what: 'Starts with', much: `${roundFigure(startsWith(setup), 3)} m/s`, frame: 1 },
+      { what: 'Starts with', much: `${roundFigure(startsWith(setup), 3)} m/s`, frame: null },
       { what: 'Stands', much: `after ${figure(stopsAfter(setup), 2)} s`, frame: 1 + course.frames },
     ]
     case 'swing-decay': return dying(setup, course)

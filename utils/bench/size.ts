@@ -31,7 +31,9 @@ export function sizeIn(setup: BenchSetup): number | null {
 /** The planned thing's size as people say it; a spin is named by its rate. */
 export function sizeLabel(setup: BenchSetup, digits = 3): string {
   const size = sizeIn(setup)
-  return size === null ? `${roundFigure(setup.rate, digits)} turns/s` : metres(size, digits)
+  if (size !== null) return metres(size, digits)
+  const rate = roundFigure(setup.rate, digits)
+  return `${rate} ${rate === '1' ? 'turn' : 'turns'}/s`
 }
 
 const lengths = ['height', 'width', 'radius', 'headHeight', 'length', 'equalLength'] as const satisfies readonly SizeField[]
