@@ -30,10 +30,11 @@ export function planIn(setup: BenchSetup & { law: Exclude<BenchLaw, 'flight' | '
     case 'topple': return { ...paper, law: 'topple', subject: subjectIn(setup), lean: setup.lean, to: flatAngle(setup) }
     case 'pendulum': return { ...paper, law: 'pendulum', subject: subjectIn(setup), amplitude: setup.amplitude, swings: setup.swings }
     case 'swing-decay':
-      return { ...paper, law: 'swing-decay', subject: subjectIn(setup), amplitude: setup.amplitude, swings: setup.swings, lost: setup.lost / 100 }
+      return { ...paper, law: 'swing-decay', subject: subjectIn(setup), amplitude: setup.amplitude, swings: setup.swings, share: setup.lost / 100 }
     case 'odd-rule': return { ...paper, law: 'odd-rule', subject: pathIn(setup), travel }
     case 'bounce':
-      return { ...paper, law: 'bounce', subject: pathIn(setup), drop: travel, restitution: setup.back / 100, bounces: setup.bounces }
+      // The fall before the first contact is no hop.
+      return { ...paper, law: 'bounce', subject: pathIn(setup), drop: travel, restitution: setup.back / 100, bounces: setup.bounces - 1 }
     case 'slow-in': return { ...paper, law: 'slow-in', travel, seconds: stopsAfter(setup) }
     case 'steady': return { ...paper, law: 'steady', travel, seconds: setup.way / setup.speed }
     case 'spin': return { ...paper, law: 'spin', turns: setup.turns, turnsPerSecond: setup.rate }
@@ -52,12 +53,16 @@ export function edgeIn(setup: BenchSetup): EdgePlan {
   return { subject, lean: setup.lean, drop, fps: setup.fps, exposure: setup.on, unitsPerMetre: setup.scale }
 }
 
+/** Degrees: nearer to the top a swing hangs there, and no plan says how it dies. */
+const WIDEST_DYING = 165
+
 /** What keeps a setup from moving at all, in one sentence; null where nothing does. */
 export function problemIn(setup: BenchSetup): string | null {
   if (setup.law === 'topple') {
     const flat = flatAngle(setup)
     return setup.lean < flat ? null : `This body lies flat ${roundFigure(flat, 3)}° past balance: lean it less than that.`
   }
+  if (setup.law === 'swing-decay' && setup.amplitude > WIDEST_DYING) return `A swing that dies is let go ${WIDEST_DYING}° from hanging at most.`
   if (setup.law === 'flight' && setup.landing === 0 && setup.throwAngle <= 0) return 'Thrown level or downward, it needs a drop to land in.'
   if (setup.law !== 'over-edge') return null
   const { tooSoon } = touchesAfter(subjectIn(setup), setup.lean, setup.brink)
