@@ -1,13 +1,7 @@
-import { turns } from '~/utils/claiming/form'
+import { lawGroups, turns } from '~/utils/claiming/form'
 import type { Law, Measure } from '~/utils/motion/types'
 
 /** The laws as the bench offers them, and what each of them has: a body, a size, gravity, points on the drawing. */
-
-export const lawGroups = [
-  { word: 'Along a path', laws: ['odd-rule', 'slow-in', 'steady', 'bounce'] },
-  { word: 'Thrown', laws: ['flight'] },
-  { word: 'Turning', laws: ['topple', 'over-edge', 'pendulum', 'swing-decay', 'spin'] },
-] as const satisfies readonly { word: string; laws: readonly Law[] }[]
 
 export type BenchLaw = Law
 export const benchLaws: readonly BenchLaw[] = lawGroups.flatMap(({ laws }) => laws)

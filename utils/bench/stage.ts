@@ -5,7 +5,8 @@ import { sizeLabel } from '~/utils/bench/size'
 import type { BenchSetup } from '~/utils/bench/setup'
 import { reachOf } from '~/utils/bench/stageReach'
 import type { Reach } from '~/utils/bench/stageReach'
-import { BALL, circle, drawnFor } from '~/utils/bench/stageDrawn'
+import { BALL, drawnFor } from '~/utils/bench/stageDrawn'
+import { circlePath } from '~/utils/drawing/circle'
 import { textWidth } from '~/utils/drawing/labels'
 import { px } from '~/utils/drawing/strokes'
 import { metres } from '~/utils/drawing/words'
@@ -99,7 +100,7 @@ function rows(setup: BenchSetup, width: number): Stage {
       planned, label, labelX: EDGE + textWidth(label, 13, true) / 2, labelY: y + 24,
       scene: one.law === 'slow-in' ? `M${px(end)} ${y - 10}v20` : '',
       path: `M${px(x(0))} ${y}H${px(end)}`,
-      pose: ({ reading }) => circle({ x: x(reading), y }, BALL),
+      pose: ({ reading }) => circlePath({ x: x(reading), y }, BALL),
     }
   })
   const height = 22 + compared.length * 46 + 30

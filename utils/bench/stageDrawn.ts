@@ -6,9 +6,10 @@ import { subjectIn } from '~/utils/bench/setup'
 import type { BenchSetup } from '~/utils/bench/setup'
 import { outreach } from '~/utils/bench/stageReach'
 import { bodyPath } from '~/utils/drawing/body'
+import { circlePath } from '~/utils/drawing/circle'
 import { px } from '~/utils/drawing/strokes'
 import type { Point } from '~/utils/drawing/strokes'
-import type { ArcTrack } from '~/utils/drawing/track'
+import { trackAt } from '~/utils/drawing/track'
 import { edgeMotion } from '~/utils/motion'
 
 /** One body on the stage: what it moves against, its path of action, and itself at a moment. */
@@ -21,8 +22,6 @@ export interface Drawn {
 /** Pixels: what has no size of its own is drawn as a ball. */
 export const BALL = 6
 const rad = (degrees: number) => (degrees * Math.PI) / 180
-export const circle = ({ x, y }: Point, r: number) =>
-  `M${px(x - r)} ${px(y)}a${px(r)} ${px(r)} 0 1 0 ${px(2 * r)} 0a${px(r)} ${px(r)} 0 1 0 ${px(-2 * r)} 0Z`
 
 /** Draws a setup about its anchor, `scale` pixels per metre; `from` is the left end of its column. */
 export function drawnFor(setup: BenchSetup, anchor: Point, scale: number, from: number): Drawn {
@@ -33,19 +32,6 @@ export function drawnFor(setup: BenchSetup, anchor: Point, scale: number, from: 
   return setup.law === 'bounce' ? bouncing(setup, anchor, scale) : falling(setup, anchor, scale)
 }
 
-/** Where an angle points to from a pivot: a standing body counts from upright, a hung one from hanging. */
-function trackAt(pivot: Point, length: number, hung: boolean): ArcTrack {
-  const spot = (degrees: number, at: number) => {
-    const way = { x: Math.sin(rad(degrees)), y: (hung ? 1 : -1) * Math.cos(rad(degrees)) }
-    return { x: pivot.x + way.x * at, y: pivot.y + way.y * at, nx: way.x, ny: way.y }
-  }
-  return { kind: 'arc', pivot, radius: length, spot, path: () => '', hangs: hung }
-}
-function arc({ spot, hangs: hung }: ArcTrack, from: number, to: number, length: number): string {
-  const [a, b] = [spot(from, length), spot(to, length)]
-  return `M${px(a.x)} ${px(a.y)}A${px(length)} ${px(length)} 0 ${Math.abs(to - from) > 180 ? 1 : 0} ${hung ? 0 : 1} ${px(b.x)} ${px(b.y)}`
-}
-
 function turning(setup: BenchSetup, pivot: Point, scale: number): Drawn {
   const hung = hangs(setup.law)
   const length = Math.max(hung ? 16 : 8, outreach(setup) * scale)
@@ -53,8 +39,8 @@ function turning(setup: BenchSetup, pivot: Point, scale: number): Drawn {
   const subject = subjectIn(setup)
   return {
     scene: hung ? `M${px(pivot.x - 12)} ${px(pivot.y)}h24` : '',
-    path: hung ? arc(track, -setup.amplitude, setup.amplitude, length) : arc(track, setup.lean, flatAngle(setup), length),
-    pose: ({ reading }) => bodyPath(subject, reading, length, track, 1) + circle(pivot, 2.5),
+    path: hung ? track.path(-setup.amplitude, setup.amplitude, length) : track.path(setup.lean, flatAngle(setup), length),
+    pose: ({ reading }) => bodyPath(subject, reading, length, track, 1) + circlePath(pivot, 2.5),
   }
 }
 
@@ -70,11 +56,11 @@ function overEdge(setup: BenchSetup, brink: Point, scale: number, from: number):
   const flown = Array.from({ length: FLOWN }, (_, i) => place(motion.at(release.seconds + ((seconds - release.seconds) * (i + 1)) / FLOWN).centre))
   return {
     scene: `M${px(from)} ${px(brink.y + 1)}H${px(brink.x)}V${px(brink.y + setup.brink * scale + 1)}`,
-    path: arc(trackAt(brink, length, false), setup.lean, release.angle, reach * scale) + flown.map(({ x, y }) => `L${px(x)} ${px(y)}`).join(''),
+    path: trackAt(brink, length, false).path(setup.lean, release.angle, reach * scale) + flown.map(({ x, y }) => `L${px(x)} ${px(y)}`).join(''),
     pose: ({ reading, at }) => {
       const middle = place(at ?? { x: 0, y: 0 })
       const pivot = { x: middle.x - reach * scale * Math.sin(rad(reading)), y: middle.y + reach * scale * Math.cos(rad(reading)) }
-      return bodyPath(subject, reading, length, trackAt(pivot, length, false), 1) + circle(middle, 2.5)
+      return bodyPath(subject, reading, length, trackAt(pivot, length, false), 1) + circlePath(middle, 2.5)
     },
   }
 }
@@ -89,7 +75,7 @@ function thrown(setup: BenchSetup, hand: Point, scale: number): Drawn {
   return {
     scene: setup.landing > 0 ? `M${px(start.x - BALL)} ${px(hand.y + 1)}h${2 * BALL}` : '',
     path: `M${px(start.x)} ${px(start.y)}Q${px(handle.x)} ${px(handle.y)} ${px(landing.x)} ${px(landing.y)}`,
-    pose: ({ at }) => circle(place(at ?? { x: 0, y: 0 }), BALL),
+    pose: ({ at }) => circlePath(place(at ?? { x: 0, y: 0 }), BALL),
   }
 }
 
@@ -99,11 +85,11 @@ function spinning(middle: Point, scale: number): Drawn {
   const track = trackAt(middle, radius, false)
   return {
     scene: '',
-    path: circle(middle, radius),
+    path: circlePath(middle, radius),
     pose: ({ reading }) => {
       const rim = track.spot(reading, radius)
       const mark = track.spot(reading, radius - 9)
-      return `${circle(middle, 3)}M${px(middle.x)} ${px(middle.y)}L${px(rim.x)} ${px(rim.y)}${circle(mark, 7)}`
+      return `${circlePath(middle, 3)}M${px(middle.x)} ${px(middle.y)}L${px(rim.x)} ${px(rim.y)}${circlePath(mark, 7)}`
     },
   }
 }
@@ -116,7 +102,7 @@ function bouncing(setup: BenchSetup, foot: Point, scale: number): Drawn {
   return {
     scene: '',
     path: `M${px(foot.x)} ${px(height(1) - BALL)}V${px(foot.y)}${ticks.join('')}`,
-    pose: ({ reading }) => circle({ x: foot.x, y: foot.y - (setup.way - reading / setup.scale) * scale - BALL }, BALL),
+    pose: ({ reading }) => circlePath({ x: foot.x, y: foot.y - (setup.way - reading / setup.scale) * scale - BALL }, BALL),
   }
 }
 
@@ -130,7 +116,7 @@ function falling(setup: BenchSetup, anchor: Point, scale: number): Drawn {
   const pose = ({ reading }: Moment) => {
     const gone = (reading / setup.scale) * scale
     const at = { x: top.x + along.x * gone + along.y * lift, y: top.y + along.y * gone - along.x * lift }
-    return circle({ x: at.x, y: setup.slope < 90 ? at.y : at.y - BALL }, BALL)
+    return circlePath({ x: at.x, y: setup.slope < 90 ? at.y : at.y - BALL }, BALL)
   }
   return { scene: '', path: `M${px(top.x)} ${px(top.y)}L${px(top.x + along.x * long)} ${px(anchor.y)}`, pose }
 }
