@@ -6,6 +6,7 @@ import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
 import { counts, shows, visible } from './seen'
 import { as, hangTower, PRODUCTION } from './tower'
+import type { Claim } from '~/utils/contracts/production'
 
 /** The bench: planned by keyboard, sent as an address, set going, and carried into a take. */
 
@@ -200,5 +201,37 @@ describe('the bench', () => {
     expect(await carry.isDisabled()).toBe(false)
     await page.keyboard.press('Escape')
     await counts(page.getByRole('dialog'), 0)
+  })
+
+  const points = { measure: 'point', unit: 'px', slop: 1, tolerance: 0.1 } as const
+  const angles = { measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1 } as const
+  const ways = { measure: 'distance', unit: 'px', slop: 1, tolerance: 0.1 } as const
+  const carried: [string, string, Claim][] = [
+    ['CLK-201', 'law=flight&speed=8&angle=40&landing=2', { ...points, law: 'flight', subject: { unitsPerMetre: 150 } }],
+    ['CLK-202', 'law=over-edge&body=block&width=0.6&height=2&lean=2&brink=6', { ...angles, law: 'over-edge', subject: { shape: 'block', width: 0.6, height: 2 } }],
+    ['CLK-203', 'law=slow-in&way=4&seconds=2', { ...ways, law: 'slow-in' }],
+    ['CLK-204', 'law=bounce&way=2&back=70&bounces=3&on=1', { ...ways, law: 'bounce', subject: { unitsPerMetre: 150 } }],
+    ['CLK-205', 'law=spin&rate=0.5&turns=2', { ...angles, law: 'spin' }],
+  ]
+  it.each(carried)('%s takes %s, and it holds there', async (code, query, claim) => {
+    await hangTower(server.url, code, claim)
+    const page = await open(animator, `${BENCH}?${query}`)
+    const count = Number((await said(page, 'drawings').innerText()).split(' ')[0])
+    await page.getByRole('button', { name: /Start a take with this/ }).click()
+    await page.getByLabel('Shot', { exact: true }).selectOption(code)
+    await shows(page.getByRole('dialog'), `${count} drawings, from frame 1`)
+    await page.getByRole('button', { name: 'Carry the list over' }).click()
+    await page.waitForURL(new RegExp(`/shots/${code}/post$`))
+    await shows(page.getByRole('form', { name: 'The list' }), `${count} keys`)
+    await shows(page.getByLabel('The judge’s answer'), /Holds/)
+  })
+
+  it('offers no shot that can’t take the list', async () => {
+    const page = await open(animator, `${BENCH}?law=flight`)
+    await page.getByRole('button', { name: /Start a take with this/ }).click()
+    await visible(page.getByLabel('Shot', { exact: true }))
+    const codes = await page.getByLabel('Shot', { exact: true }).locator('option').evaluateAll((options) => options.map((option) => (option as HTMLOptionElement).value))
+    expect(codes).toContain('CLK-201')
+    expect(codes).not.toContain(CODE)
   })
 })

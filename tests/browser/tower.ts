@@ -34,8 +34,8 @@ export function tippingList(height: number): { frame: number; reading: number }[
 export const asColumns = (keys: readonly { frame: number; reading: number }[]) =>
   ['frame\tdegrees', ...keys.map(({ frame, reading }) => `${frame}\t${reading}`)].join('\n')
 
-/** A shot of the clock-tower sequence for the demo's animator and supervisor, claimed as the tower. */
-export async function hangTower(url: string, code: string): Promise<void> {
+/** A shot of the clock-tower sequence for the demo's animator and supervisor, claimed as the tower unless told otherwise. */
+export async function hangTower(url: string, code: string, claim: Claim = towerClaim): Promise<void> {
   const coordinator = await as(url, 'coordinator')
   const { body: production } = await coordinator.get<Production>(`/api/productions/${PRODUCTION}`)
   const who = (role: string) => production.members.find((member) => member.role === role)?.id
@@ -47,6 +47,6 @@ export async function hangTower(url: string, code: string): Promise<void> {
   })
   expect(made.status).toBe(201)
   const { version } = made.body as { version: number }
-  const claimed = await supervisor.put(`/api/productions/${PRODUCTION}/shots/${code}/claim`, { claim: towerClaim, version })
+  const claimed = await supervisor.put(`/api/productions/${PRODUCTION}/shots/${code}/claim`, { claim, version })
   expect(claimed.status).toBe(200)
 }

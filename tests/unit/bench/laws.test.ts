@@ -1,15 +1,19 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { courseIn } from '~/utils/bench/course'
+import { askedFields } from '~/utils/bench/fields'
 import { cornersAt, touchesAfter } from '~/utils/bench/ground'
 import { endsEarly, happeningsIn } from '~/utils/bench/happenings'
 import { benchLaws } from '~/utils/bench/laws'
-import { chartKeysIn, listIn, motionIn, outcomeIn, pointListIn } from '~/utils/bench/planning'
+import { listTable } from '~/utils/bench/listTable'
+import { meaningOf } from '~/utils/bench/meaning'
+import { chartKeysIn, listIn, motionIn, outcomeIn, planKeysIn, pointListIn } from '~/utils/bench/planning'
 import { problemIn } from '~/utils/bench/plans'
 import { rangeOf } from '~/utils/bench/size'
 import { freshSetup, toldBy, withBenchLaw } from '~/utils/bench/setup'
 import type { BenchLaw } from '~/utils/bench/laws'
 import type { BenchSetup } from '~/utils/bench/setup'
+import { laws } from '~/utils/contracts/check'
 
 /** The laws that came to the bench later, against what a school book says of them. */
 
@@ -154,7 +158,38 @@ describe('a block’s topple', () => {
   })
 })
 
+describe('the list in figures', () => {
+  const table = (setup: BenchSetup) => listTable(planKeysIn(setup), 'deg', 'px', setup.fps)
+  const heads = (setup: BenchSetup) => table(setup).columns.map(({ head }) => head)
+
+  it('tells readings and gaps, of a throw its points, of a fall over the edge both', () => {
+    expect(heads(bench('spin'))).toEqual(['drawing', 'reading °', 'gap °', 'time s'])
+    expect(heads(bench('flight'))).toEqual(['drawing', 'x px', 'y px', 'to the next px', 'time s'])
+    expect(heads(bench('over-edge'))).toEqual(['drawing', 'reading °', 'gap °', 'x px', 'y px', 'time s'])
+  })
+
+  it('has one cell per column on every row, and the last drawing no next one', () => {
+    const setup = bench('flight')
+    const count = planKeysIn(setup).length
+    for (let i = 0; i < count; i++) expect(table(setup).row(i).cells).toHaveLength(heads(setup).length)
+    expect(table(setup).row(0)).toEqual({ frame: 1, cells: ['1', '0.0', '0.0', expect.stringMatching(/^\d+\.\d$/), '0.00'] })
+    expect(table(setup).row(count - 1).cells[3]).toBe('–')
+  })
+})
+
 describe('every law', () => {
+  it('stands in one group of the form', () => {
+    expect([...benchLaws].sort()).toEqual([...laws].sort())
+  })
+
+  it('has words for what its numbers mean, and asks for no number twice', () => {
+    for (const law of benchLaws) {
+      const asked = askedFields(bench(law))
+      expect(new Set(asked.map(({ label }) => label)).size).toBe(asked.length)
+      expect(meaningOf(bench(law)).length).toBeGreaterThan(40)
+    }
+  })
+
   it('plans finite figures from whatever the form lets through', () => {
     const number = (low: number, high: number) => fc.double({ min: low, max: high, noNaN: true })
     const setups = fc.record({
