@@ -96,7 +96,7 @@ describe('the bench', () => {
     ['law=bounce&way=4.903325&back=50&bounces=2&on=1', '48.0 frames', ['Contact 1\nframe 25.0, comes back to 1.23 m', 'Contact 2\nframe 49.0, the last']],
     ['law=flight&speed=9.80665&angle=30&landing=0&on=1', '24.0 frames', ['Apex\nframe 13.0, 1.23 m above the hand', 'Lands\nframe 25.0, 8.49 m away']],
     ['law=slow-in&way=3&seconds=1.5&on=1', '36.0 frames', ['Starts with\n4 m/s', 'Stands\nframe 37.0, after 1.50 s']],
-    ['law=spin&rate=2&turns=3&on=2', '36.0 frames', ['From drawing to drawing\n60.0°', 'One turn\n12 frames']],
+    ['law=spin&rate=2&turns=2.75&on=1', '33.0 frames', ['From drawing to drawing\n30.0°', 'One turn\n12 frames']],
     ['law=over-edge&body=rod&height=1&lean=0.01&brink=5', / frames$/, [/Lets go of the brink\nframe [\d.]+, at 53.1° from balance/, /Touches the ground\nframe [\d.]+, turned to [\d.]+°/]],
     ['law=swing-decay&body=bob&length=1&amplitude=10&swings=2&lost=10', / frames$/, [/Amplitude left\nframe [\d.]+, 8.1°/]],
   ] as const)('%s says what happens when, in another window too', async (query, frames, told) => {
