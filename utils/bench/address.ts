@@ -96,7 +96,7 @@ export function writeBench(setup: BenchSetup): Record<string, string> {
   return query
 }
 
-/** No exponents: an address is read by people. */
-const plain = (value: number) => String(Number(value.toFixed(12)))
+/** No exponents, and no minus before nothing: an address is read by people. */
+const plain = (value: number) => value.toFixed(12).replace(/\.?0+$/, '').replace(/^-0$/, '0')
 
 export const sameBench = (a: BenchSetup, b: BenchSetup) => JSON.stringify(writeBench(a)) === JSON.stringify(writeBench(b))

@@ -14,6 +14,13 @@ describe('the address of a bench', () => {
     expect(writeBench(setup)).toEqual({ law: 'topple', body: 'block', width: '6', height: '38', lean: '1.5', gravity: 'moon', on: '1', beside: '1,4' })
   })
 
+  it('has no exponents, however small a number is', () => {
+    const setup = { ...freshSetup(), law: 'flight' as const, throwAngle: -5.1e-13, landing: 2.5e-7, throwSpeed: 100 }
+    expect(writeBench(setup)).toEqual({ law: 'flight', speed: '100', angle: '-0.000000000001', landing: '0.00000025' })
+    expect(sameBench(readBench(writeBench(setup)), setup)).toBe(true)
+    expect(writeBench({ ...setup, throwAngle: -1e-13 }).angle).toBe('0')
+  })
+
   it('opens fresh where it says nothing', () => {
     expect(readBench({})).toEqual(freshSetup())
     expect(readBench(writeBench(freshSetup()))).toEqual(freshSetup())
