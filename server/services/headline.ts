@@ -1,12 +1,13 @@
 import type { Claim } from '~/utils/contracts/production'
-import { lawWords, metres, roundFigure } from '~/utils/drawing/words'
-import type { CheckResult, Finding } from '~/utils/motion/types'
+import { lawWords } from '~/utils/drawing/words'
+import { claimedWords, sizeWords } from '~/utils/motion/sizeWords'
+import type { CheckResult, Finding, SizeReading } from '~/utils/motion/types'
 
 /** What the judge said of a list, in one short sentence for a sheet of the wall: no full stop, no bracket. */
 export function headline(answer: CheckResult, claim: Pick<Claim, 'law'>): string {
   const { verdict, size, findings } = answer
   if (verdict === 'undecided') return shorten(answer.reason ?? 'This list can’t be told yet')
-  if (verdict === 'holds') return size ? `Holds · reads as ${sized(size.value, size.unit)}` : 'Holds'
+  if (verdict === 'holds') return size ? `Holds · reads as ${sized(size)}` : 'Holds'
   const [first] = findings
   return first ? told(first, answer, claim) : breakingDrawings(answer)
 }
@@ -14,7 +15,7 @@ export function headline(answer: CheckResult, claim: Pick<Claim, 'law'>): string
 function told(finding: Finding, answer: CheckResult, claim: Pick<Claim, 'law'>): string {
   const { size, readsAs } = answer
   if (finding.kind === 'wrong-scale' && size && finding.amount > 0)
-    return `Reads as ${sized(size.value, size.unit)}, not ${sized(size.value / finding.amount, size.unit, 3)}`
+    return `Reads as ${sized(size)}, not ${claimedWords(size.value / finding.amount, size.unit)}`
   if (finding.kind === 'wrong-law') {
     const better = readsAs[0]
     // The judge names a winner in its sentence only when it is clearly ahead; then so does the sheet.
@@ -30,11 +31,8 @@ function breakingDrawings({ keys }: CheckResult): string {
   return breaking.length === 1 ? `Frame ${breaking[0]!.frame} is off the line` : `${breaking.length} drawings are off the line`
 }
 
-/** A size as a person says it; a fall drawn to scale has no size of its own, it reads as a gravity. */
-function sized(value: number, unit: string, digits = 2): string {
-  if (unit === 'm') return metres(value, digits)
-  return `${unit === 'm/s²' ? 'gravity ' : ''}${roundFigure(value, digits)} ${unit}`
-}
+/** The size with the digits of the judge's own sentence; a fall drawn to scale has no size of its own, it reads as a gravity. */
+const sized = (size: SizeReading) => `${size.unit === 'm/s²' ? 'gravity ' : ''}${sizeWords(size).value}`
 
 /** The judge's sentence up to where it goes into detail. */
 const shorten = (sentence: string) => sentence.split(/\s*\(|[;:]|, (?:and|so) |\.$/)[0]!.trim()

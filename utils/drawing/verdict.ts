@@ -1,21 +1,12 @@
 import type { Claim } from '~/utils/contracts/production'
-import { claimedSize, frameCount, metres, roundFigure, sizeFigure, verdictWords } from '~/utils/drawing/words'
+import { claimedSize, frameCount, metres, roundFigure, verdictWords } from '~/utils/drawing/words'
 import { LAW_WORDS } from '~/utils/motion'
-import type { CheckResult, SizeReading } from '~/utils/motion/types'
+import { sizeWithInterval } from '~/utils/motion/sizeWords'
+import type { CheckResult } from '~/utils/motion/types'
 
 /** The sentence at the head of a take: what the list is, what it reads as, what to do about it. */
 
 type SaidClaim = Pick<Claim, 'law' | 'subject' | 'unit' | 'start'>
-
-/** "8.2 m (7.8–8.6)". */
-export function sizeWithInterval(size: SizeReading): string {
-  // Both ends in the unit that the value is said in: 4.6 cm (4.1–5.2).
-  const small = size.unit === 'm' && size.value < 0.0995
-  const ends = (digits: number) => [size.low, size.high].map((value) => roundFigure(small ? value * 100 : value, digits))
-  // A narrow interval needs a digit more to be one; one narrower still says nothing.
-  const [low, high] = [2, 3].map(ends).find(([from, to]) => from !== to) ?? []
-  return low && size.low > 0 ? `${sizeFigure(size.value, size.unit)} (${low}–${high})` : sizeFigure(size.value, size.unit)
-}
 
 /** Words for the number of drawings that break, apart from those that a finding already tells of. */
 const brokenCount = (answer: CheckResult) => answer.keys.filter((key) => key.breaks).length

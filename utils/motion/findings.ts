@@ -1,7 +1,7 @@
 /** Findings in words: one cause told once, the most telling first. */
-import { figure } from './bodies'
 import { LAW_WORDS } from './laws/index'
 import type { Scale } from './size'
+import { claimedWords, sizeWithInterval } from './sizeWords'
 import type { Finding, JudgedKey, Law } from './types'
 
 /** "2.4°", "14 px". */
@@ -89,18 +89,12 @@ function inFrames(count: number): string {
 export function wrongScaleFinding(scale: Scale, needed: number, used: number): Finding | null {
   const { size, claimed } = scale
   if (!size || claimed === null) return null
-  const to = placesFor(size.high - size.low)
-  const interval = `${size.value.toFixed(to)} ${size.unit} (${size.low.toFixed(to)}–${size.high.toFixed(to)})`
-  const reads = size.unit === 'm' ? `Reads as ${interval}` : `Reads as gravity ${interval} at this scale`
+  const said = sizeWithInterval(size)
+  const reads = size.unit === 'm' ? `Reads as ${said}` : `Reads as gravity ${said} at this scale`
   return {
     kind: 'wrong-scale', frames: [], amount: size.value / claimed,
-    text: `${reads}; ${figure(claimed)} ${size.unit} needs ${needed} frames, not ${used}.`,
+    text: `${reads}; ${claimedWords(claimed, size.unit)} needs ${needed} frames, not ${used}.`,
   }
-}
-
-/** Decimal places that show an interval of this width as an interval: none for metres of doubt, three at most. */
-function placesFor(width: number): number {
-  return width > 0 ? Math.min(3, Math.max(0, Math.ceil(-Math.log10(width / 2)))) : 3
 }
 
 /** What was found about the whole list comes first, then in order of how far off. */

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { laws } from '~/utils/contracts/check'
 import { findingKey } from '~/utils/drawing/findings'
-import { sizeWithInterval, verdictInWords } from '~/utils/drawing/verdict'
+import { verdictInWords } from '~/utils/drawing/verdict'
+import { sizeWithInterval } from '~/utils/motion/sizeWords'
 import {
   bodyInWords,
   claimInWords,
@@ -132,7 +133,14 @@ describe('the verdict in a sentence', () => {
   })
   it('widens an interval to the digits that make it one', () => {
     expect(sizeWithInterval(size)).toBe('8.2 m (7.8–8.6)')
-    expect(sizeWithInterval({ ...size, low: 8.19, high: 8.21 })).toBe('8.2 m (8.19–8.21)')
+    expect(sizeWithInterval({ ...size, low: 8.19, high: 8.21 })).toBe('8.20 m (8.19–8.21)')
+    expect(sizeWithInterval({ ...size, value: 38, low: 30, high: 47 })).toBe('38 m (30–47)')
+    expect(sizeWithInterval({ ...size, value: 0.046, low: 0.041, high: 0.052 })).toBe('4.6 cm (4.1–5.2)')
+    expect(sizeWithInterval({ value: 81.2, low: 0, high: 200, unit: 'px/m' })).toBe('81 px/m (up to 200)')
+  })
+  it('says no interval that would read the same at both ends, and none that says nothing', () => {
     expect(sizeWithInterval({ ...size, low: 8.2, high: 8.2 })).toBe('8.2 m')
+    expect(sizeWithInterval({ ...size, value: 7.535, low: 7.5349, high: 7.5351 })).toBe('7.535 m')
+    expect(sizeWithInterval({ ...size, low: 8.2e-6, high: 8.2e6 })).toBe('8.2 m (from under a tenth to over ten times that)')
   })
 })
