@@ -1,6 +1,7 @@
 /** A list of readings under one law, judged. */
 import { explained, opine, plainRivals, ranked, weigh } from './choose'
 import type { Rival } from './choose'
+import { endToEnd } from './endToEnd'
 import { figuresOf } from './figures'
 import { backwardFinding, inOrder, misplacedFinding, notAtRestFinding, shiftFinding, wrongLawFinding, wrongReleaseFinding, wrongScaleFinding } from './findings'
 import { badDrawings, plainFit, stories } from './hypotheses'
@@ -109,9 +110,8 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
   const readsAs = ranked(choice).map(({ law, misfit }) => ({ law, misfit }))
 
   if (opinion.kind === 'wrong-law') {
-    // Stories told to save the claimed law mean nothing once it is given up: the line is its plain best.
-    const plain = choice.plain
-    const line = lineFrom(plain, 0)
+    // Stories told to save the claimed law mean nothing once it is given up: the line is its plain best, or one that shows its curve.
+    const line = endToEnd(series, lineFrom(choice.plain, 0), care.slop)
     const keys = judgeKeys(request, series, traceLine(series, line, series.x))
     const amount = readsAs.find(({ law }) => law === request.law)?.misfit ?? 0
     const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]

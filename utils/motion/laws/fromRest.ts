@@ -20,7 +20,7 @@ const NUDGE = 1e-6
 const LEAST_DROP = 1e-3
 
 /** Numbers: weights of 1 and x² − 1/3; x is 0 at the first key, so the apex lies there. */
-const fallFromRest: LawModel = {
+export const fallFromRest: LawModel = {
   law: 'odd-rule',
   size: 2,
   linear: true,
