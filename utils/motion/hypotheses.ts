@@ -44,7 +44,7 @@ export interface Care {
   least: number
 }
 
-function weightsWithout(n: number, out: readonly number[]): Float64Array {
+export function weightsWithout(n: number, out: readonly number[]): Float64Array {
   const weights = new Float64Array(n).fill(1)
   for (const i of out) weights[i] = 0
   return weights

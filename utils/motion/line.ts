@@ -12,11 +12,19 @@ export interface Line {
   numbers: number[]
   /** Spans by which the line runs behind the numbers' own clock: not 0 where most of a list is one exposure late or early. */
   lag: number
+  /** On the numbers' own clock, spans: before this the motion waits, where the line would else run back to a start that is yet to come. */
+  waits?: number
 }
 
 /** Readings and speeds of a line at times x, run `rate` times as fast from the same start. */
 export function traceLine(series: Series, line: Line, x: Float64Array, rate = 1): Trace {
-  return LAWS[line.law].trace(series, Float64Array.from(line.numbers), x.map(at => at * rate - line.lag), false)
+  const { waits = -Infinity } = line
+  const times = x.map(at => Math.max(waits, at * rate - line.lag))
+  const trace = LAWS[line.law].trace(series, Float64Array.from(line.numbers), times, false)
+  times.forEach((at, i) => {
+    if (at === waits) trace.rate[i] = 0
+  })
+  return trace
 }
 
 /**

@@ -11,6 +11,7 @@ import { LAWS, LAW_WORDS, MEASURES, freerThan, rivalsOf } from './laws/index'
 import { letGoFrames } from './letGo'
 import { ruledList, traceLine } from './line'
 import type { Line } from './line'
+import { fromStandstill, outset } from './outset'
 import { judgeKeys, unjudged } from './perKey'
 import { claimFromRest } from './claimFromRest'
 import { allInTheAir, wrongRelease } from './release'
@@ -121,11 +122,12 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
     }
   }
 
-  const line = lineOf(request, series, story)
+  const still = fromStandstill(series, story, choice.sigma, care)
+  const line = lineOf(request, series, still ?? story)
   const trace = traceLine(series, line, series.x)
   const keys = judgeKeys(request, series, trace)
   const claim = claimFrames(series, scale)
-  const ruled = ruledBy(request, series, line, scale)
+  const ruled = ruledBy(request, series, line, still ? scaleOf(request, series, still.fit, series.n - story.out.length, care.least) : scale)
   const figures = figuresOf(request, series, story.fit, line, series.n - story.out.length, care.least)
   if (opinion.kind === 'too-short') {
     return {
@@ -232,7 +234,9 @@ function undecided(request: ReadingCheck, reason: string): Judgement {
 function lineOf(request: ReadingCheck, series: Series, story: Story): Line {
   const { shift } = story
   const lag = shift && series.n - shift.at > shift.at ? shift.by : 0
-  return lineFrom(story, lag)
+  const line = lineFrom(story, lag)
+  const waits = lag > 0 ? outset(series, line) : null
+  return waits === null ? line : { ...line, waits }
 }
 
 function lineFrom({ fit }: Story, lag: number): Line {
