@@ -18,7 +18,7 @@ import { now, someone } from './wire'
 import type { OnShot, OnTake } from './wire'
 
 /** Raised with every change of the judge that can change an answer: a stored answer says which judge gave it. */
-export const JUDGE_VERSION = '2'
+export const JUDGE_VERSION = '3'
 
 /** Posts a list: judged here and now, by the claim as it stands; numbered, and never changed again. */
 export async function postTake({ production, shot, person }: OnShot, body: z.infer<typeof newTake>): Promise<Made<TakeWire>> {

@@ -21,7 +21,7 @@ export function sizeByLibrary({ request, truth }: MadeList): number {
   const k = Math.sqrt(GRAVITY / (share * truth.size))
   // Speeds of the posted drawings, from the first three.
   const turn = ((y[2] as number) - (y[0] as number)) / ((x[2] as number) - (x[0] as number))
-  const curve = ([log = 0, start = 0, rate = 0]: ArrayLike<number> & Iterable<number>) => {
+  const curve = ([log = 0, start = 0, rate = 0]: number[]) => {
     const pull = (upright ? 1 : -1) * Math.exp(2 * log)
     const field = (_t: number, [angle = 0, speed = 0]: number[]) => [speed, pull * Math.sin(angle)]
     const solver = new Solver(2)

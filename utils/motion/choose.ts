@@ -102,7 +102,7 @@ const fits = (reading: Reading) => reading.misfit <= 1 && reading.breaking <= 0.
 /** True where a law can be kept by a story: few drawings are bad, and no run of them is a motion of its own. */
 function acceptable(series: Series, story: Story, care: Care): boolean {
   const off = badDrawings(series, story, care)
-  return off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER && !leavesAtEnd(off, series.n)
+  return off.length <= mostMisplaced(series.n) && longestRun(off) <= MOST_TOGETHER && !leavesAtEnd(series, off, care.slop)
 }
 
 /**
@@ -151,9 +151,14 @@ function capped(series: Series, story: Story, sigma: number): number {
 /** Lists shorter than this can't spare two drawings at one end. */
 const A_DOZEN = 12
 
-/** In a short list, two drawings in a row off at an end, with none beyond them to hold, are the motion going its own way. */
-function leavesAtEnd(off: readonly number[], n: number): boolean {
-  return n < A_DOZEN && ((off.includes(0) && off.includes(1)) || (off.includes(n - 1) && off.includes(n - 2)))
+/**
+ * In a short list, two drawings in a row off at an end, with none beyond them to hold, are the motion going its own way; unless they stand
+ * still, as they do where a start is late.
+ */
+function leavesAtEnd({ y, n }: Series, off: readonly number[], slop: number): boolean {
+  const leaves = (end: number, next: number) =>
+    off.includes(end) && off.includes(next) && Math.abs((y[end] as number) - (y[next] as number)) > slop
+  return n < A_DOZEN && (leaves(0, 1) || leaves(n - 1, n - 2))
 }
 
 export type Opinion =

@@ -34,6 +34,9 @@ export const HARD: Plan = [
   ['misplaced-many', 'topple'], ['misplaced-many', 'pendulum'], ['misplaced-many', 'odd-rule'], ['misplaced-many', 'steady'],
 ]
 
+/** Clean lists with a size to read. */
+export const SIZED: Plan = [['clean', 'topple'], ['clean', 'pendulum']]
+
 /** `count` lists, every family of the plan in turn, from one seed. */
 export function makeLists(count: number, seed: number, plan = PLAN): MadeList[] {
   const lists: MadeList[] = []

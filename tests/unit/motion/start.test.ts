@@ -78,7 +78,7 @@ describe('made lists', () => {
     // And by how much, to a tenth at the middle of them.
     const errors = told.map(({ before, result }) => Math.abs((result.findings[0]?.amount ?? NaN) / before - 1)).sort((a, b) => a - b)
     expect(errors[errors.length >> 1]).toBeLessThan(0.1)
-  })
+  }, 60_000)
 
   it('a bad drawing in a list from rest is still that drawing', () => {
     const lists = startLists(120, false, 20265).map(claimed).map((list) => {
@@ -121,5 +121,5 @@ describe('any start', () => {
       if (result.verdict === 'holds') expect(result.findings).toEqual([])
       if (line) expect(lawCurve(line, request, request.keys.map(({ frame }) => frame))).toEqual(result.keys.map(key => key.law))
     }), { numRuns: 200, seed: 4713 })
-  })
+  }, 60_000)
 })
