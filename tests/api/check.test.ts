@@ -36,7 +36,7 @@ describe('POST /api/check', () => {
     expect(status).toBe(200)
     expect(body).toEqual(JSON.parse(JSON.stringify(judge(ramp))))
     expect(body.verdict).toBe('holds')
-    expect(Object.keys(body).sort()).toEqual(['claim', 'findings', 'keys', 'readsAs', 'reason', 'ruled', 'size', 'verdict'])
+    expect(Object.keys(body).sort()).toEqual(['claim', 'figures', 'findings', 'keys', 'readsAs', 'reason', 'ruled', 'size', 'verdict'])
     expect(Object.keys(body.keys[0]!).sort()).toEqual(['allowance', 'breaks', 'frame', 'gap', 'law', 'lawGap', 'offset', 'offsetFrames', 'reading'])
     expect(await rowCounts()).toEqual(before)
   })

@@ -38,4 +38,10 @@ describe('the claim’s own size over the frames that it needs', () => {
   it('is null without a claimed size', () => {
     expect(claimedList({ ...claim, subject: undefined }, fps, posted)).toBeNull()
   })
+  it('is null under several laws, and for points: neither has one pace', () => {
+    const [first, middle, last] = [posted[0]!.frame, posted[5]!.frame, posted.at(-1)!.frame]
+    const spans = [{ from: first, to: middle, law: 'topple' as const }, { from: middle, to: last, law: 'topple' as const }]
+    expect(claimedList({ ...claim, spans }, fps, posted)).toBeNull()
+    expect(claimedList({ ...claim, measure: 'point' }, fps, posted)).toBeNull()
+  })
 })
