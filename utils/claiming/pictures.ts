@@ -5,7 +5,7 @@ import type { Law } from '~/utils/motion/types'
  * formula, so that the card never says of a law what it does not do.
  */
 export interface LawPicture {
-  /** The path of action, SVG. */
+  /** The path of action, and the ground where there is one, SVG. */
   path: string
   /** The ticks, SVG. */
   ticks: string
@@ -15,7 +15,7 @@ export const PICTURE = { width: 120, height: 48 } as const
 type Point = readonly [x: number, y: number]
 const DRAWINGS = 8
 const FINE = 96
-const TICK = 4
+const TICK = 3.5
 
 /** A motion over time 0 to 1, on a drawing with y down. */
 type Motion = (time: number) => Point
@@ -49,14 +49,15 @@ function bouncing(time: number): number {
   return 0
 }
 
+const BRINK: Point = [46, 20]
+const LEAN = 8 * DEGREE
 /** A rod on a brink goes from upright along its arc, lets go where cos θ = 3/5, and flies on with the speed that it has there, turning evenly. */
 function overEdge(time: number): Point {
-  const [brink, length, leave] = [[34, 21] as Point, 18, Math.acos(3 / 5)]
-  const turning = 0.8
-  if (time <= turning) return around(brink, length, toppling(time / turning, 3 * DEGREE, leave))
-  const start = around(brink, length, leave)
+  const [length, leave, turning] = [18, Math.acos(3 / 5), 0.6]
+  if (time <= turning) return around(BRINK, length, toppling(time / turning, LEAN, leave))
+  const start = around(BRINK, length, leave)
   // Speed at the end of the turn, per unit of time: θ′ = 2k sin(θ/2), with k of the topple above; θ″ there gives the fall its gravity.
-  const k = Math.log(Math.tan(leave / 4) / Math.tan((3 * DEGREE) / 4)) / turning
+  const k = Math.log(Math.tan(leave / 4) / Math.tan(LEAN / 4)) / turning
   const speed = 2 * k * Math.sin(leave / 2) * length
   const gravity = k * k * length * (4 / 3)
   const t = time - turning
@@ -72,12 +73,14 @@ const motions: Record<Law, Motion> = {
   topple: (t) => around([28, 44], 40, toppling(t, 2 * DEGREE, 88 * DEGREE)),
   pendulum: (t) => around([60, 0], -42, 50 * DEGREE * Math.cos(Math.PI * t)),
   // Three swings, each with the same share of the one before; the cord grows a little, so that they lie side by side.
-  'swing-decay': (t) => around([60, -16], -(46 + 14 * t), 52 * DEGREE * 0.45 ** t * Math.cos(3 * Math.PI * t)),
+  'swing-decay': (t) => around([60, -20], -(40 + 24 * t), 56 * DEGREE * 0.4 ** t * Math.cos(3 * Math.PI * t)),
   spin: (t) => around([60, 24], 19, 2 * Math.PI * t * ((DRAWINGS - 1) / DRAWINGS)),
   'over-edge': overEdge,
 }
 /** More drawings where the path is longer than one sweep. */
-const counts: Partial<Record<Law, number>> = { bounce: 16, 'swing-decay': 19, 'over-edge': 10, flight: 9 }
+const counts: Partial<Record<Law, number>> = { bounce: 16, 'swing-decay': 16, 'over-edge': 10, flight: 9 }
+/** What the motion happens on, where a path alone would not say it. */
+const grounds: Partial<Record<Law, string>> = { 'over-edge': `M18 ${BRINK[1]}H${BRINK[0]}V48`, bounce: 'M2 44H118' }
 
 const figure = (value: number) => String(Number(value.toFixed(2)))
 const place = ([x, y]: Point) => `${figure(x)} ${figure(y)}`
@@ -89,7 +92,7 @@ export function lawPicture(law: Law): LawPicture {
   if (law === 'spin') fine.push(fine[0]!)
   const count = counts[law] ?? DRAWINGS
   const ticks = Array.from({ length: count }, (_, i) => tickAcross(motion, i / (count - 1)))
-  return { path: `M${fine.map(place).join('L')}`, ticks: ticks.join('') }
+  return { path: `M${fine.map(place).join('L')}${grounds[law] ?? ''}`, ticks: ticks.join('') }
 }
 
 function tickAcross(motion: Motion, time: number): string {
