@@ -5,7 +5,7 @@ import { row, rows } from '~/server/models/database'
 import { fail, invalid, notFound } from '~/server/utils/fail'
 import { usedElsewhere } from '~/server/utils/made'
 import type { Made } from '~/server/utils/made'
-import { keysSuit, keysWanted, missingJoint, requestFor } from '~/utils/contracts/check'
+import { jointWanted, keysSuit, keysWanted, missingJoint, requestFor } from '~/utils/contracts/check'
 import { sameFinding } from '~/utils/contracts/take'
 import type { FindingName, Flag, newTake, Take as TakeWire, TakeLine, Waiver } from '~/utils/contracts/take'
 import { deskOf } from '~/utils/desk'
@@ -34,7 +34,7 @@ export async function postTake({ production, shot, person }: OnShot, body: z.inf
   const number = (lines.at(-1)?.number ?? 0) + 1
   if (!keysSuit(claim, body.keys)) invalid('keys[0]', keysWanted[claim.measure === 'point' ? 'point' : 'reading'])
   const joint = missingJoint(claim, body.keys)
-  if (joint !== null) invalid('keys', `The claim’s laws meet at frame ${joint}: the list needs a drawing there, between its first and its last.`)
+  if (joint !== null) invalid('keys', jointWanted(joint))
   const answer = judge(requestFor(claim, shot.fps, body.keys))
   const take = await Take.create({
     id: uuid(),

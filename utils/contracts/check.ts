@@ -234,6 +234,8 @@ export function missingJoint(claim: Pick<Claim, 'spans'>, list: readonly (Key | 
   return jointsOf(claim.spans).find(frame => !drawn.has(frame)) ?? null
 }
 
+export const jointWanted = (frame: number) => `The claim’s laws meet at frame ${frame}: the list needs a drawing there, between its first and its last.`
+
 /**
  * A claim with a list of its own kind (see `keysSuit`) that has a drawing on every joint (see `missingJoint`), as the judge takes
  * it. The first span begins where the list does, and the last one ends with it: a claim fixes the joints, not the length.

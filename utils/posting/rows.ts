@@ -110,7 +110,8 @@ export function pointGapText(rows: readonly Row[], row: number): string {
   const [here, next] = [rows[row], rows[row + 1]].map((each) => [readNumber(each?.x ?? ''), readNumber(each?.y ?? '')])
   const [x, y, nextX, nextY] = [...here!, ...next!]
   if (typeof x !== 'number' || typeof y !== 'number' || typeof nextX !== 'number' || typeof nextY !== 'number') return ''
-  return cellText(Number(Math.hypot(nextX - x, nextY - y).toPrecision(4)))
+  const gap = Math.hypot(nextX - x, nextY - y)
+  return gap === 0 || gap >= 1 ? gap.toFixed(1) : gap.toPrecision(2)
 }
 
 /** The gap from this row to the next, as the cell shows it; empty where one of the two has no reading. */

@@ -86,7 +86,7 @@ describe('a list of points', () => {
   })
   it('has gaps as the eye measures them', () => {
     // 3, 4, 5: the oldest right angle there is.
-    expect(list.map((_, i) => pointGapText(list, i))).toEqual(['5', '9.014', ''])
+    expect(list.map((_, i) => pointGapText(list, i))).toEqual(['5.0', '9.0', ''])
     expect(pointGapText([list[0]!, { id: 2, frame: '2', reading: '', x: '4' }], 0)).toBe('')
   })
   it('is numbered and joined without losing a point', () => {

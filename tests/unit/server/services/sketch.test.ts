@@ -40,6 +40,15 @@ describe('the headline of a sheet', () => {
     expect(headline(judged(claim, late), claim)).toBe('Already moving at the first drawing')
   })
 
+  it('of several laws, says which frames are meant, and where a joint is broken', () => {
+    const claim: Claim = { ...fallClaim, spans: [{ from: 1, to: 21, law: 'odd-rule' }, { from: 21, to: 41, law: 'steady' }] }
+    const frames = Array.from({ length: 21 }, (_, i) => 1 + 2 * i)
+    const list = (formula: (t: number) => number) => frames.map((frame) => ({ frame, reading: formula(frame - 1) }))
+    // Both halves are falls; then a fall that stops gathering speed with a jump of it.
+    expect(headline(judged(claim, list((t) => t * t)), claim)).toMatch(/^From frame 21 to 41: [a-z]/)
+    expect(headline(judged(claim, list((t) => (t <= 20 ? t * t : 400 + 12 * (t - 20)))), claim)).toMatch(/^At frame 21 the speed jumps from 40\.0 to 12\.0 px per frame$/)
+  })
+
   it('says why a list can’t be told', () => {
     expect(headline(judged(fallClaim, fall(3)), fallClaim)).toMatch(/^3 keys are too few for /)
   })
