@@ -75,6 +75,20 @@ describe('several laws, one after the other', () => {
     await shows(page.locator('dl').first(), 'slow out · steady · slow in, joints at 1009 and 1021')
   })
 
+  it('are found in the list of the newest take, and told', async () => {
+    await hang('CLK-305', cart)
+    expect((await animator.post(`${api('CLK-305')}/takes`, { clientId: uuid(), keys: carriedList })).status).toBe(201)
+    const page = await open(supervisor, `${home('CLK-305')}/claim`)
+    await page.getByRole('radio', { name: 'Several laws, one after the other' }).check()
+    const find = page.getByRole('button', { name: 'Find the joints for me' })
+    await find.focus()
+    await page.keyboard.press('Enter')
+    await shows(page.getByRole('status').filter({ hasText: 'reads as' }), /Take 1 reads as (?:odd rule|slow out) · steady · slow in, joints at 1009 and 1021\./)
+    await page.getByRole('button', { name: 'Change the claim' }).click()
+    await page.waitForURL((address) => address.pathname === home('CLK-305'))
+    expect((await claimOf('CLK-305'))?.spans).toMatchObject(carriedSpans.map(({ from, to, law }) => ({ from, to, law })))
+  })
+
   it('are judged while the list is typed, and want their joints before it is posted', async () => {
     await hang('CLK-302', { ...cart, spans: carriedSpans.map((span) => ({ ...span })) })
     const page = await open(animator, `${home('CLK-302')}/post`)

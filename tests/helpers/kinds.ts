@@ -22,6 +22,7 @@ const inDegrees = { fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance
 
 /** Small swings are a cosine (memory; a textbook's first approximation), here with 6° at most. */
 const swing = (t: number) => 6 * Math.cos((2 * Math.PI * t) / 48)
+const dying = (t: number) => 6 * 0.75 ** (t / 48) * Math.cos((2 * Math.PI * t) / 48)
 /** On the line between falling back and going over, tan(θ/4) grows as e^(kt): put into θ″ = k² sin θ it holds. */
 const toppling = (t: number) => (4 / RADIAN) * Math.atan(Math.tan(0.5 * RADIAN) * Math.exp(0.1 * t))
 /** A thin rod lets go of a brink where cos θ = 3/5 (53.13°, textbook value) and turns on evenly, at θ′ = 2k sin(θ/2). */
@@ -30,6 +31,18 @@ const overEdge = (t: number) => {
   const at = Math.log(Math.tan((leave * RADIAN) / 4) / Math.tan(0.5 * RADIAN)) / rate
   const turning = (2 * rate * Math.sin((leave * RADIAN) / 2)) / RADIAN
   return t <= at ? toppling(t) : leave + turning * (t - at)
+}
+/** Let go at 320 px over the floor; every bounce gives back 0.7 of the speed, so 0.7² of the height. */
+const bouncing = (t: number) => {
+  const [gravity, e] = [2.5, 0.7]
+  let [start, speed, height] = [0, 0, 320]
+  for (let hops = 0; hops < 9; hops++) {
+    const land = start + (speed + Math.sqrt(speed * speed + 2 * gravity * height)) / gravity
+    if (t <= land) break
+    speed = e * (gravity * (land - start) - speed)
+    ;[start, height] = [land, 0]
+  }
+  return height + speed * (t - start) - (gravity * (t - start) ** 2) / 2
 }
 /** Gathers speed over 8 frames, keeps it for 12, loses it over 10: one push at both joints. */
 const carried = (t: number) => (t <= 8 ? 1.5 * t * t : t <= 20 ? 96 + 24 * (t - 8) : 384 + 24 * (t - 20) - 1.2 * (t - 20) ** 2)
@@ -52,8 +65,11 @@ export interface Kind {
 export const kinds: Kind[] = [
   { what: 'a slow in with its stop', request: { ...inPixels, measure: 'distance', law: 'slow-in', keys: readings(14, (t) => 400 - 0.8 * Math.max(0, 22 - t) ** 2) } },
   { what: 'a spin in degrees', request: { ...inDegrees, law: 'spin', keys: readings(14, (t) => 20 + 7.5 * t) } },
+  { what: 'a dying swing', request: { ...inDegrees, slop: 0.1, law: 'swing-decay', keys: readings(73, dying) } },
+  { what: 'a bounce', request: { ...inPixels, measure: 'distance', law: 'bounce', keys: readings(36, bouncing) } },
   { what: 'a rod over the edge', request: { ...inDegrees, law: 'over-edge', keys: readings(26, overEdge) } },
   { what: 'three spans that are given', request: { ...inPixels, measure: 'distance', law: 'odd-rule', spans: carriedSpans.map((span) => ({ ...span })), keys: carriedList } },
+  { what: 'spans that are to be found', request: { ...inPixels, measure: 'distance', law: 'odd-rule', spans: 'find', keys: carriedList } },
   { what: 'points of a swing, pivot found', request: { ...inPixels, measure: 'point', law: 'pendulum', keys: swingPoints } },
   { what: 'points of a swing, pivot given', request: { ...inPixels, measure: 'point', law: 'pendulum', pivot: { x: 500, y: 100 }, keys: swingPoints } },
   { what: 'the same swing with y upwards', request: { ...inPixels, measure: 'point', law: 'pendulum', yAxis: 'up', keys: swingPoints.map(({ frame, x, y }) => ({ frame, x, y: -y })) } },

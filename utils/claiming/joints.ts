@@ -1,8 +1,8 @@
 import { CHECK_LIMITS, requestFor } from '~/utils/contracts/check'
 import type { Take } from '~/utils/contracts/take'
-import { judge } from '~/utils/motion'
+import { findSpans } from '~/utils/motion'
 import { MEASURES } from '~/utils/motion/laws/words'
-import type { CheckRequest, JudgedSpan, Key, PointKey } from '~/utils/motion/types'
+import type { CheckRequest, Key, PointKey } from '~/utils/motion/types'
 import { readForm } from './form'
 import type { ClaimForm } from './form'
 import { rowsOfSpans } from './spans'
@@ -15,9 +15,9 @@ export function postedKeys({ answer, claim }: Pick<Take, 'answer' | 'claim'>): K
     : answer.keys.map(({ frame, reading }) => ({ frame, reading }))
 }
 
-/** Whether a take's list can be divided under this form: points with points, an angle with an angle. */
+/** Whether the judge can look for joints in a take's list under this form: readings of the form's own kind. Points it does not divide. */
 export const suitsTake = (form: Pick<ClaimForm, 'measure'>, take: Take | null): take is Take =>
-  take !== null && take.claim.measure === form.measure && take.answer.keys.length >= CHECK_LIMITS.minKeys
+  take !== null && form.measure !== 'point' && take.claim.measure === form.measure && take.answer.keys.length >= CHECK_LIMITS.minKeys
 
 /** The best division of a list, or why there is none. */
 export type FoundJoints = { rows: SpanRow[]; firstFrame: number } | { rows: null; why: string }
@@ -29,10 +29,7 @@ export function findJoints(form: ClaimForm, take: Take): FoundJoints {
   const { claim, complaints } = readForm({ ...form, divided: false, law, fromRest: false })
   if (!claim) return { rows: null, why: Object.values(complaints)[0] ?? 'The claim is not whole yet.' }
   const request = { ...requestFor(claim, take.fps, postedKeys(take)), spans: 'find' } as CheckRequest
-  const { spans, reason } = judge(request)
-  if (!spans?.length) return { rows: null, why: reason ?? 'No division explains this list better than one law does.' }
+  const spans = findSpans(request)
   if (spans.length < 2) return { rows: null, why: `One law is enough for take ${take.number}: no joint was found.` }
-  return { rows: rowsOfSpans(spans.map(asSpan)), firstFrame: spans[0]!.from }
+  return { rows: rowsOfSpans(spans), firstFrame: spans[0]!.from }
 }
-
-const asSpan = ({ to, law, contact }: JudgedSpan) => ({ to, law, contact })
