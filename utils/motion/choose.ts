@@ -149,7 +149,7 @@ function capped(series: Series, story: Story, sigma: number): number {
 }
 
 /** Lists shorter than this can't spare two drawings at one end. */
-const A_DOZEN = 12
+const FEW = 16
 
 /**
  * In a short list, two drawings in a row off at an end, with none beyond them to hold, are the motion going its own way; unless they stand
@@ -158,7 +158,7 @@ const A_DOZEN = 12
 function leavesAtEnd({ y, n }: Series, off: readonly number[], slop: number): boolean {
   const leaves = (end: number, next: number) =>
     off.includes(end) && off.includes(next) && Math.abs((y[end] as number) - (y[next] as number)) > slop
-  return n < A_DOZEN && (leaves(0, 1) || leaves(n - 1, n - 2))
+  return n < FEW && (leaves(0, 1) || leaves(n - 1, n - 2))
 }
 
 export type Opinion =
