@@ -19,7 +19,7 @@ export function stripPath(keys: readonly StripKey[], claim: StripClaim, width: n
   const onPaper = keys.map(({ point, reading }) => point ?? { x: reading, y: 0 })
   const lawful = keys.map(({ lawPoint }) => lawPoint ?? null)
   const places = [...onPaper, ...lawful.filter((one) => one !== null)]
-  const inside = { x: small ? 16 : Math.min(64, width * 0.12), y: small ? 18 : 52 }
+  const inside = { x: small ? 16 : Math.min(64, width * 0.12), y: small ? 18 : 60 }
   const pivot = path?.kind === 'circle' && !path.nearlyStraight ? path.centre : null
   const room = { x: width - 2 * inside.x, y: (small ? SMALL : TALLEST) - 2 * inside.y }
   const fit = (box: { width: number; height: number }) => Math.min(room.x / Math.max(box.width, 1e-9), room.y / Math.max(box.height, 1e-9))
@@ -95,8 +95,8 @@ function unit(x: number, y: number): { nx: number; ny: number } {
 function beside({ x, y, nx, ny }: Spot): LabelPlace[] {
   const places: LabelPlace[] = []
   for (const side of [1, -1])
-    for (const further of [14, 28, 44, 62]) {
-      const out = side * (TICK.cross - 8 + further)
+    for (const further of [15, 30, 46, 64]) {
+      const out = side * (TICK.cross + further)
       const [dx, dy] = [nx * out, ny * out]
       const anchor: Anchor = dx > 6 ? 'start' : dx < -6 ? 'end' : 'middle'
       places.push({ x: x + dx, y: y + dy + 4, anchor }, { x: x + dx, y: y + dy + 4, anchor: 'middle' })
