@@ -2,7 +2,7 @@ import { scaleLog } from 'd3-scale'
 import { placeLabels, spreadRow, textWidth } from '~/utils/drawing/labels'
 import type { Placed } from '~/utils/drawing/labels'
 import { landmarks, pulls } from '~/utils/drawing/landmarks'
-import { sizeWithInterval } from '~/utils/drawing/verdict'
+import { sizeWithInterval } from '~/utils/motion/sizeWords'
 import { metres, roundFigure, sizeFigure } from '~/utils/drawing/words'
 import type { SizeReading } from '~/utils/motion/types'
 

@@ -1,5 +1,5 @@
 import { figureInWords } from '~/utils/drawing/figureWords'
-import { sizeWithInterval } from '~/utils/drawing/verdict'
+import { sizeWithInterval } from '~/utils/motion/sizeWords'
 import { figure, lawWords, unitSign, verdictWords } from '~/utils/drawing/words'
 import type { CheckResult, JudgedJoint, JudgedSpan } from '~/utils/motion/types'
 
