@@ -2,6 +2,7 @@
 import { inOrder } from './findings'
 import { judgeFlight } from './flight/judgeFlight'
 import { lawCurve } from './line'
+import { judgeBouncing } from './path/bouncing'
 import { courseOf, foundPath, placeAt, slopeOf } from './path/course'
 import type { Course, Trouble } from './path/course'
 import { STILL, without } from './path/nothing'
@@ -25,6 +26,7 @@ const LEVEL = 1
 /** Judges a list of points; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
 export function judgePoints(request: PointCheck): Judgement {
   if (request.law === 'flight') return judgeFlight(request)
+  if (request.law === 'bounce') return judgeBouncing(request)
   const sheet = sheetOf(request)
   if (!(sheet.extent > 2 * request.slop)) return without(request, null, STILL)
   const { course, trouble } = courseOf(request, sheet)
@@ -55,8 +57,8 @@ function alongCourse(request: PointCheck, course: Course): ReadingCheck {
 
 /** On a straight line whose slope the claim leaves open, the drawn slope is the slope. A level line has none, and no gravity to read. */
 function subjectOn(subject: Subject | undefined, course: Course): Subject | undefined {
-  if (course.kind !== 'line' || (subject && (isBody(subject) || subject.slope !== undefined))) return subject
-  const slope = slopeOf(course)
+  if (course.kind !== 'line' || !course.fit || (subject && (isBody(subject) || subject.slope !== undefined))) return subject
+  const slope = slopeOf(course.fit)
   return slope < LEVEL ? undefined : { ...subject, slope }
 }
 
@@ -103,7 +105,7 @@ function onPaper(request: PointCheck, sheet: Sheet, course: Course, check: Readi
 function leftOf(course: Course, keys: readonly JudgedKey[], i: number): number {
   const read = (at: number) => keys[at]?.law ?? keys[at]?.reading ?? 0
   const goes = (read(Math.min(keys.length - 1, i + 1)) - read(Math.max(0, i - 1))) * course.perUnit
-  const off = course.fit.off[i] as number
+  const off = course.off[i] as number
   // The curve's normal points to the right of the way along it.
   return off === 0 ? 0 : goes < 0 ? off : -off
 }

@@ -84,7 +84,7 @@ function swingMotion(chance: Chance, fps: number, size: number): Motion {
 }
 
 /** Distances laid along a straight line or an arc. */
-function laid(chance: Chance, distances: number[], path: 'line' | 'circle'): Omit<Motion, 'turns'> {
+function laid(chance: Chance, distances: number[], path: Motion['path']): Omit<Motion, 'turns'> {
   const start = { x: chance.between(-500, 500), y: chance.between(-500, 500) }
   // Steep enough to fall, or any way at all for what is only moved.
   const heading = chance.between(0, 2 * Math.PI)
@@ -98,12 +98,35 @@ function laid(chance: Chance, distances: number[], path: 'line' | 'circle'): Omi
     }
   }
   const length = Math.max(...distances) - Math.min(...distances)
+  if (path === 'parabola') return bowed(chance, distances, length, start)
   const radius = length / chance.between(0.8, 4)
   return {
     last: distances.length - 1, fastest: 0, path, pivot: start,
     at: (frame) => {
       const angle = heading + between(distances, frame) / radius
       return { x: start.x + radius * Math.cos(angle), y: start.y + radius * Math.sin(angle) }
+    },
+  }
+}
+
+/** Distances along an upright parabola, walked off in steps too small to matter. */
+function bowed(chance: Chance, distances: number[], length: number, start: Place): Omit<Motion, 'turns'> {
+  const bend = chance.one([1, -1]) * chance.between(0.8, 3) / length
+  const from = -length * chance.between(0.1, 0.7)
+  const step = length / 8000
+  const xs = [from]
+  for (let x = from, way = 0; way <= length * 1.01; way += step) {
+    // The midpoint rule.
+    const half = x + step / 2 / Math.hypot(1, 2 * bend * x)
+    x += step / Math.hypot(1, 2 * bend * half)
+    xs.push(x)
+  }
+  const least = Math.min(...distances)
+  return {
+    last: distances.length - 1, fastest: 0, path: 'parabola',
+    at: (frame) => {
+      const x = between(xs, (between(distances, frame) - least) / step)
+      return { x: start.x + x, y: start.y + bend * x * x }
     },
   }
 }
@@ -169,7 +192,7 @@ function motionFor(chance: Chance, family: PointFamily, law: PointLaw, fps: numb
   const other = otherMotion(chance, family, law, frames)
   if (other) return other
   if (['even', 'ease', 'straight', 'slowing', 'falling-line'].includes(family)) return null
-  const path = chance.next() < 0.7 ? 'line' : 'circle'
+  const path = chance.one(['line', 'line', 'line', 'circle', 'parabola'] as const)
   switch (law) {
     case 'topple': return toppleMotion(chance, fps, chance.spread(0.15, 40))
     case 'pendulum': return swingMotion(chance, fps, chance.spread(0.15, 40))
@@ -312,7 +335,7 @@ function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: M
   }
   if (law === 'flight' || family === 'short') return true
   if (law === 'odd-rule' || law === 'steady') {
-    if (motion.path === 'circle' || named) request.path = motion.path === 'circle' ? 'circle' : 'line'
+    if (motion.path !== 'line' || named) request.path = motion.path
     return true
   }
   if (named && motion.pivot) request.pivot = { x: corner.x + motion.pivot.x, y: corner.y + up * motion.pivot.y }

@@ -1,7 +1,9 @@
 /** Which path a list runs along, and how far along it each drawing has come. */
 import { mostMisplaced } from '../hypotheses'
 import { RADIAN } from '../series'
-import type { FoundPath, Law, Place, PointCheck } from '../types'
+import type { FoundPath, Law, PathKind, Place, PointCheck } from '../types'
+import { alongBow, fitBow, placeOnBow } from './bow'
+import type { Bow } from './bow'
 import { bearingOf, centreOf, placeAlong, radiusOf } from './curve'
 import { fitAbout, fitCurve } from './curveFit'
 import type { CurveFit } from './curveFit'
@@ -12,8 +14,12 @@ import type { Sheet } from './sheet'
 export const TURNING: readonly Law[] = ['topple', 'over-edge', 'pendulum', 'swing-decay', 'spin']
 
 export interface Course {
-  kind: 'line' | 'circle'
-  fit: CurveFit
+  kind: PathKind
+  /** The line or circle; null for a parabola. */
+  fit: CurveFit | null
+  bow: Bow | null
+  /** Every drawing's signed distance from the path, positive to the right of the way along it, drawing units. */
+  off: Float64Array
   /** True where the claim named the pivot. */
   given: boolean
   measure: 'angle' | 'distance'
@@ -57,7 +63,20 @@ function distanceCourse(sheet: Sheet, kind: Course['kind'], fit: CurveFit, given
   const along = waysAlong(sheet, fit)
   const way = wayOf(along)
   const first = along[0] as number
-  return { kind, fit, given, measure: 'distance', perUnit: way, atFoot: -way * first, readings: along.map(value => way * (value - first)) }
+  return { kind, fit, bow: null, off: fit.off, given, measure: 'distance', perUnit: way, atFoot: -way * first, readings: along.map(value => way * (value - first)) }
+}
+
+/** Along an upright parabola; null where there is none to be told from a line. */
+function bowCourse(sheet: Sheet, allowed: Float64Array, slop: number): Course | null {
+  const found = fitBow(sheet, allowed, slop)
+  if (!found) return null
+  const along = Float64Array.from({ length: sheet.n }, (_, i) => alongBow(found.bow, placeOf(sheet, i)))
+  const way = wayOf(along)
+  const first = along[0] as number
+  return {
+    kind: 'parabola', fit: null, bow: found.bow, off: found.off, given: false, measure: 'distance',
+    perUnit: way, atFoot: -way * first, readings: along.map(value => way * (value - first)),
+  }
 }
 
 /** Degrees counted anticlockwise from `rest` (where reading 0 stands, degrees anticlockwise from the x axis). */
@@ -74,7 +93,7 @@ export function angleCourse(sheet: Sheet, fit: CurveFit, given: boolean, law: La
   // A swing is read with its sign; what falls or spins is read the way it goes.
   const way = rest === -90 ? 1 : wayOf(angles)
   return {
-    kind: 'circle', fit, given, measure: 'angle', perUnit: way * perUnit, atFoot: way * (foot - rest - turns), readings: angles.map(value => way * value),
+    kind: 'circle', fit, bow: null, off: fit.off, given, measure: 'angle', perUnit: way * perUnit, atFoot: way * (foot - rest - turns), readings: angles.map(value => way * value),
   }
 }
 
@@ -125,40 +144,43 @@ export function courseOf(request: PointCheck, sheet: Sheet): { course: Course | 
   }
   if (path === 'circle') return sound(distanceCourse(sheet, 'circle', fitCurve(sheet, allowed, slop, true), false))
   if (path === 'line') return sound(line())
+  if (path === 'parabola') return sound(bowCourse(sheet, allowed, slop) ?? line())
   const { kind, fit } = lineOrArc(sheet, allowed, slop)
   return sound(distanceCourse(sheet, kind, fit, false))
 }
 
 /** The place on the sheet that a reading stands for. */
 export function placeAt(course: Course, reading: number): Place {
-  return placeAlong(course.fit.curve, (reading - course.atFoot) / course.perUnit)
+  const along = (reading - course.atFoot) / course.perUnit
+  return course.fit ? placeAlong(course.fit.curve, along) : placeOnBow(course.bow as Bow, along)
 }
 
 /** How deep the arc of the list stands over its chord, drawing units. */
-function depthOf({ fit: { curve }, readings, perUnit }: Course): number {
+function depthOf({ curve }: CurveFit, { readings, perUnit }: Course): number {
   const [least, most] = [Math.min(...readings), Math.max(...readings)]
   const half = Math.abs(curve.bend * (most - least) / perUnit) / 2
   return half > Math.PI / 2 ? Infinity : 2 * radiusOf(curve) * Math.sin(half / 2) ** 2
 }
 
 /** True where nobody would see that the arc is not a line. */
-export function nearlyStraight(course: Course, allowance: number): boolean {
-  const { curve, bendSpread } = course.fit
-  return curve.bend === 0 || depthOf(course) <= allowance || Math.abs(curve.bend) <= bendSpread
+function nearlyStraight(fit: CurveFit, course: Course, allowance: number): boolean {
+  const { curve, bendSpread } = fit
+  return curve.bend === 0 || depthOf(fit, course) <= allowance || Math.abs(curve.bend) <= bendSpread
 }
 
 /** The path in the contract's words. `allowed`: what each drawing may be off. */
 export function foundPath(sheet: Sheet, course: Course, allowed: ArrayLike<number>): FoundPath {
-  const { fit, readings } = course
+  const { bow, fit, off: offs, readings } = course
   let [sum, room] = [0, 0]
   for (let i = 0; i < sheet.n; i++) {
-    const [off, allowance] = [fit.off[i] as number, allowed[i] as number]
+    const [off, allowance] = [offs[i] as number, allowed[i] as number]
     sum += allowance > 0 ? Math.min(1e3, Math.abs(off) / allowance) ** 2 : off === 0 ? 0 : 1e6
     room += allowance
   }
   const misfit = Math.sqrt(sum / sheet.n)
-  const centre = centreOf(fit.curve)
-  if (course.kind === 'line' || !centre) {
+  if (bow) return { kind: 'parabola', apex: asPosted(sheet, bow.apex), bend: sheet.up * bow.bend, misfit }
+  const centre = fit && centreOf(fit.curve)
+  if (course.kind === 'line' || !fit || !centre) {
     const to = readings.reduce((furthest, reading) => (Math.abs(reading) > Math.abs(furthest) ? reading : furthest), 0)
     return { kind: 'line', from: asPosted(sheet, placeAt(course, 0)), to: asPosted(sheet, placeAt(course, to)), misfit }
   }
@@ -166,7 +188,7 @@ export function foundPath(sheet: Sheet, course: Course, allowed: ArrayLike<numbe
   const zero = asPosted(sheet, placeAt(course, 0))
   const posted = asPosted(sheet, centre)
   return {
-    kind: 'circle', centre: posted, radius, given: course.given, nearlyStraight: nearlyStraight(course, room / sheet.n), misfit,
+    kind: 'circle', centre: posted, radius, given: course.given, nearlyStraight: nearlyStraight(fit, course, room / sheet.n), misfit,
     zeroAt: Math.atan2(zero.y - posted.y, zero.x - posted.x) / RADIAN,
     // On the sheet y counts up; where the drawing counts it down, the same turn goes the other way.
     counts: course.perUnit * fit.curve.bend * sheet.up > 0 ? 1 : -1,
@@ -174,7 +196,7 @@ export function foundPath(sheet: Sheet, course: Course, allowed: ArrayLike<numbe
 }
 
 /** Degrees between a line and the level. */
-export function slopeOf({ fit: { curve } }: Course): number {
+export function slopeOf({ curve }: CurveFit): number {
   return Math.atan2(Math.abs(Math.cos(curve.normal)), Math.abs(Math.sin(curve.normal))) / RADIAN
 }
 

@@ -135,7 +135,7 @@ export function neighbours(sheet: Sheet, { curve, off, counts }: CurveFit, slop:
 }
 
 /** How badly a curve does when a drawing can count as no worse than clearly off. */
-function doubt(off: Float64Array, allowed: Float64Array): number {
+export function doubt(off: Float64Array, allowed: Float64Array): number {
   let sum = 0
   for (let i = 0; i < off.length; i++) {
     const [d, a] = [off[i] as number, allowed[i] as number]
@@ -145,7 +145,7 @@ function doubt(off: Float64Array, allowed: Float64Array): number {
 }
 
 /** Index triples spread over the list, wide ones first: among them are many that no bad drawing has touched. */
-function triples(n: number): [number, number, number][] {
+export function triples(n: number): [number, number, number][] {
   const out: [number, number, number][] = []
   const seen = new Set<string>()
   for (let round = 0; round < 10; round++) {
@@ -162,7 +162,7 @@ function triples(n: number): [number, number, number][] {
 }
 
 /** What a drawing may be off and still count for the fit: what pencil explains, never more than the allowance. */
-function countedWithin(off: Float64Array, allowed: Float64Array, slop: number): Float64Array {
+export function countedWithin(off: Float64Array, allowed: Float64Array, slop: number): Float64Array {
   const middle = Float64Array.from(off, Math.abs).sort()[off.length >> 1] as number
   // 1.4826 × the median of the distances is the spread of a bell; four spreads are no pencil's.
   const pencil = Math.max(1.5 * slop, 6 * middle)

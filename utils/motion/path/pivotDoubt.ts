@@ -47,17 +47,18 @@ function widened(size: SizeReading, more: number): SizeReading {
 /** A judgement whose size also allows for the pivot. A given pivot, and laws without a pace of their own, are left as they are. */
 export function withPivotDoubt(sheet: Sheet, course: Course, check: ReadingCheck, judged: Judgement): Judgement {
   const { line, result } = judged
-  if (course.given || course.measure !== 'angle' || !line || !result.size || result.size.unit !== 'm' || !(result.size.low > 0)) return judged
+  const { fit } = course
+  if (course.given || course.measure !== 'angle' || !fit || !line || !result.size || result.size.unit !== 'm' || !(result.size.low > 0)) return judged
   const byReading = paceByReading(check, line, result.keys)
   if (!byReading) return judged
   let variance = 0
-  for (const curve of neighbours(sheet, course.fit, check.slop / Math.abs(course.perUnit))) {
-    const moved = angleCourse(sheet, { ...course.fit, curve }, false, check.law)
+  for (const curve of neighbours(sheet, fit, check.slop / Math.abs(course.perUnit))) {
+    const moved = angleCourse(sheet, { ...fit, curve }, false, check.law)
     const change = byReading.reduce((sum, slope, i) => sum + slope * ((moved.readings[i] as number) - (course.readings[i] as number)), 0)
     variance += change * change
   }
   // Sizes go as the pace squared.
-  const kept = course.fit.counts.reduce((sum, count) => sum + count, 0)
+  const kept = fit.counts.reduce((sum, count) => sum + count, 0)
   const more = Math.min(20, 2 * student95(Math.max(1, kept - 3)) * Math.sqrt(variance))
   const size = widened(result.size, more)
   const half = Math.log(size.high / size.value)
