@@ -236,3 +236,80 @@ describe('a flight', () => {
     expect(judge(request('flight', t => [3 * t, 0.2 * t * t])).verdict).toBe('undecided')
   })
 })
+
+describe('along a claimed parabola', () => {
+  it('counts the length of the bow, both ways from the apex', () => {
+    // y = x²/200 from x = −100 to 100: twice the length from the apex, (q√(1 + q²) + asinh q)/4b with q = 1, b = 1/200.
+    const half = (Math.SQRT2 + Math.asinh(1)) * 50
+    const { path, keys, verdict } = judge({ ...request('steady', t => [200 * t - 100, (200 * t - 100) ** 2 / 200], { path: 'parabola' }, 41), tolerance: 0.5 })
+    expect(path).toMatchObject({ kind: 'parabola' })
+    if (path?.kind !== 'parabola') throw new Error('no parabola')
+    expect(path.bend).toBeCloseTo(1 / 200, 9)
+    expect(Math.hypot(path.apex.x, path.apex.y)).toBeLessThan(1e-6)
+    expect(keys[20]!.reading).toBeCloseTo(half, 6)
+    expect(keys.at(-1)!.reading).toBeCloseTo(2 * half, 6)
+    // Even over x is not even along the bow.
+    expect(verdict).toBe('breaks')
+  })
+
+  it('puts readings back onto it, wherever they are', () => {
+    const { result, placesAt } = judgeInDepth(request('odd-rule', t => [30 + 300 * t, 900 * (t - 0.3) ** 2], { path: 'parabola', slop: 40 }))
+    const { path } = result
+    if (path?.kind !== 'parabola') throw new Error('no parabola')
+    for (const { x, y } of placesAt!([990, 1001, 1004.5, 1020, 1030])) {
+      expect(y).toBeCloseTo(path.apex.y + path.bend * (x - path.apex.x) ** 2, 5)
+    }
+  })
+
+  it('tells a drawing off it, and takes a straight row for the line it is', () => {
+    const bow = request('steady', t => [300 * t, 60 * (t - 0.5) ** 2], { path: 'parabola' })
+    const { findings } = judge(changed({ ...bow, tolerance: 0.3 }, 10, ({ y }) => ({ y: y - 30 })))
+    expect(findings.map(({ kind, frames }) => [kind, frames])).toEqual([['off-path', [1011]]])
+    expect(judge(request('steady', t => [300 * t, 100 * t], { path: 'parabola' })).path?.kind).toBe('line')
+  })
+})
+
+describe('a bounce', () => {
+  /** Let go 300 px up, e = 0.8, one hop after another, 10 px sideways a frame; the ground is y = 400. */
+  const e = 0.8
+  const fall = 16
+  const height = (frame: number): number => {
+    if (frame < fall) return 300 * (1 - (frame / fall) ** 2)
+    let [at, length, top] = [fall, 2 * fall * e, 300 * e * e]
+    while (frame > at + length) [at, length, top] = [at + length, length * e, top * e * e]
+    const u = (frame - at) / length
+    return 4 * top * u * (1 - u)
+  }
+  const list: PointCheck = {
+    law: 'bounce', measure: 'point', fps: 24, unit: 'px', slop: 1.5, tolerance: 0.1,
+    keys: Array.from({ length: 60 }, (_, i) => ({ frame: 1 + i, x: 50 + 10 * i, y: Math.round(400 - height(i)) })),
+  }
+
+  it('holds, with its height above the lowest drawing as the reading and its way sideways beside it', () => {
+    const { verdict, findings, keys, reads } = judge(list)
+    expect([verdict, findings]).toEqual(['holds', []])
+    expect(reads).toEqual({ measure: 'distance', unit: 'px' })
+    expect(keys[0]!.reading).toBeGreaterThan(290)
+    expect(keys[20]!.sideways).toMatchObject({ reading: 200, breaks: false })
+    for (const { point, lawPoint } of keys) expect(Math.hypot(point!.x - lawPoint!.x, point!.y - lawPoint!.y)).toBeLessThan(2.5)
+  })
+
+  it('tells a drawing that is only off sideways, and one that is off both ways once', () => {
+    const side = judge(changed(list, 22, ({ x }) => ({ x: x + 20 })))
+    expect(side.findings.map(({ kind, frames }) => [kind, frames])).toEqual([['misplaced', [23]]])
+    expect(side.findings[0]!.text).toMatch(/sideways/)
+    const both = judge(changed(list, 22, ({ x, y }) => ({ x: x + 20, y: y - 25 })))
+    expect(both.findings.map(({ kind, frames }) => [kind, frames])).toEqual([['misplaced', [23]]])
+  })
+
+  it('tells a bounce that slows sideways', () => {
+    const slowing = { ...list, keys: list.keys.map((key, i) => ({ ...key, x: 500 * (1 - Math.exp(-i / 20)) })) }
+    const { findings } = judge(slowing)
+    expect(findings.map(({ kind }) => kind)).toEqual(['wrong-law'])
+    expect(findings[0]!.text).toMatch(/Sideways/)
+  })
+
+  it('may bounce in place', () => {
+    expect(judge({ ...list, keys: list.keys.map(key => ({ ...key, x: 7 })) }).verdict).toBe('holds')
+  })
+})
