@@ -7,7 +7,7 @@ import type { Speed } from './judgeSpeed'
 import { makeEdgeLists } from './lists/edge'
 import { HARD, SIZED, makeLists } from './lists/make'
 import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
-import { makePointLists } from './lists/points'
+import { POINT_PLAN, makePointLists } from './lists/points'
 import { restLists } from './lists/start'
 import { pointTable, scorePoints } from './pointScore'
 import { finderTable, isWhole, scoreFinder, scoreSpans, spanTable } from './spanScore'
@@ -49,6 +49,6 @@ export default async function run(): Promise<void> {
   const divided = makeSpans(24 * SPAN_ROUND, 7)
   console.log(`\n${spanTable(scoreSpans(divided))}`)
   console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)
-  console.log(`\n${pointTable(scorePoints(makePointLists(2024, 7)))}`)
+  console.log(`\n${pointTable(scorePoints(makePointLists(40 * POINT_PLAN.length, 7)))}`)
   console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(1000, 7, ['angle'])))}`)
 }

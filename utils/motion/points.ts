@@ -82,15 +82,16 @@ function onPaper(request: PointCheck, sheet: Sheet, course: Course, check: Readi
   })
   const path = foundPath(sheet, course, allowed)
   const level = course.kind === 'line' && !check.subject
-  const findings = result.verdict === 'undecided'
-    ? result.findings
-    : inOrder(withOffPath(result.findings, keys, ratio, path, request.unit), strained(keys, ratio))
+  // Along a path, pencil moves both ends of a gap by as much as the slop; rounding, which tells more of a row of readings, is in it.
+  const timing = result.findings.filter(({ kind, frames, amount }) =>
+    kind !== 'backward' || amount > 2 * check.slop || keys.some(key => key.frame === frames[0] && key.breaks))
+  const findings = result.verdict === 'undecided' ? [] : inOrder(withOffPath(timing, keys, ratio, path, request.unit), strained(keys, ratio))
   // A timing along a path that isn't there tells no size.
   const lost = findings.some(({ kind, frames }) => kind === 'off-path' && frames.length === 0)
   const points = (list: readonly Key[]): PointKey[] => list.map(({ frame, reading }) => ({ frame, ...point(reading) }))
   const full: CheckResult = {
     ...result, keys, findings, path,
-    verdict: result.verdict === 'holds' && (findings.length > 0 || keys.some(key => key.breaks)) ? 'breaks' : result.verdict,
+    verdict: result.verdict === 'undecided' ? 'undecided' : findings.length > 0 || keys.some(key => key.breaks) ? 'breaks' : 'holds',
     size: level || lost ? null : result.size,
     reads: { measure: course.measure, unit: check.unit },
     ruledPoints: { fit: points(result.ruled.fit), claim: result.ruled.claim && points(result.ruled.claim) },

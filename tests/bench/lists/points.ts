@@ -3,9 +3,10 @@
  * drawing, pencil and rounding in x and y, then at most one fault. Shares no code with the judge.
  */
 import { GRAVITY, swung } from './motion'
+import { bounced, dragged } from './moreMotion'
 import { Chance } from './random'
 
-type PointLaw = 'odd-rule' | 'steady' | 'topple' | 'pendulum' | 'spin' | 'flight'
+type PointLaw = 'odd-rule' | 'slow-in' | 'steady' | 'topple' | 'pendulum' | 'swing-decay' | 'spin' | 'flight' | 'bounce'
 
 export interface MadePoints {
   family: string
@@ -81,6 +82,31 @@ function swingMotion(chance: Chance, fps: number, size: number): Motion {
   const swings = chance.between(0.6, 2)
   const frames = Math.round(swings * 2 * Math.PI / k * (1 + amplitude * amplitude / 16) * fps)
   return { ...turning(chance, swung(-1, k * k, start, turn, fps, frames), true), turns: true, size, covers: swings, fastest: k / fps }
+}
+
+function dyingMotion(chance: Chance, fps: number, size: number): Motion {
+  const k = Math.sqrt(GRAVITY / size)
+  const [amplitude, share] = [chance.between(18, 50) * Math.PI / 180, chance.between(0.04, 0.15)]
+  const swings = chance.between(1.5, 4)
+  const angles = dragged(k * k, -Math.log(1 - share), false, chance.one([amplitude, -amplitude]), 0, fps, Math.round(swings * 2 * Math.PI / k * fps))
+  return { ...turning(chance, angles, true), turns: true, size, covers: swings, fastest: k / fps }
+}
+
+/** Let go at some height, off sideways all the while. */
+function bounceMotion(chance: Chance, fps: number): Motion | null {
+  const [restitution, drop] = [chance.between(0.45, 0.9), chance.spread(0.3, 8)]
+  const scale = chance.spread(150, 1000) / drop
+  const fall = Math.sqrt(2 * drop / GRAVITY) * fps
+  if (2 * restitution * fall < 12) return null
+  const frames = Math.round(fall * (1 + 2 * restitution + chance.between(0.4, 1.6) * restitution * restitution))
+  const { heights } = bounced(drop, 0, restitution, fps, frames)
+  const [start, perFrame] = [chance.between(-500, 500), chance.one([0, 1, -1]) * chance.spread(2, 14)]
+  return { last: frames, turns: true, fastest: 0, path: 'line', at: frame => ({ x: start + perFrame * frame, y: scale * between(heights, frame) }) }
+}
+
+function slowingMotion(chance: Chance, frames: number, path: Motion['path']): Motion {
+  const [stop, travel] = [frames * chance.between(0.65, 1), chance.spread(120, 2000)]
+  return { ...laid(chance, Array.from({ length: frames + 1 }, (_, i) => travel * (1 - Math.max(0, 1 - i / stop) ** 2)), path), turns: false }
 }
 
 /** Distances laid along a straight line or an arc. */
@@ -196,6 +222,9 @@ function motionFor(chance: Chance, family: PointFamily, law: PointLaw, fps: numb
   switch (law) {
     case 'topple': return toppleMotion(chance, fps, chance.spread(0.15, 40))
     case 'pendulum': return swingMotion(chance, fps, chance.spread(0.15, 40))
+    case 'swing-decay': return dyingMotion(chance, fps, chance.spread(0.15, 40))
+    case 'bounce': return bounceMotion(chance, fps)
+    case 'slow-in': return slowingMotion(chance, frames, path)
     case 'flight': return throwMotion(chance, frames, fps)
     case 'odd-rule': {
       const { distances, turns, perFrame } = fallDistances(chance, frames)
@@ -253,7 +282,8 @@ function attempt(chance: Chance, family: PointFamily, law: PointLaw): MadePoints
   if (!motion) return null
   let at = [0]
   for (let next = uneven ? chance.whole(1, 3) : every; next <= motion.last; next += uneven ? chance.whole(1, 3) : every) at.push(next)
-  if (at.length > 50) at = at.slice(at.length - 50)
+  // A dying swing shows its pivot best while it is wide.
+  if (at.length > 50) at = law === 'swing-decay' ? at.slice(0, 50) : at.slice(-50)
   if (at.length < 9) return null
   const longest = Math.max(...at.slice(1).map((frame, i) => frame - (at[i] as number)))
   if (motion.fastest * longest > 0.75) return null
@@ -333,8 +363,8 @@ function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: M
     request.path = 'line'
     return true
   }
-  if (law === 'flight' || family === 'short') return true
-  if (law === 'odd-rule' || law === 'steady') {
+  if (law === 'flight' || law === 'bounce' || family === 'short') return true
+  if (law === 'odd-rule' || law === 'steady' || law === 'slow-in') {
     if (motion.path !== 'line' || named) request.path = motion.path
     return true
   }
@@ -370,6 +400,8 @@ export const POINT_PLAN: [PointFamily, PointLaw][] = [
   ['clean', 'odd-rule'], ['clean', 'steady'], ['clean', 'topple'], ['clean', 'pendulum'], ['clean', 'spin'], ['clean', 'flight'], ['clean', 'flight'],
   ['misplaced', 'odd-rule'], ['misplaced', 'steady'], ['misplaced', 'topple'], ['misplaced', 'pendulum'], ['misplaced', 'flight'],
   ['off-path', 'odd-rule'], ['off-path', 'steady'], ['off-path', 'topple'], ['off-path', 'pendulum'], ['off-path', 'spin'], ['off-path', 'flight'],
+  ['clean', 'slow-in'], ['clean', 'swing-decay'], ['clean', 'bounce'], ['misplaced', 'slow-in'], ['misplaced', 'bounce'],
+  ['off-path', 'slow-in'], ['off-path', 'swing-decay'], ['held', 'swing-decay'], ['held', 'bounce'],
   ['held', 'odd-rule'], ['held', 'topple'], ['held', 'pendulum'], ['held', 'flight'],
   ['skipped', 'odd-rule'], ['skipped', 'topple'], ['skipped', 'pendulum'], ['skipped', 'flight'],
   ['wrong-scale', 'odd-rule'], ['wrong-scale', 'topple'], ['wrong-scale', 'pendulum'], ['wrong-scale', 'flight'],

@@ -1,10 +1,10 @@
-/** The judge's bars on a fixed set of lists of points (tests/bench/lists/points.ts): eight rounds of all families. */
+/** The judge's bars on a fixed set of lists of points (tests/bench/lists/points.ts): six rounds of all families. */
 import { describe, expect, it } from 'vitest'
 import { POINT_PLAN, makePointLists } from '../../bench/lists/points'
 import { scorePoints } from '../../bench/pointScore'
 
 describe('made lists of points', () => {
-  const rounds = 8
+  const rounds = 6
   const score = scorePoints(makePointLists(rounds * POINT_PLAN.length, 20263))
 
   it('finds the right kind at the right frames in 98 of 100', () => {
@@ -13,7 +13,7 @@ describe('made lists of points', () => {
   })
 
   it('does so in every family', () => {
-    // Eight lists a family and 95 in 100 leave room for no more than one slip.
+    // Six lists a family and 95 in 100 leave room for no more than one slip.
     for (const row of score.rows) expect(row.lists - row.right, row.family).toBeLessThanOrEqual(1)
   })
 

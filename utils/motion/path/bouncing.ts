@@ -3,9 +3,12 @@
  * One cause is told once: what shows in both ways is told by the height.
  */
 import { inOrder } from '../findings'
-import { lawCurve } from '../line'
+import { lawCurve, ruledList, traceLine } from '../line'
+import type { Line } from '../line'
+import { judgeKeys } from '../perKey'
 import { judgeReadings } from '../readings'
 import type { Judgement } from '../readings'
+import { seriesOf } from '../series'
 import type { CheckResult, Finding, JudgedKey, Key, Place, PointCheck, PointKey, ReadingCheck } from '../types'
 import { STILL, without } from './nothing'
 import { asPosted, sheetOf } from './sheet'
@@ -40,8 +43,8 @@ export function judgeBouncing(request: PointCheck): Judgement {
     ({ law, fps, unit, slop, tolerance, measure: 'distance', keys: request.keys.map(({ frame }, i) => ({ frame, reading: readings[i] as number })) })
   const up: ReadingCheck = { ...row('bounce', sheet.y.map(y => y - low)), ...(start && { start }), ...(subject && { subject }) }
   const across = row('steady', sheet.x.map(x => x - firstX))
-  const height = judgeReadings(up)
   const sideways = judgeReadings(across)
+  const height = heightOf(up, sideways)
   const sideLine = sideways.line
   // A ball that bounces in place, or one that hardly travels, has no sideways motion to be wrong about.
   const travels = sideways.result.verdict !== 'undecided' && sideLine !== null
@@ -77,6 +80,40 @@ export function judgeBouncing(request: PointCheck): Judgement {
     ruledPoints: { fit: line ? points(1) : [], claim: line && result.ruled.claim ? points(height.pace ?? 1) : null },
   }
   return line ? { ...height, result: full, along: up, placesAt } : { ...height, result: full, along: up }
+}
+
+/**
+ * The height judged. Between two contacts a held drawing could as well be another bounce; sideways it can't hide. So a drawing that sideways
+ * shows as held or skipped is taken for that where the height, with its time put right, has less to be blamed for.
+ */
+function heightOf(up: ReadingCheck, sideways: Judgement): Judgement {
+  const plain = judgeReadings(up)
+  const shift = sideways.result.findings.find(({ kind }) => SHIFTS.includes(kind))
+  const at = shift ? up.keys.findIndex(key => key.frame === shift.frames[0]) : -1
+  if (!shift || at < 1 || plain.result.verdict !== 'breaks') return plain
+  const late = shift.kind === 'held' ? shift.amount : -shift.amount
+  const timed = up.keys.map((key, i) => ({ key, frame: i >= at ? Math.round(key.frame - late) : key.frame }))
+  // The drawing that is held stands for one that has been seen already.
+  const kept = timed.filter(({ frame }, i) => i !== at || frame > (timed[i - 1]?.frame ?? -Infinity))
+  const righted: ReadingCheck = { ...up, keys: kept.map(({ key, frame }) => ({ frame, reading: key.reading })) }
+  const { line, pace, result } = judgeReadings(righted)
+  const frameOf = new Map(kept.map(({ key, frame }) => [frame, key.frame]))
+  const findings = result.findings.map(finding => ({ ...finding, frames: finding.frames.map(frame => frameOf.get(frame) ?? frame) }))
+  if (!line || result.verdict === 'undecided' || findings.some(({ kind }) => SHIFTS.includes(kind)) || findings.length >= plain.result.findings.length) return plain
+  // The line runs with the longer side, as everywhere.
+  const lag = up.keys.length - at > at ? late : 0
+  const span = (list: ReadingCheck) => (list.keys.at(-1)?.frame ?? 0) - (list.keys[0]?.frame ?? 0)
+  const ours: Line = { ...line, numbers: line.numbers.map((value, p) => inSpans(value, p, span(righted) / span(up))), lag: lag / span(up) }
+  const trace = traceLine(seriesOf(up), ours, seriesOf(up).x)
+  return {
+    line: ours, pace,
+    result: { ...result, keys: judgeKeys(up, seriesOf(up), trace), findings: [shift, ...findings], verdict: 'breaks', ruled: { ...result.ruled, fit: ruledList(seriesOf(up), ours, up) } },
+  }
+}
+
+/** A bounce's numbers told over another span: times shrink with it, readings per span² grow with its square. */
+function inSpans(value: number, p: number, ratio: number): number {
+  return p === 0 || p === 3 ? value * ratio : p === 2 ? value / (ratio * ratio) : value
 }
 
 /** The reading of the drawing nearest to a frame. */

@@ -30,7 +30,7 @@ function paceByReading(check: ReadingCheck, line: Line, keys: readonly JudgedKey
       a[size * p + q] = counts.reduce((sum, count, i) => sum + count * ((columns[p] as Float64Array)[i] as number) * ((columns[q] as Float64Array)[i] as number), 0)
     }
   }
-  const row = size > 3 ? null : solve3(a, Float64Array.from({ length: size }, (_, p) => (p === 0 ? 1 : 0)), size)
+  const row = solve3(a, Float64Array.from({ length: size }, (_, p) => (p === 0 ? 1 : 0)), size)
   return row && Float64Array.from(counts, (count, i) => count * columns.reduce((sum, column, p) => sum + (row[p] as number) * (column[i] as number), 0))
 }
 
