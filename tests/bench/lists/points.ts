@@ -100,7 +100,8 @@ function bounceMotion(chance: Chance, fps: number): Motion | null {
   if (2 * restitution * fall < 12) return null
   const frames = Math.round(fall * (1 + 2 * restitution + chance.between(0.4, 1.6) * restitution * restitution))
   const { heights } = bounced(drop, 0, restitution, fps, frames)
-  const [start, perFrame] = [chance.between(-500, 500), chance.one([0, 1, -1]) * chance.spread(2, 14)]
+  // Of a bounce in place a hold in the first fall can't be told from a lower start.
+  const [start, perFrame] = [chance.between(-500, 500), chance.one([1, -1]) * chance.spread(3, 14)]
   return { last: frames, turns: true, fastest: 0, path: 'line', at: frame => ({ x: start + perFrame * frame, y: scale * between(heights, frame) }) }
 }
 
@@ -349,13 +350,22 @@ function attempt(chance: Chance, family: PointFamily, law: PointLaw): MadePoints
     law, fps, measure: 'point', unit: 'px', slop, tolerance: 0.1, yAxis,
     keys: posted.map((place, i) => ({ frame: frameOf(i), ...place })),
   }
-  if (!claimPath(chance, family, law, motion, request, corner, up)) return null
+  const deep = depthOf(exact) > 15 * slop
+  if (!claimPath(chance, family, law, motion, request, corner, up, deep)) return null
   if (!claimSize(chance, family, law, motion, request, truth)) return null
   return { family: `${law}: ${family}`, request, truth }
 }
 
+/** How far the drawings stand off the line from the first of them to the one furthest from it. */
+function depthOf(places: Place[]): number {
+  const [first = { x: 0, y: 0 }] = places
+  const furthest = places.reduce((most, place) => (apart(place, first) > apart(most, first) ? place : most), first)
+  const length = apart(furthest, first)
+  return Math.max(...places.map(({ x, y }) => Math.abs((x - first.x) * (furthest.y - first.y) - (y - first.y) * (furthest.x - first.x)) / length))
+}
+
 /** What the claim says of the path: as little as the law lets it, or its kind, or its pivot. */
-function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: Motion, request: MadePoints['request'], corner: Place, up: number): boolean {
+function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: Motion, request: MadePoints['request'], corner: Place, up: number, deep: boolean): boolean {
   const named = chance.next() < 0.5
   if (family === 'no-path') {
     // An arc that is claimed to be a line.
@@ -368,7 +378,8 @@ function claimPath(chance: Chance, family: PointFamily, law: PointLaw, motion: M
     if (motion.path !== 'line' || named) request.path = motion.path
     return true
   }
-  if (named && motion.pivot) request.pivot = { x: corner.x + motion.pivot.x, y: corner.y + up * motion.pivot.y }
+  // Nobody finds the pivot of an arc that is hardly one.
+  if ((named || !deep) && motion.pivot) request.pivot = { x: corner.x + motion.pivot.x, y: corner.y + up * motion.pivot.y }
   return true
 }
 

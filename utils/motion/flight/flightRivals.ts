@@ -63,7 +63,7 @@ function brokenRule({ sheet, care }: Flown, { fit }: FlightStory): FlightFault {
 
 /**
  * Keeps to the flight, doubts it, or says that the list can't tell. `agrees`: the claimed gravity itself would not be seen in so short a
- * list. `down`: gravity comes out pointing down.
+ * list. `down`: gravity may well point down.
  */
 export function flightOpinion(flown: Flown, story: FlightStory, told: readonly FlightStory[], agrees: boolean, down: boolean): FlightOpinion {
   const { sheet, series, care } = flown

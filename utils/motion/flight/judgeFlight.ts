@@ -18,6 +18,7 @@ import type { CheckResult, Figure, Finding, JudgedKey, Place, PointCheck, PointK
 import { flightDrawingFinding, notFlightFinding } from './flightFindings'
 import { flightOpinion } from './flightRivals'
 import { flightStories } from './flightStories'
+import type { Care } from '../hypotheses'
 import type { FlightStory, Flown } from './flightStories'
 import { flightPath, offParabola } from './parabola'
 import { freeOf, planarAllowances, valueAt } from './planar'
@@ -46,10 +47,13 @@ export function judgeFlight(request: PointCheck): Judgement {
   const posted = Float64Array.from(request.keys.flatMap(({ x, y }) => [x, y]))
   const flown: Flown = { sheet, series, care: { slop: request.slop, tolerance: request.tolerance, least: roundingSpread(posted) } }
   const { story, plain, told } = flightStories(flown)
-  const scale = flightScale(request, series, story, flown)
-  const { reach } = scale
-  const agrees = scale.pace !== null && Math.abs(scale.pace ** 2 - 1) <= reach
-  const opinion = flightOpinion(flown, story, told, agrees, fallOf(story.fit, series).down)
+  // Pencil alone can spread still drawings over the slop; what has to move is the line.
+  if (!(Math.hypot(widthOf(story.fit.x), widthOf(story.fit.y)) > 2 * request.slop)) return without(request, null, STILL)
+  const fall = fallOf(story, series, flown.care)
+  const scale = flightScale(request, fall)
+  // At some claimed scales no curve could be seen in so short a time: the list agrees with its claim.
+  const agrees = scale.pace !== null && Math.abs(scale.pace ** 2 - 1) <= scale.reach
+  const opinion = flightOpinion(flown, story, told, agrees, fall.fall + fall.half >= 0)
   const lawless = opinion.fault !== null && opinion.fault !== 'too-short'
   const line = lineOf(lawless ? plain : story, sheet, series)
   const keys = keysOf(request, flown, line)
@@ -171,33 +175,34 @@ function faults(request: PointCheck, { sheet, series }: Flown, story: FlightStor
   return inOrder(found, keys)
 }
 
-/** Drawing units per second², downward, and whether it may point down at all. */
-function fallOf({ cy }: PlanarFit, { span }: Series): { fall: number, down: boolean } {
-  const fall = -8 * (cy[2] as number) / (span * span)
-  return { fall, down: fall >= 0 }
+/** Drawing units per second², downward, with its 95 % half-width; Infinity where the list doesn't settle it. */
+function fallOf({ fit, out }: FlightStory, { n, span }: Series, { least }: Care): { fall: number, half: number } {
+  const perNumber = 8 / (span * span)
+  const free = 2 * (n - out.length) - freeOf(fit)
+  const row = solve3(fit.normalY, [0, 0, 1], 3)
+  const sigma = Math.sqrt(Math.max(fit.cost / free, least * least))
+  const half = free < 1 || !row ? Infinity : perNumber * sigma * Math.sqrt(row[2] as number) * student95(free)
+  return { fall: -perNumber * (fit.cy[2] as number), half }
 }
 
-/** The one gravity as a size: drawing units per metre, or m/s² where the scale is claimed. */
-function flightScale(request: PointCheck, series: Series, { fit, out }: FlightStory, { care }: Flown): Scale {
+/** The one gravity as a size: drawing units per metre, or m/s² where the scale is claimed. None where it points up. */
+function flightScale(request: PointCheck, { fall, half }: { fall: number, half: number }): Scale {
   const subject = request.subject && !isBody(request.subject) ? request.subject : undefined
   const gravity = gravityOf(request.subject)
   const perMetre = subject?.unitsPerMetre
-  const a = Math.abs(fallOf(fit, series).fall)
-  const free = 2 * (series.n - out.length) - freeOf(fit)
-  const row = solve3(fit.normalY, [0, 0, 1], 3)
-  const nothing: Scale = { size: null, pace: null, spread: Infinity, reach: Infinity, claimed: null }
-  if (!(a > 0) || free < 1 || !row) return nothing
-  const sigma = Math.sqrt(Math.max(fit.cost / free, care.least ** 2))
-  const half = Math.min(a * 1e6, 8 / (series.span * series.span) * sigma * Math.sqrt(row[2] as number) * student95(free))
+  if (!(fall > 0) || half === Infinity) return { size: null, pace: null, spread: Infinity, reach: Infinity, claimed: null }
+  const wide = Math.min(half, 1e6 * fall)
   const unit = perMetre ?? gravity
   return {
-    size: { value: a / unit, low: Math.max(0, a - half) / unit, high: (a + half) / unit, unit: perMetre === undefined ? `${request.unit}/m` : 'm/s²' },
-    pace: perMetre === undefined ? null : Math.sqrt(perMetre * gravity / a),
-    spread: half < a ? -0.5 * Math.log(1 - half / a) : Infinity,
-    reach: half / a,
+    size: { value: fall / unit, low: Math.max(0, fall - wide) / unit, high: (fall + wide) / unit, unit: perMetre === undefined ? `${request.unit}/m` : 'm/s²' },
+    pace: perMetre === undefined ? null : Math.sqrt(perMetre * gravity / fall),
+    spread: wide < fall ? -0.5 * Math.log(1 - wide / fall) : Infinity,
+    reach: wide / fall,
     claimed: perMetre === undefined ? null : gravity,
   }
 }
+
+const widthOf = (values: Float64Array) => Math.max(...values) - Math.min(...values)
 
 /** Slower sideways over the last third of the list than over the first. */
 function slows({ sheet, series }: Flown): boolean {
