@@ -6,7 +6,7 @@ import type { Point } from '~/utils/drawing/strokes'
 import { px } from '~/utils/drawing/strokes'
 import { lineTrack } from '~/utils/drawing/track'
 
-const MOST_LANES = 4
+const MOST_LANES = 6
 const ABOVE_PLAIN = 26
 const ABOVE_BROKEN = 74
 const BELOW = 40
