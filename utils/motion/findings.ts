@@ -69,6 +69,14 @@ export function wrongReleaseFinding({ angle, leaves }: { angle: number, leaves: 
   }
 }
 
+/** Let go where the body would have left, but dead sideways. `key`: the first drawing after that. */
+export function straightDownFinding({ frame }: JudgedKey): Finding {
+  return {
+    kind: 'wrong-release', frames: [frame], amount: 0,
+    text: `Falls straight down the side from frame ${frame}: off the edge a body keeps its sideways speed.`,
+  }
+}
+
 /** `before`: frames before the first drawing at which the line stands still, null where it never does; `moving`: it isn't waiting for a later start. */
 export function notAtRestFinding(first: JudgedKey, before: number | null, used: number, moving: boolean): Finding {
   const finding: Omit<Finding, 'text'> = { kind: 'not-at-rest', frames: [first.frame], amount: before ?? 0 }

@@ -1,4 +1,5 @@
 /** A list of points on the drawing: its path of action found, its timing judged along it. */
+import { judgeBrink } from './brink/judgeBrink'
 import { inOrder } from './findings'
 import { judgeFlight } from './flight/judgeFlight'
 import { lawCurve } from './line'
@@ -27,6 +28,7 @@ const LEVEL = 1
 export function judgePoints(request: PointCheck): Judgement {
   if (request.law === 'flight') return judgeFlight(request)
   if (request.law === 'bounce') return judgeBouncing(request)
+  if (request.law === 'over-edge') return judgeBrink(request)
   const sheet = sheetOf(request)
   if (!(sheet.extent > 2 * request.slop)) return without(request, null, STILL)
   const { course, trouble } = courseOf(request, sheet)

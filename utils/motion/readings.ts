@@ -14,7 +14,7 @@ import type { Line } from './line'
 import { fromStandstill, outset } from './outset'
 import { judgeKeys, unjudged } from './perKey'
 import { claimFromRest } from './claimFromRest'
-import { allInTheAir, wrongRelease } from './release'
+import { IN_THE_AIR, allInTheAir, wrongRelease } from './release'
 import type { OwnRelease } from './release'
 import { roundingSpread, roundingStep, seriesOf } from './series'
 import type { Series } from './series'
@@ -44,7 +44,6 @@ export interface Judgement {
 }
 
 const STILL = 'Nothing moves further than the slop, so there is nothing to judge.'
-const IN_THE_AIR = 'Every drawing is off the brink already: nothing of the arc is left to judge.'
 const SCALE_FLOOR = 0.03
 const TURNING: readonly Law[] = ['pendulum', 'swing-decay', 'bounce']
 

@@ -13,6 +13,7 @@ import { uncertainty } from './size'
 import type { Considered } from './start'
 import type { Figure, ReadingCheck } from './types'
 
+export const IN_THE_AIR = 'Every drawing is off the brink already: nothing of the arc is left to judge.'
 /** Drawings that must lie on the arc, and after it, before anything is said of where the one became the other. */
 const LEAST_BEFORE = 3
 const LEAST_AFTER = 2
@@ -93,7 +94,7 @@ function breaksTheLaw(series: Series, { fit, shift }: Story, care: Care): boolea
 }
 
 /** d value / d number, by central differences. */
-function slopes(numbers: Float64Array, value: (numbers: Float64Array) => number): Float64Array {
+export function slopes(numbers: Float64Array, value: (numbers: Float64Array) => number): Float64Array {
   return numbers.map((number, p) => {
     const step = STEP * Math.max(1, Math.abs(number))
     const [more, less] = [numbers.slice(), numbers.slice()]

@@ -106,7 +106,7 @@ export interface Candidate { shift: Shift, cost: number, numbers: Float64Array }
  * The most promising places for a shift of each of `sizes` (spans), given a fit to begin from: for each size the best two, none within
  * two keys of an end (a single late drawing at an end is a misplaced one). Running sums make each size one pass over the list.
  */
-export function bestShifts(series: Series, fit: Fit, y: Float64Array, sizes: readonly number[]): Candidate[] {
+export function bestShifts(series: Series, fit: Fit, y: Float64Array, sizes: readonly number[], together = 1): Candidate[] {
   const n = y.length
   const size = fit.model.size
   const width = widthFor(size)
@@ -120,7 +120,7 @@ export function bestShifts(series: Series, fit: Fit, y: Float64Array, sizes: rea
   for (const by of sizes) {
     const late = runningSums(series, fit, y, series.x.map(at => at - by))
     const best: Candidate[] = []
-    for (let at = 2; at <= n - 2; at++) {
+    for (let at = 2 * together; at <= n - 2 * together; at += together) {
       const cut = at * width
       for (let k = 0; k < width; k++) total[k] = (early[cut + k] as number) + (late[last + k] as number) - (late[cut + k] as number)
       let slot = 0

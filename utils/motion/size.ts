@@ -6,7 +6,7 @@ import { accelerationOf } from './laws/oddRule'
 import type { Series } from './series'
 import { solve3 } from './solve'
 import { student95 } from './student'
-import type { BodySubject, Law, ReadingCheck, PathSubject, SizeReading } from './types'
+import type { BodySubject, Law, PathSubject, ReadingCheck, SizeReading, Subject } from './types'
 
 export interface Scale {
   size: SizeReading | null
@@ -55,16 +55,16 @@ function halfWidth(fit: Fit, index: number, kept: number, least: number): number
 
 /** `kept`: drawings that the fit counts; `least`: spread left by rounding. */
 export function scaleOf(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
-  if (TURNING.includes(request.law)) return bodyScale(request, series, fit, kept, least)
+  if (TURNING.includes(request.law)) return bodyScale(request.law, request.subject, series, fit, kept, least)
   if ((request.law === 'odd-rule' && request.measure !== 'angle') || request.law === 'bounce') return pathScale(request, series, fit, kept, least)
   return NOTHING
 }
 
-function bodyScale(request: ReadingCheck, series: Series, fit: Fit, kept: number, least: number): Scale {
-  const { subject } = request
+/** A turning body's size by k² = g/L, ln κ being the fit's first number. */
+export function bodyScale(law: Law, subject: Subject | undefined, series: Series, fit: Fit, kept: number, least: number): Scale {
   const claimed = subject && isBody(subject) ? subject : null
   // With no body named, a topple is read as a rod on its foot and a swing as a bob on a cord: the plainest of either.
-  const body: BodySubject = claimed ?? (request.law === 'pendulum' || request.law === 'swing-decay' ? { shape: 'bob', length: 1 } : { shape: 'rod', height: 1 })
+  const body: BodySubject = claimed ?? (law === 'pendulum' || law === 'swing-decay' ? { shape: 'bob', length: 1 } : { shape: 'rod', height: 1 })
   const gravity = gravityOf(subject)
   const k = Math.exp(fit.numbers[0] as number) / series.span
   const value = sizeForLength(body, gravity / (k * k))

@@ -1,11 +1,11 @@
-/** Small symmetric systems for the fits: at most six unknowns. */
+/** Small symmetric systems for the fits: at most seven unknowns. */
 
 // Work space: the judge runs one sum at a time, and these are asked for thousands of times per list.
-const scale = new Float64Array(6)
-const l = new Float64Array(36)
+const scale = new Float64Array(7)
+const l = new Float64Array(49)
 
 /**
- * Solves A·s = b into `out`, A symmetric positive definite, `size` × `size` in row order, size at most 6. False where A is not (within
+ * Solves A·s = b into `out`, A symmetric positive definite, `size` × `size` in row order, size at most 7. False where A is not (within
  * rounding): the caller then knows that the list doesn't settle all its unknowns. Cholesky's factorisation on the matrix scaled to a
  * unit diagonal.
  */

@@ -69,7 +69,7 @@ export function distanceTo(sheet: Pick<Sheet, 'x' | 'y'>, fit: PlanarFit, i: num
 }
 
 /** slop + tolerance × mean of the fit's gaps on either side of each drawing from..to (exclusive); at an end, the one gap. */
-export function planarAllowances({ x, y }: PlanarFit, slop: number, tolerance: number, from = 0, to = x.length): Float64Array {
+export function planarAllowances({ x, y }: Pick<PlanarFit, 'x' | 'y'>, slop: number, tolerance: number, from = 0, to = x.length): Float64Array {
   const gap = (i: number) => Math.hypot((x[i] as number) - (x[i - 1] as number), (y[i] as number) - (y[i - 1] as number))
   return Float64Array.from({ length: to - from }, (_, k) => {
     const i = from + k

@@ -1,0 +1,120 @@
+/** Whether drawings of a centre keep to the law of a body over a brink, let go of it wrongly, or are something else. */
+import { DOUBT, DOUBT_WITH_FAULTS, UNNOTICED } from '../choose'
+import { fitPlanar, freeOf, planarAllowances } from '../flight/planar'
+import type { Degrees } from '../flight/planar'
+import type { Law, LawMisfit } from '../types'
+import { LOG, OWN, brinkPlaces, releaseOfBrink } from './brinkModel'
+import type { Letting } from './brinkModel'
+import { brinkCost, brinkPencil, brinkStories, likeliestOf, misfitOf, rowsOf, tooMany } from './brinkStories'
+import type { BrinkStory, Tipped } from './brinkStories'
+
+/** Beyond this, nats, a drawing counts as a lone bad one, not as evidence against a law. */
+const MOST_PER_DRAWING = 7
+const LEAST_BEFORE = 3
+const LEAST_AFTER = 2
+
+export interface BrinkOpinion {
+  kind: 'law-holds' | 'wrong-release' | 'wrong-law' | 'in-the-air'
+  story: BrinkStory
+  /** With nothing assumed. */
+  plain: BrinkStory
+  readsAs: LawMisfit[]
+  /** For a wrong law: what it reads as. */
+  reads: Law | null
+}
+
+interface Rival { law: Law, misfit: number, charge: number, fits: boolean }
+
+/** A flight or an even move, both of them polynomials. */
+function planarRival({ sheet, series, care }: Tipped, law: Law, degrees: Degrees, sigma: number): Rival {
+  const fit = fitPlanar(sheet, series.x, new Float64Array(sheet.n).fill(1), degrees)
+  const allowed = planarAllowances(fit, care.slop, care.tolerance)
+  let [sum, breaking, charge] = [0, 0, 0]
+  for (let i = 0; i < sheet.n; i++) {
+    const off = Math.hypot((sheet.x[i] as number) - (fit.x[i] as number), (sheet.y[i] as number) - (fit.y[i] as number))
+    const strained = off === 0 ? 0 : (allowed[i] as number) > 0 ? Math.min(1e3, off / (allowed[i] as number)) : 1e3
+    sum += strained * strained
+    if (strained > 1) breaking++
+    charge += Math.min(MOST_PER_DRAWING, off * off / (2 * sigma * sigma))
+  }
+  const misfit = Math.sqrt(sum / sheet.n)
+  return { law, misfit, charge: charge + 0.5 * freeOf(fit) * Math.log(2 * sheet.n), fits: misfit <= 1 && breaking <= 0.1 * sheet.n }
+}
+
+/** Null where no search could begin. */
+export function brinkOpinion(tipped: Tipped): BrinkOpinion | null {
+  const { sheet, series, care } = tipped
+  const { n } = sheet
+  const told = brinkStories(tipped, 'law')
+  const plain = told?.[0]
+  if (!told || !plain) return null
+  const judged = (stories: readonly BrinkStory[], sigma: number) => {
+    const story = likeliestOf(tipped, stories, sigma)
+    return { story, cost: brinkCost(story, sigma, n), misfit: misfitOf(story) }
+  }
+  let sigma = brinkPencil(told, n, care)
+  let law = judged(told, sigma)
+  const clean = law.story.bad.length === 0 && !law.story.shift && law.misfit <= UNNOTICED
+  // Other ways of letting go are only heard where something is wrong at all.
+  const ways: BrinkStory[][] = clean ? [] : (['own', 'straight'] as const).flatMap(letting => heard(tipped, letting, law.story))
+  sigma = Math.min(sigma, ...ways.map(stories => brinkPencil(stories, n, care)))
+  law = judged(told, sigma)
+  const other = ways.map(stories => judged(stories, sigma))
+    .filter(({ story }) => !tooMany(story, n) && shown(tipped, story))
+    .sort((a, b) => a.cost - b.cost)[0]
+
+  const circling = clean ? null : brinkStories(tipped, 'never', [fromOf(law.story, tipped)])?.[0]
+  const rivals: Rival[] = [
+    planarRival(tipped, 'flight', { x: 1, y: 2 }, sigma), planarRival(tipped, 'steady', { x: 1, y: 1 }, sigma),
+    ...(circling ? [{
+      law: 'topple' as const, misfit: misfitOf(circling), charge: brinkCost(circling, sigma, n), fits: misfitOf(circling) <= 1 && circling.bad.length <= 0.1 * n,
+    }] : []),
+  ]
+  const readsAs = [{ law: 'over-edge' as const, misfit: law.misfit, charge: law.cost }, ...rivals]
+    .sort((a, b) => a.charge - b.charge).map(({ law: name, misfit }) => ({ law: name, misfit }))
+  const answer = (kind: BrinkOpinion['kind'], story: BrinkStory, reads: Law | null = null): BrinkOpinion => ({ kind, story, plain, readsAs, reads })
+
+  const faulted = law.story.bad.length + (law.story.shift ? 1 : 0)
+  const acceptable = !tooMany(law.story, n)
+  const best = rivals.filter(({ fits }) => fits).sort((a, b) => a.charge - b.charge)[0]
+  const evenly = best && rivals.find(({ law: name, fits, charge }) => name === 'steady' && fits && charge <= best.charge + DOUBT)
+  const free = acceptable ? law.cost : Infinity
+  const airborne = releaseOfBrink(law.story.model.all(law.story.fit.numbers), series.edgeRatio, 'law').tau === 0
+  if (airborne && best && best.law !== 'topple' && best.charge <= law.cost + DOUBT) return answer(evenly ? 'wrong-law' : 'in-the-air', plain, evenly ? 'steady' : null)
+  if (other) {
+    const saves = other.story.bad.length + (other.story.shift ? 1 : 0) < faulted
+    const clearly = other.cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) < free && (saves || law.misfit > UNNOTICED)
+    if (clearly && !(best && best.charge < other.cost)) return answer('wrong-release', other.story)
+  }
+  if (!acceptable) return answer('wrong-law', plain, best ? (evenly ?? best).law : null)
+  const margin = faulted > 0 ? DOUBT_WITH_FAULTS : DOUBT
+  if (best && (faulted > 0 || law.misfit > UNNOTICED) && best.charge + margin < law.cost) return answer('wrong-law', plain, (evenly ?? best).law)
+  return answer('law-holds', law.story)
+}
+
+/** All seven numbers of a story, its own leaving angle set to the law's. */
+function fromOf({ model, fit }: BrinkStory, { series }: Tipped): Float64Array {
+  const numbers = model.all(fit.numbers)
+  numbers[OWN] = Math.abs(releaseOfBrink(numbers, series.edgeRatio, 'law').angle)
+  return numbers
+}
+
+function heard(tipped: Tipped, letting: Letting, near: BrinkStory): BrinkStory[][] {
+  const { n } = tipped.sheet
+  const stories = brinkStories(tipped, letting, [fromOf(near, tipped)])
+  return stories && 2 * n > (stories[0] as BrinkStory).model.size + 2 ? [stories] : []
+}
+
+/** True where enough is drawn on either side of the brink, and some drawing really lies off the law's line from the same start. */
+function shown({ series, sheet, care }: Tipped, { model, fit, shift }: BrinkStory): boolean {
+  const numbers = model.all(fit.numbers)
+  const own = releaseOfBrink(numbers, series.edgeRatio, model.letting)
+  const at = own.tau / Math.exp(numbers[LOG] as number)
+  const times = series.x.map((x, i) => (shift && i >= shift.at ? x - shift.by : x))
+  const after = times.filter(x => x > at).length
+  if (sheet.n - after < LEAST_BEFORE || after < LEAST_AFTER) return false
+  const drawn = rowsOf(fit.trace)
+  const law = brinkPlaces(numbers, series.edgeRatio, 'law', times)
+  const allowed = planarAllowances(law, care.slop, care.tolerance)
+  return allowed.some((allowance, i) => Math.hypot((drawn.x[i] as number) - (law.x[i] as number), (drawn.y[i] as number) - (law.y[i] as number)) > allowance)
+}
