@@ -50,5 +50,5 @@ export default async function run(): Promise<void> {
   console.log(`\n${spanTable(scoreSpans(divided))}`)
   console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)
   console.log(`\n${pointTable(scorePoints(makePointLists(40 * POINT_PLAN.length, 7)))}`)
-  console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(1000, 7, ['angle'])))}`)
+  console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(950, 7)))}`)
 }

@@ -6,9 +6,17 @@ import type { Scale } from '../size'
 import type { CheckResult, Finding, JudgedKey, PointCheck } from '../types'
 import type { BrinkLine } from './brinkLine'
 import { releaseOfBrink } from './brinkModel'
+import type { Letting } from './brinkModel'
 import type { BrinkStory, Tipped } from './brinkStories'
 
 const SCALE_FLOOR = 0.03
+
+/** True where the list reads as another size than the claim's. Let go of wrongly, an arc is short and its size less sure than its interval says. */
+export function misscaled({ tolerance }: PointCheck, { pace, spread }: Scale, letting: Letting): boolean {
+  if (pace === null) return false
+  const off = Math.abs(Math.log(pace))
+  return off > Math.max(SCALE_FLOOR, Math.log(1 + tolerance)) && off > (letting === 'law' ? 1.6 : 3) * spread
+}
 
 /** In no order. `keys`: held against the motion as it was drawn. */
 export function brinkFaults(
@@ -31,10 +39,8 @@ export function brinkFaults(
     const path = (series.x[i] as number) > line.drawn ? 'parabola' : 'circle'
     found.push(across ? offPathFinding(key, path, request.unit) : misplacedFinding(key, request.unit))
   }
-  if (scale.pace !== null && claim) {
-    const off = Math.abs(Math.log(scale.pace))
-    const told = off > Math.max(SCALE_FLOOR, Math.log(1 + request.tolerance)) && off > 1.6 * scale.spread
-    const finding = told ? wrongScaleFinding(scale, claim.frames, claim.usedFrames) : null
+  if (claim && misscaled(request, scale, letting)) {
+    const finding = wrongScaleFinding(scale, claim.frames, claim.usedFrames)
     if (finding) found.push(finding)
   }
   return found

@@ -46,7 +46,8 @@ export function brinkPlaces(numbers: Float64Array, ratio: number, letting: Letti
   const reach = Math.exp(numbers[REACH] as number)
   const [right, up] = [numbers[RIGHT] as number, numbers[UP] as number]
   const release = releaseOfBrink(numbers, ratio, letting)
-  const taus = Float64Array.from(times, at => at * kappa)
+  const taus = new Float64Array(n)
+  for (let i = 0; i < n; i++) taus[i] = (times[i] as number) * kappa
   const angle = new Float64Array(n)
   const rate = new Float64Array(n)
   overBrink(numbers[START] as number, (numbers[TURN] as number) / kappa, release, taus, n, angle, rate)
@@ -69,7 +70,19 @@ export function brinkPlaces(numbers: Float64Array, ratio: number, letting: Letti
 
 /** x and y in turn, drawing by drawing: how points are put to the fit of rows. */
 export function inTurn(x: ArrayLike<number>, y: ArrayLike<number>): Float64Array {
-  return Float64Array.from({ length: 2 * x.length }, (_, i) => (i % 2 === 0 ? x : y)[i >> 1] as number)
+  const out = new Float64Array(2 * x.length)
+  for (let i = 0; i < x.length; i++) {
+    out[2 * i] = x[i] as number
+    out[2 * i + 1] = y[i] as number
+  }
+  return out
+}
+
+/** One of the two rows back again: 0 for x, 1 for y. */
+export function everyOther(values: Float64Array, from: 0 | 1): Float64Array {
+  const out = new Float64Array(values.length >> 1)
+  for (let i = 0; i < out.length; i++) out[i] = values[2 * i + from] as number
+  return out
 }
 
 export interface BrinkModel extends LawModel {
@@ -96,21 +109,77 @@ export function brinkModel(letting: Letting, free: readonly number[], fixed: Flo
       free.forEach((place, p) => { numbers[p] = within(place, numbers[p] as number) })
     },
     trace(series: Series, numbers, x, withColumns): Trace {
-      const times = x.filter((_, i) => i % 2 === 0)
-      const here = brinkPlaces(all(numbers), series.edgeRatio, letting, times)
-      const value = inTurn(here.x, here.y)
-      const columns = withColumns ? free.map((_, p) => slope(p)) : []
-      return { value, rate: inTurn(here.vx, here.vy), columns }
-
-      function slope(p: number): Float64Array {
-        const moved = numbers.slice()
-        const step = STEP * Math.max(1, Math.abs(moved[p] as number))
-        moved[p] = (moved[p] as number) + step
-        const there = brinkPlaces(all(moved), series.edgeRatio, letting, times)
-        return inTurn(there.x, there.y).map((at, i) => (at - (value[i] as number)) / step)
-      }
+      const times = everyOther(x, 0)
+      const full = all(numbers)
+      const here = brinkPlaces(full, series.edgeRatio, letting, times)
+      const columns = withColumns ? columnsOf(full, free, series.edgeRatio, letting, times, here) : []
+      return { value: inTurn(here.x, here.y), rate: inTurn(here.vx, here.vy), columns }
     },
   }
+}
+
+/**
+ * How the line bends with each free number. Brink and reach only carry it along; moving the start along the motion itself is the same as
+ * moving time (as for a swing), which leaves one direction of the start, and the leaving angle, to a second line close by.
+ */
+function columnsOf(full: Float64Array, free: readonly number[], ratio: number, letting: Letting, times: Float64Array, here: Places): Float64Array[] {
+  const n = times.length
+  const kappa = Math.exp(full[LOG] as number)
+  const push = (full[TURN] as number) / kappa
+  const moved = (changes: [number, number][]): Float64Array => {
+    const numbers = full.slice()
+    for (const [place, by] of changes) numbers[place] = (numbers[place] as number) + by
+    const there = brinkPlaces(numbers, ratio, letting, times)
+    return differences(here, there, STEP)
+  }
+  // From the air there is no such motion to move along: the start is on the circle all the same.
+  const pull = Math.sin(full[START] as number)
+  const size = here.release.tau === 0 ? 0 : Math.hypot(push, pull)
+  let byStart: Float64Array
+  let byPush: Float64Array
+  if (size > 1e-6) {
+    const [a, b] = [push / size, pull / size]
+    const across = moved([[START, -b * STEP], [TURN, a * STEP * kappa]])
+    byStart = new Float64Array(2 * n)
+    byPush = new Float64Array(2 * n)
+    for (let i = 0; i < 2 * n; i++) {
+      const along = ((i % 2 === 0 ? here.vx : here.vy)[i >> 1] as number) / kappa / size
+      byStart[i] = a * along - b * (across[i] as number)
+      byPush[i] = b * along + a * (across[i] as number)
+    }
+  } else {
+    byStart = moved([[START, STEP]])
+    byPush = moved([[TURN, STEP * kappa]])
+  }
+  return free.map((place): Float64Array => {
+    const column = new Float64Array(2 * n)
+    switch (place) {
+      case START: return byStart
+      case TURN: return byPush.map(value => value / kappa)
+      case OWN: return moved([[OWN, STEP]])
+      case LOG:
+        // At a fixed turn rate, a larger κ also means a smaller push.
+        for (let i = 0; i < 2 * n; i++) {
+          column[i] = (times[i >> 1] as number) * ((i % 2 === 0 ? here.vx : here.vy)[i >> 1] as number) - push * (byPush[i] as number)
+        }
+        return column
+      case REACH:
+        for (let i = 0; i < 2 * n; i++) column[i] = i % 2 === 0 ? (here.x[i >> 1] as number) - (full[RIGHT] as number) : (here.y[i >> 1] as number) - (full[UP] as number)
+        return column
+      default:
+        for (let i = place === RIGHT ? 0 : 1; i < 2 * n; i += 2) column[i] = 1
+        return column
+    }
+  })
+}
+
+function differences(here: Places, there: Places, step: number): Float64Array {
+  const out = new Float64Array(2 * here.x.length)
+  for (let i = 0; i < here.x.length; i++) {
+    out[2 * i] = ((there.x[i] as number) - (here.x[i] as number)) / step
+    out[2 * i + 1] = ((there.y[i] as number) - (here.y[i] as number)) / step
+  }
+  return out
 }
 
 function within(place: number, value: number): number {

@@ -2,10 +2,10 @@
 import { DOUBT, DOUBT_WITH_FAULTS, UNNOTICED } from '../choose'
 import { fitPlanar, freeOf, planarAllowances } from '../flight/planar'
 import type { Degrees } from '../flight/planar'
+import { shiftedTimes } from '../scan'
 import type { Law, LawMisfit } from '../types'
 import { LOG, OWN, brinkPlaces, releaseOfBrink } from './brinkModel'
-import type { Letting } from './brinkModel'
-import { brinkCost, brinkPencil, brinkStories, likeliestOf, misfitOf, rowsOf, tooMany } from './brinkStories'
+import { brinkCost, brinkPencil, circling, lawStories, likeliestOf, misfitOf, otherStories, rowsOf, tooMany } from './brinkStories'
 import type { BrinkStory, Tipped } from './brinkStories'
 
 /** Beyond this, nats, a drawing counts as a lone bad one, not as evidence against a law. */
@@ -41,33 +41,33 @@ function planarRival({ sheet, series, care }: Tipped, law: Law, degrees: Degrees
   return { law, misfit, charge: charge + 0.5 * freeOf(fit) * Math.log(2 * sheet.n), fits: misfit <= 1 && breaking <= 0.1 * sheet.n }
 }
 
-/** Null where no search could begin. */
-export function brinkOpinion(tipped: Tipped): BrinkOpinion | null {
-  const { sheet, series, care } = tipped
-  const { n } = sheet
-  const told = brinkStories(tipped, 'law')
-  const plain = told?.[0]
-  if (!told || !plain) return null
+/** Null where no search could begin. `misscaled`: whether a story's size is another than the claim's, which is a fault like the others. */
+export function brinkOpinion(tipped: Tipped, misscaled: (story: BrinkStory) => boolean): BrinkOpinion | null {
+  const { sheet: { n }, care } = tipped
+  const told = lawStories(tipped)
+  const plain = told[0]
+  if (!plain) return null
   const judged = (stories: readonly BrinkStory[], sigma: number) => {
     const story = likeliestOf(tipped, stories, sigma)
     return { story, cost: brinkCost(story, sigma, n), misfit: misfitOf(story) }
   }
   let sigma = brinkPencil(told, n, care)
   let law = judged(told, sigma)
-  const clean = law.story.bad.length === 0 && !law.story.shift && law.misfit <= UNNOTICED
+  const faults = (story: BrinkStory) => story.bad.length + (story.shift ? 1 : 0) + (misscaled(story) ? 1 : 0)
+  const clean = faults(law.story) === 0 && law.misfit <= UNNOTICED
   // Other ways of letting go are only heard where something is wrong at all.
-  const ways: BrinkStory[][] = clean ? [] : (['own', 'straight'] as const).flatMap(letting => heard(tipped, letting, law.story))
+  const ways: BrinkStory[][] = clean ? [] : (['own', 'straight'] as const).map(letting => otherStories(tipped, letting, fromOf(law.story, tipped))).filter(stories => stories.length > 0)
   sigma = Math.min(sigma, ...ways.map(stories => brinkPencil(stories, n, care)))
   law = judged(told, sigma)
   const other = ways.map(stories => judged(stories, sigma))
     .filter(({ story }) => !tooMany(story, n) && shown(tipped, story))
     .sort((a, b) => a.cost - b.cost)[0]
 
-  const circling = clean ? null : brinkStories(tipped, 'never', [fromOf(law.story, tipped)])?.[0]
+  const circle = clean ? undefined : circling(tipped, fromOf(law.story, tipped))
   const rivals: Rival[] = [
     planarRival(tipped, 'flight', { x: 1, y: 2 }, sigma), planarRival(tipped, 'steady', { x: 1, y: 1 }, sigma),
-    ...(circling ? [{
-      law: 'topple' as const, misfit: misfitOf(circling), charge: brinkCost(circling, sigma, n), fits: misfitOf(circling) <= 1 && circling.bad.length <= 0.1 * n,
+    ...(circle ? [{
+      law: 'topple' as const, misfit: misfitOf(circle), charge: brinkCost(circle, sigma, n), fits: misfitOf(circle) <= 1 && circle.bad.length <= 0.1 * n,
     }] : []),
   ]
   const readsAs = [{ law: 'over-edge' as const, misfit: law.misfit, charge: law.cost }, ...rivals]
@@ -79,10 +79,10 @@ export function brinkOpinion(tipped: Tipped): BrinkOpinion | null {
   const best = rivals.filter(({ fits }) => fits).sort((a, b) => a.charge - b.charge)[0]
   const evenly = best && rivals.find(({ law: name, fits, charge }) => name === 'steady' && fits && charge <= best.charge + DOUBT)
   const free = acceptable ? law.cost : Infinity
-  const airborne = releaseOfBrink(law.story.model.all(law.story.fit.numbers), series.edgeRatio, 'law').tau === 0
+  const airborne = onBrink(tipped, law.story) < LEAST_BEFORE
   if (airborne && best && best.law !== 'topple' && best.charge <= law.cost + DOUBT) return answer(evenly ? 'wrong-law' : 'in-the-air', plain, evenly ? 'steady' : null)
   if (other) {
-    const saves = other.story.bad.length + (other.story.shift ? 1 : 0) < faulted
+    const saves = faults(other.story) < faults(law.story)
     const clearly = other.cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) < free && (saves || law.misfit > UNNOTICED)
     if (clearly && !(best && best.charge < other.cost)) return answer('wrong-release', other.story)
   }
@@ -99,20 +99,19 @@ function fromOf({ model, fit }: BrinkStory, { series }: Tipped): Float64Array {
   return numbers
 }
 
-function heard(tipped: Tipped, letting: Letting, near: BrinkStory): BrinkStory[][] {
-  const { n } = tipped.sheet
-  const stories = brinkStories(tipped, letting, [fromOf(near, tipped)])
-  return stories && 2 * n > (stories[0] as BrinkStory).model.size + 2 ? [stories] : []
+/** Drawings before it lets go. */
+function onBrink({ series }: Pick<Tipped, 'series'>, { model, fit, shift }: Pick<BrinkStory, 'model' | 'fit' | 'shift'>): number {
+  const numbers = model.all(fit.numbers)
+  const at = releaseOfBrink(numbers, series.edgeRatio, model.letting).tau / Math.exp(numbers[LOG] as number)
+  return shiftedTimes(series.x, shift).filter(x => x < at).length
 }
 
 /** True where enough is drawn on either side of the brink, and some drawing really lies off the law's line from the same start. */
 function shown({ series, sheet, care }: Tipped, { model, fit, shift }: BrinkStory): boolean {
+  const before = onBrink({ series }, { model, fit, shift })
+  if (before < LEAST_BEFORE || sheet.n - before < LEAST_AFTER) return false
   const numbers = model.all(fit.numbers)
-  const own = releaseOfBrink(numbers, series.edgeRatio, model.letting)
-  const at = own.tau / Math.exp(numbers[LOG] as number)
-  const times = series.x.map((x, i) => (shift && i >= shift.at ? x - shift.by : x))
-  const after = times.filter(x => x > at).length
-  if (sheet.n - after < LEAST_BEFORE || after < LEAST_AFTER) return false
+  const times = shiftedTimes(series.x, shift)
   const drawn = rowsOf(fit.trace)
   const law = brinkPlaces(numbers, series.edgeRatio, 'law', times)
   const allowed = planarAllowances(law, care.slop, care.tolerance)

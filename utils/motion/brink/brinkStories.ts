@@ -2,8 +2,8 @@
  * What could have happened to the drawings of a body over a brink: nothing, some misplaced, one held or skipped. As for readings
  * (hypotheses.ts) and flights, both directions speaking at once.
  */
-import { BRIEF, THOROUGH, refine } from '../fit'
-import type { Fit } from '../fit'
+import { BRIEF, refine } from '../fit'
+import type { Effort, Fit } from '../fit'
 import { planarAllowances } from '../flight/planar'
 import { MISPLACED_CHARGE, MOST_TOGETHER, exposures, longestRun, mostMisplaced } from '../hypotheses'
 import type { Care } from '../hypotheses'
@@ -13,8 +13,11 @@ import type { Shift } from '../scan'
 import type { Series } from '../series'
 import type { Place } from '../types'
 import { beginnings } from './brinkBegin'
-import { LOG, OWN, REACH, RIGHT, START, TURN, UP, brinkModel, inTurn } from './brinkModel'
+import { LOG, OWN, REACH, RIGHT, START, TURN, UP, brinkModel, everyOther, inTurn } from './brinkModel'
 import type { BrinkModel, Letting } from './brinkModel'
+
+/** Brink, reach and pace pull at one another along a narrow valley. */
+const PATIENT: Effort = { steps: 60, enough: 1e-8 }
 
 export interface BrinkStory {
   model: BrinkModel
@@ -41,7 +44,7 @@ const twice = (values: ArrayLike<number>) => inTurn(values, values)
 
 /** The line at the drawings as two rows. */
 export function rowsOf({ value }: { value: Float64Array }): { x: Float64Array, y: Float64Array } {
-  return { x: value.filter((_, i) => i % 2 === 0), y: value.filter((_, i) => i % 2 === 1) }
+  return { x: everyOther(value, 0), y: everyOther(value, 1) }
 }
 
 function strainOf({ sheet, care }: Tipped, value: Float64Array, shift: Shift | null): Float64Array {
@@ -133,27 +136,56 @@ function shows(tipped: Tipped, { model, shift, fit }: BrinkStory): boolean {
   return false
 }
 
-/** Every story worth hearing under one way of letting go; the first is "nothing happened". Null where no search could begin. */
-export function brinkStories(tipped: Tipped, letting: Letting, near: readonly Float64Array[] = []): BrinkStory[] | null {
+/** One way of letting go with nothing assumed, best first: a fit from each of the likeliest beginnings. */
+function plainStories(tipped: Tipped, letting: Letting, near: readonly Float64Array[]): BrinkStory[] {
   const { sheet, series } = tipped
-  const { n } = sheet
   const free = freeNumbers(tipped, letting)
   const begun = [...near, ...beginnings(sheet, series, series.x, tipped.brink, letting).slice(0, 3)]
-  const plains = begun.map((numbers) => {
+  return begun.map((numbers) => {
     const fixed = numbers.slice()
     if (tipped.atRest) fixed[TURN] = 0
     const model = brinkModel(letting, free, fixed)
-    return tell(tipped, model, [], null, model.free(fixed), THOROUGH)
+    return tell(tipped, model, [], null, model.free(fixed), PATIENT)
   }).sort((a, b) => a.fit.cost - b.fit.cost)
+}
+
+/** As many drawings as may be called off. */
+const mostOut = ({ sheet: { n } }: Tipped, { model }: BrinkStory) => Math.min(n - Math.ceil(model.size / 2) - 1, mostMisplaced(n))
+
+/**
+ * Another way of letting go, to be compared with: nothing happened, or some drawings are misplaced. A drawing held or skipped on top would
+ * be a second fault. The first is "nothing happened". `near`: all seven numbers of a line close by.
+ */
+export function otherStories(tipped: Tipped, letting: Letting, near: Float64Array): BrinkStory[] {
+  const told = plainStories(tipped, letting, [near]).slice(0, 1)
+  const [plain] = told
+  if (!plain || plain.bad.length === 0) return told
+  const { numbers, off } = doubting(tipped, plain)
+  if (off.length <= mostOut(tipped, plain)) told.push(extend(tipped, tell(tipped, plain.model, off, null, numbers), mostOut(tipped, plain)))
+  return told
+}
+
+/** The whole circle, as it is: a topple. */
+export function circling(tipped: Tipped, near: Float64Array): BrinkStory | undefined {
+  return plainStories(tipped, 'never', [near])[0]
+}
+
+/** Every story worth hearing under the law; the first is "nothing happened". Empty where no search could begin. */
+export function lawStories(tipped: Tipped): BrinkStory[] {
+  const { sheet, series } = tipped
+  const { n } = sheet
+  const plains = plainStories(tipped, 'law', [])
   const [plain] = plains
-  if (!plain) return null
+  if (!plain) return []
   const told = [plain]
-  const most = Math.min(n - Math.ceil(free.length / 2) - 1, mostMisplaced(n))
+  const most = mostOut(tipped, plain)
   if (!(Math.max(...plain.strained) > 0.8) || most < 1) return told
   for (const start of plains.slice(0, 2)) {
     const { numbers, off } = doubting(tipped, start)
     if (off.length <= most) told.push(extend(tipped, tell(tipped, start.model, off, null, numbers), most))
   }
+  // Held or skipped is dear; nothing of the kind is looked for where one drawing explains it all.
+  if (told.some(story => story.out.length === 1 && story.bad.length === 1)) return told
   told.push(extend(tipped, plain, most))
   const sizes = exposures(series).flatMap(by => [by, -by])
   const look = ({ fit }: BrinkStory) => bestShifts({ ...series, x: twice(series.x) }, fit, inTurn(sheet.x, sheet.y), sizes, 2)
@@ -162,11 +194,14 @@ export function brinkStories(tipped: Tipped, letting: Letting, near: readonly Fl
   const first = look(plain)
   told.push(...first)
   // One step from a bent line may point a few keys too far: a second look, from the best of them, and a third.
-  for (let round = 0, best = least(first); best && round < 2; round++) {
+  for (let round = 0, best = least(first); best && best.bad.length > 0 && round < 2; round++) {
     const again = look(best)
     told.push(...again)
     best = least(again)
   }
+  // What was found with something set aside may show where nothing needs to be.
+  const again = tell(tipped, plain.model, [], null, (least(told) ?? plain).fit.numbers, PATIENT)
+  if (again.fit.cost < plain.fit.cost) told.splice(0, 1, again, extend(tipped, again, most))
   const shifted = least(told.filter(story => story.shift))
   if (shifted && shifted.bad.length > 0) told.push(extend(tipped, shifted, Math.min(most, Math.floor(n / 10))))
   return told

@@ -7,7 +7,7 @@ import { IN_THE_AIR } from '../release'
 import { RADIAN, roundingSpread, seriesOf } from '../series'
 import type { Series } from '../series'
 import type { CheckResult, FoundPath, JudgedKey, Key, Place, PointCheck, PointKey } from '../types'
-import { brinkFaults } from './brinkFaults'
+import { brinkFaults, misscaled } from './brinkFaults'
 import { brinkFigures, brinkScale } from './brinkFigures'
 import { brinkKeys, brinkLine } from './brinkLine'
 import type { BrinkLine } from './brinkLine'
@@ -24,7 +24,7 @@ export function judgeBrink(request: PointCheck): Judgement {
   const needed = Math.ceil(freeNumbers(tipped, 'law').length / 2) + 2
   if (sheet.n < needed) return without(request, null, `${sheet.n} keys are too few for a fall over the edge: it takes ${needed} to tell.`)
   if (!(sheet.extent > 2 * request.slop)) return without(request, null, STILL)
-  const opinion = brinkOpinion(tipped)
+  const opinion = brinkOpinion(tipped, story => misscaled(request, brinkScale(request, tipped, story), story.model.letting))
   if (!opinion) return without(request, null, 'No arc about a brink can be made out.')
   if (opinion.kind === 'in-the-air') return without(request, null, IN_THE_AIR)
 
