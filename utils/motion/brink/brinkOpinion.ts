@@ -80,7 +80,8 @@ export function brinkOpinion(tipped: Tipped, misscaled: (story: BrinkStory) => b
   const evenly = best && rivals.find(({ law: name, fits, charge }) => name === 'steady' && fits && charge <= best.charge + DOUBT)
   const free = acceptable ? law.cost : Infinity
   const airborne = onBrink(tipped, law.story) < LEAST_BEFORE
-  if (airborne && best && best.law !== 'topple' && best.charge <= law.cost + DOUBT) return answer(evenly ? 'wrong-law' : 'in-the-air', plain, evenly ? 'steady' : null)
+  // A plain flight, or no move that bends at all, leaves nothing to tell a brink by.
+  if (best && best.law !== 'topple' && best.charge <= law.cost + (airborne ? DOUBT : 0)) return answer(evenly ? 'wrong-law' : 'in-the-air', plain, evenly ? 'steady' : null)
   if (other) {
     const saves = faults(other.story) < faults(law.story)
     const clearly = other.cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) < free && (saves || law.misfit > UNNOTICED)
