@@ -117,7 +117,7 @@ describe('every search for joints', () => {
       expect(spans[spans.length - 1]?.to).toBe(request.keys[request.keys.length - 1]?.frame)
       spans.slice(1).forEach(({ from }, i) => expect(from).toBe(spans[i]?.to))
       expect(JSON.stringify(judge(request))).toBe(JSON.stringify(result))
-    }), { ...RUNS, numRuns: 50 })
+    }), { ...RUNS, numRuns: 40 })
   })
 
   it('does not depend on which number the first frame has', () => {

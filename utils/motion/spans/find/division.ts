@@ -92,7 +92,7 @@ function meetsAt(
   const apart = distance(here.values, there.values)
   const allowance = slop + tolerance * exposure * Math.hypot(...here.speeds)
   if (apart > allowance + exposure * distance(here.speeds, there.speeds)) return 'never'
-  const spread = dot(here.byValue, before.solve(here.byValue)) + dot(there.byValue, after.solve(there.byValue))
+  const spread = dot(here.byValue, here.solvedValue) + dot(there.byValue, there.solvedValue)
   // Held to the drawing where that costs less than one more number.
   return apart <= allowance && apart * apart <= Math.log(n) * sigma * sigma * spread ? 'key' : 'between'
 }
@@ -114,9 +114,10 @@ function heldTogether(
     const after = pieces[joint + 1] as Piece
     const here = before.at(at)
     const there = after.at(at)
-    const of = ofSpeed ? 'bySpeed' as const : 'byValue' as const
     return {
-      joint, before: here[of].map(value => -value), after: there[of], solvedBefore: before.solve(here[of].map(value => -value)), solvedAfter: after.solve(there[of]),
+      joint,
+      before: ofSpeed ? here.bySpeed : here.byValue, solvedBefore: ofSpeed ? here.solvedSpeed : here.solvedValue,
+      after: ofSpeed ? there.bySpeed : there.byValue, solvedAfter: ofSpeed ? there.solvedSpeed : there.solvedValue,
       off: ofSpeed ? there.speeds.map((value, r) => value - (here.speeds[r] as number)) : there.values.map((value, r) => value - (here.values[r] as number)),
     }
   })
@@ -124,8 +125,8 @@ function heldTogether(
   sides.forEach((one, p) => sides.forEach((other, q) => {
     let sum = 0
     if (one.joint === other.joint) sum = dot(one.before, other.solvedBefore) + dot(one.after, other.solvedAfter)
-    else if (one.joint + 1 === other.joint) sum = dot(one.after, other.solvedBefore)
-    else if (one.joint - 1 === other.joint) sum = dot(one.before, other.solvedAfter)
+    else if (one.joint + 1 === other.joint) sum = -dot(one.after, other.solvedBefore)
+    else if (one.joint - 1 === other.joint) sum = -dot(one.before, other.solvedAfter)
     spread[m * p + q] = sum
   }))
   const out = new Float64Array(m)

@@ -7,8 +7,18 @@ export type Kind = 'even' | 'curved' | 'swing'
 
 export const SIZES: Record<Kind, number> = { even: 2, curved: 3, swing: 3 }
 
-/** A line at one drawing: per row its value and speed (per frame), and how both move with the free numbers. */
-export interface Place { values: number[], speeds: number[], byValue: Float64Array, bySpeed: Float64Array }
+/**
+ * A line at one drawing: per row its value and speed (per frame), how both move with the free numbers, and N⁻¹g of either gradient, N the
+ * free numbers' normal matrix.
+ */
+export interface Place {
+  values: number[]
+  speeds: number[]
+  byValue: Float64Array
+  bySpeed: Float64Array
+  solvedValue: Float64Array
+  solvedSpeed: Float64Array
+}
 
 export interface Piece {
   kind: Kind
@@ -17,8 +27,6 @@ export interface Piece {
   /** Squares left over, all rows. */
   cost: number
   at(i: number): Place
-  /** N⁻¹g of the free numbers' normal matrix. */
-  solve(gradient: Float64Array): Float64Array
   /** Sign of the pull in a swing: +1 from upright balance, −1 from hanging rest. */
   pull: number
 }
@@ -42,17 +50,25 @@ export function fitPiece({ frames, rows, weights, pull }: Scene, kind: Kind, fro
   }
   const normal = new Float64Array(size * size)
   const sides = rows.map(() => new Float64Array(size))
+  const g = new Float64Array(size)
+  const fill = (i: number) => {
+    g[0] = 1
+    g[1] = ((frames[i] as number) - middle) / half
+    if (size === 3) g[2] = third(i)
+  }
   for (let i = from; i <= to; i++) {
     if (weights[i] === 0) continue
-    const g = gradient(i)
+    fill(i)
     for (let p = 0; p < size; p++) {
-      for (let q = 0; q < size; q++) normal[size * p + q] = (normal[size * p + q] as number) + (g[p] as number) * (g[q] as number)
-      rows.forEach((row, r) => {
+      const gp = g[p] as number
+      for (let q = 0; q <= p; q++) normal[size * p + q] = (normal[size * p + q] as number) + gp * (g[q] as number)
+      for (let r = 0; r < rows.length; r++) {
         const side = sides[r] as Float64Array
-        side[p] = (side[p] as number) + (g[p] as number) * (row[i] as number)
-      })
+        side[p] = (side[p] as number) + gp * ((rows[r] as Float64Array)[i] as number)
+      }
     }
   }
+  for (let p = 0; p < size; p++) for (let q = 0; q < p; q++) normal[size * q + p] = normal[size * p + q] as number
   const solve = (b: Float64Array) => {
     const out = new Float64Array(size)
     return solveInto(normal, b, size, out) ? out : null
@@ -63,14 +79,13 @@ export function fitPiece({ frames, rows, weights, pull }: Scene, kind: Kind, fro
   let cost = 0
   for (let i = from; i <= to; i++) {
     if (weights[i] === 0) continue
-    const g = gradient(i)
-    rows.forEach((row, r) => { cost += ((row[i] as number) - dot(g, found[r] as Float64Array)) ** 2 })
+    fill(i)
+    for (let r = 0; r < rows.length; r++) cost += (((rows[r] as Float64Array)[i] as number) - dot(g, found[r] as Float64Array)) ** 2
   }
   return {
     kind, size, cost,
     pull: kind === 'swing' ? Math.sign(found[0]?.[2] ?? 0) : 0,
-    solve: b => solve(b) ?? new Float64Array(size),
-    at(i) {
+    at: remembered((i) => {
       const byValue = gradient(i)
       const t = ((frames[i] as number) - middle) / half
       const bySpeed = size === 2
@@ -78,8 +93,21 @@ export function fitPiece({ frames, rows, weights, pull }: Scene, kind: Kind, fro
         : Float64Array.of(0, 1 / half, kind === 'swing' && pull
             ? ((pull.once[i] as number) - (pull.once[around] as number)) / (half * half)
             : 2 * t / half)
-      return { values: found.map(each => dot(byValue, each)), speeds: found.map(each => dot(bySpeed, each)), byValue, bySpeed }
-    },
+      return {
+        values: found.map(each => dot(byValue, each)), speeds: found.map(each => dot(bySpeed, each)), byValue, bySpeed,
+        solvedValue: solve(byValue) ?? new Float64Array(size), solvedSpeed: solve(bySpeed) ?? new Float64Array(size),
+      }
+    }),
+  }
+}
+
+/** Joints are asked for over and over, by every division that shares the piece. */
+export function remembered(at: (i: number) => Place): (i: number) => Place {
+  const known = new Map<number, Place>()
+  return (i) => {
+    let place = known.get(i)
+    if (!place) known.set(i, place = at(i))
+    return place
   }
 }
 

@@ -34,6 +34,15 @@ export function divisions(scene: Scene, most: number, rates: Rates): Found[] {
   return found.map(first => [first, ...again.filter(({ pieces }) => pieces.length === first.pieces.length)].reduce((a, b) => (b.charge < a.charge ? b : a)))
 }
 
+/** The same division of a list that `thin` has only every so many drawings of (the last one too), moved to where it is cheapest there. */
+export function carriedOver(scene: Scene, { division, scene: thin }: Found, rates: Rates): Found | null {
+  const places = Array.from(thin.frames, frame => scene.frames.indexOf(frame))
+  const calm = places.reduce((now, at, i) => (thin.weights[i] === 0 ? without(now, at) : now), scene)
+  const known: Known = new Map()
+  const from = looked(calm, { ...division, joints: division.joints.map(joint => places[joint] as number) }, rates, known)
+  return from && downhill(calm, from, rates, known)
+}
+
 export function cheapest(found: readonly Found[]): Found | null {
   return found.reduce<Found | null>((best, one) => (best && best.charge <= one.charge ? best : one), null)
 }
@@ -51,7 +60,10 @@ function divisionsAtOnce(scene: Scene, most: number, rates: Rates): Found[] {
         if (down && (!best || down.charge < best.charge)) best = down
       }
     }
-    if (best) found.push(relieved(scene, best, rates))
+    if (!best) continue
+    found.push(relieved(scene, best, rates))
+    // Where fewer spans already leave no more than pencil, and one more is no gain, two more are none either.
+    if (fewer && fewer.squares <= 2 * rates.sigma * rates.sigma * scene.n && best.charge >= fewer.charge) break
   }
   // What was found for more spans may be better with a joint less than what was found for fewer.
   for (let at = found.length - 1; at > 0; at--) {
@@ -106,8 +118,8 @@ function dearest({ division: { joints }, pieces, scene: { n, rows, weights } }: 
     const to = joints[s] ?? n - 1
     for (let i = from; i <= to; i++) {
       if (weights[i] === 0) continue
-      const { values, byValue } = piece.at(i)
-      const room = 1 - dot(byValue, piece.solve(byValue))
+      const { values, byValue, solvedValue } = piece.at(i)
+      const room = 1 - dot(byValue, solvedValue)
       if (room < 0.02) continue
       let off = 0
       rows.forEach((row, r) => { off += ((row[i] as number) - (values[r] as number)) ** 2 })
@@ -133,7 +145,7 @@ function split({ n }: Scene, { joints, kinds }: Division): { joints: number[], k
 function downhill(scene: Scene, from: Found, rates: Rates, known: Known): Found {
   const kinds = KINDS.filter(kind => kind !== 'swing' || scene.pull)
   let best = from
-  const steps = [1, 2, 4, ...(scene.n > 300 ? [8, 16] : [])]
+  const steps = scene.n > 300 ? [1, 4, 16] : [1, 2, 4]
   for (let round = 0; round < 40; round++) {
     const { division: { joints, kinds: of, contacts } } = best
     const next: Division[] = []
@@ -150,14 +162,13 @@ function downhill(scene: Scene, from: Found, rates: Rates, known: Known): Found 
     of.forEach((kind, s) => {
       for (const other of kinds) if (other !== kind) next.push({ joints, kinds: of.with(s, other), contacts })
     })
-    let better: Found | null = null
+    const before = best
     for (const division of next) {
       if (!inOrder(division.joints, scene.n)) continue
       const tried = looked(scene, division, rates, known)
-      if (tried && tried.charge < (better ?? best).charge - 1e-9) better = tried
+      if (tried && tried.charge < best.charge - 1e-9) best = tried
     }
-    if (!better) break
-    best = better
+    if (best === before) break
   }
   return best
 }

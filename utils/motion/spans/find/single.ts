@@ -15,12 +15,14 @@ export interface Single {
 export function singles(request: ReadingCheck, care: Care): Single[] {
   const series = seriesOf(request)
   const rivals = rivalsOf('steady', request.measure, series)
-  // Laws that are told as their kin, or are one line with another, are no second opinion.
-  const own = lawsFor(request.measure).filter(law => LAWS[law].law === law && law !== 'spin' && (rivals.includes(law) || !BASE.includes(law)))
+  // A law that is told as its kin is no second opinion.
+  const own = lawsFor(request.measure).filter(law => LAWS[law].law === law && !NOT_ASKED.includes(law) && (rivals.includes(law) || !BASE.includes(law)) || law === request.law)
   return own.filter(law => series.n >= LAWS[law].size + 2)
     .map(law => ({ law, told: stories(series, plainFit(series, LAWS[law], care), care) }))
 }
 
+/** One line with another law, or two laws in one: only where the claim names them. */
+const NOT_ASKED: readonly ReadingLaw[] = ['spin', 'over-edge']
 const BASE: readonly ReadingLaw[] = ['odd-rule', 'steady', 'slow-in', 'topple', 'pendulum']
 
 export function pencilOf(all: readonly Single[], n: number, care: Care): number {

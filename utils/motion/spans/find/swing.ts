@@ -4,6 +4,7 @@ import { LAWS } from '../../laws/index'
 import { seriesOf } from '../../series'
 import { solve3 } from '../../solve'
 import type { ReadingCheck } from '../../types'
+import { remembered } from './piece'
 import type { Piece } from './piece'
 import type { Scene } from './scene'
 
@@ -25,18 +26,18 @@ export function exactSwing(request: ReadingCheck, scene: Scene, rough: Piece, fr
   if (!begin) return null
   const fit = refine(model, series, series.x, calm, weights, begin, BRIEF)
   const { size } = model
+  const solve = (gradient: Float64Array) => solve3(fit.normal, gradient, size) ?? new Float64Array(size)
   return {
     kind: 'swing', size, cost: fit.cost, pull: rough.pull,
-    solve: gradient => solve3(fit.normal, gradient, size) ?? new Float64Array(size),
-    at(i) {
+    at: remembered((i) => {
       const x = ((scene.frames[i] as number) - (scene.frames[from] as number)) / series.spanFrames
       const { value, rate, columns } = model.trace(series, fit.numbers, Float64Array.of(x - NUDGE, x, x + NUDGE), true)
+      const byValue = Float64Array.from(columns, column => column[1] as number)
+      const bySpeed = Float64Array.from(columns, column => ((column[2] as number) - (column[0] as number)) / (2 * NUDGE * series.spanFrames))
       return {
-        values: [(value[1] as number) - middle],
-        speeds: [(rate[1] as number) / series.spanFrames],
-        byValue: Float64Array.from(columns, column => column[1] as number),
-        bySpeed: Float64Array.from(columns, column => ((column[2] as number) - (column[0] as number)) / (2 * NUDGE * series.spanFrames)),
+        values: [(value[1] as number) - middle], speeds: [(rate[1] as number) / series.spanFrames],
+        byValue, bySpeed, solvedValue: solve(byValue), solvedSpeed: solve(bySpeed),
       }
-    },
+    }),
   }
 }
