@@ -21,8 +21,8 @@ export function singles(request: ReadingCheck, care: Care): Single[] {
     .map(law => ({ law, told: stories(series, plainFit(series, LAWS[law], care), care) }))
 }
 
-/** One line with another law, or two laws in one: only where the claim names them. */
-const NOT_ASKED: readonly ReadingLaw[] = ['spin', 'over-edge']
+/** One line with another law, or laws with a joint inside them: only where the claim names them. */
+const NOT_ASKED: readonly ReadingLaw[] = ['spin', 'over-edge', 'bounce']
 const BASE: readonly ReadingLaw[] = ['odd-rule', 'steady', 'slow-in', 'topple', 'pendulum']
 
 export function pencilOf(all: readonly Single[], n: number, care: Care): number {
