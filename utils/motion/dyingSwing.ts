@@ -69,7 +69,6 @@ function lagOf(amplitude: number): number {
   return v0 + u * (s0 + u * (3 * (v1 - v0) - 2 * s0 - s1 + u * (2 * (v0 - v1) + s0 + s1)))
 }
 
-const NO_NOME = { q: 0, slope: 0 }
 let started = { amplitude: NaN, lag: 0, swing: FULL }
 
 /** One moment of a dying swing; angles in radians, swings counted whole. */
@@ -99,20 +98,18 @@ export function dyingSwing(tau: number, amplitude: number, phase: number, decrem
   const { lag: lagAtStart, swing: swing0 } = started
   // τ = 2πN + (lag(A₀) − lag(A₀e^(−δN)))/δ has one answer N: the right side grows by 4K(A) per swing.
   let swings = guess
-  let now = amplitude
-  let clamped = now
-  let swing = swing0
-  let behind = 0
-  let nome = NO_NOME
+  let now = amplitude * Math.exp(-decrement * swings)
+  let nome = nomeOf(Math.min(WIDEST_SWING, now))
+  let swing = swingOf(nome.q)
+  let behind = (lagAtStart - lagOf(now)) / decrement
   for (let round = 0; round < 30; round++) {
-    now = amplitude * Math.exp(-decrement * swings)
-    clamped = Math.min(WIDEST_SWING, now)
-    nome = nomeOf(clamped)
-    swing = swingOf(nome.q)
-    behind = (lagAtStart - lagOf(now)) / decrement
     const miss = tau - FULL * swings - behind
     if (Math.abs(miss) < 1e-12 * (1 + Math.abs(tau))) break
     swings += miss / swing
+    now = amplitude * Math.exp(-decrement * swings)
+    nome = nomeOf(Math.min(WIDEST_SWING, now))
+    swing = swingOf(nome.q)
+    behind = (lagAtStart - lagOf(now)) / decrement
   }
   const { q, slope } = nome
   const turn = FULL * (phase + swings)

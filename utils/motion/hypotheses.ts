@@ -182,6 +182,18 @@ function doubted(series: Series, from: Fit, care: Care): { fit: Fit, off: number
   return { fit, off: Array.from(strained.keys()).filter(i => (strained[i] as number) > 1) }
 }
 
+/**
+ * The most promising shifts from a line that is sound on some part of the list: its early drawings, or (a law with corners can't be bent
+ * into it by one step) its late ones.
+ */
+function shiftsFrom(series: Series, fit: Fit, sizes: readonly number[]): Candidate[] {
+  const { model, numbers } = fit
+  const early = bestShifts(series, fit, series.y, sizes)
+  if (!model.later) return early
+  const late = sizes.flatMap(by => bestShifts(series, { ...fit, numbers: model.later?.(numbers, -by) ?? numbers }, series.y, [by]))
+  return [...early, ...late]
+}
+
 /** Fits the cheapest `most` of the candidates that have not been heard yet and adds them to the stories told. */
 function hear(series: Series, model: LawModel, care: Care, told: Story[], candidates: Candidate[], most: number): void {
   const known = new Set(told.map(({ shift }) => (shift ? `${shift.at} ${shift.by}` : '')))
@@ -219,7 +231,7 @@ export function stories(series: Series, { fit, base }: Plain, care: Care): Story
   if (offBase.length > 0 && offBase.length <= Math.min(spare, n / 4)) told.push(tell(series, model, offBase, null, base.numbers, care))
 
   const sizes = exposures(series).flatMap(by => [by, -by])
-  const candidates = bestShifts(series, fit, y, sizes)
+  const candidates = shiftsFrom(series, fit, sizes)
   if (!model.linear && offBase.length > 0) candidates.push(...bestShifts(series, base, y, sizes))
   hear(series, model, care, told, candidates, 4)
   // One step from a bent line may point a few keys too far. From the best of them, a second look is a straight one.
@@ -233,11 +245,11 @@ export function stories(series: Series, { fit, base }: Plain, care: Care): Story
       // Half a list may hold too few corners to know the law by.
       const parts = model.kinked ? [[0, half], [n - half, n], [0, long], [n - long, n]] as const : [[0, half], [n - half, n]] as const
       for (const [from, to] of parts) {
-        hear(series, model, care, told, bestShifts(series, partFit(series, model, y, from, to), y, sizes), 2)
+        hear(series, model, care, told, shiftsFrom(series, partFit(series, model, y, from, to), sizes), 2)
       }
     }
     const { fit: sturdy, off } = doubted(series, fit, care)
-    if (model.kinked) hear(series, model, care, told, bestShifts(series, sturdy, y, sizes), 3)
+    if (model.kinked) hear(series, model, care, told, shiftsFrom(series, sturdy, sizes), 3)
     if (off.length <= Math.min(spare, mostMisplaced(n))) told.push(tell(series, model, off, null, fit.numbers, care))
   }
 

@@ -65,6 +65,7 @@ export const bounce: LawModel = {
     numbers[3] = Math.min(LONGEST_HOP, Math.max(SHORTEST_HOP, numbers[3] as number))
     numbers[4] = Math.min(MOST_RESTITUTION, Math.max(LEAST_RESTITUTION, numbers[4] as number))
   },
+  later: ([contact = 0, ...rest]: Float64Array, by) => Float64Array.of(contact + by, ...rest),
   fromStart(numbers) {
     const [, ground = 0, a = 0, , e = 0.5] = numbers
     let [contact = 0, , , hop = 1] = numbers

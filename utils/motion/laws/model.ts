@@ -25,6 +25,8 @@ export interface LawModel {
   readonly kinked?: boolean
   /** Traces the line for times x (0 to 1 is the list's span; outside it the law is carried on). */
   trace(series: Series, numbers: Float64Array, x: Float64Array, withColumns: boolean): Trace
+  /** The same line, everything `by` spans later. */
+  later?(numbers: Float64Array, by: number): Float64Array
   /** For numbers found on the end of a list alone: the same line told from the list's first key on. */
   fromStart?(numbers: Float64Array): Float64Array
   /** Told where the numbers are not the law's own: those that the law without any restriction counts the same line by. Linear in them for linear laws. */
