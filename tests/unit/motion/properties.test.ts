@@ -1,7 +1,7 @@
 /** What must be true of every answer, whatever the list. */
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { judge, judgeInDepth, lawCurve, lawsFor } from '../../../utils/motion'
+import { judge, judgeInDepth, lawCurve, lawsFor, MEASURES } from '../../../utils/motion'
 import type { CheckResult, Key, Law, ReadingCheck } from '../../../utils/motion'
 
 const RUNS = { numRuns: 150, seed: 4711 }
@@ -52,7 +52,7 @@ const requests: fc.Arbitrary<ReadingCheck> = fc.record({
   const request: ReadingCheck = { ...rest, law, measure, unit: measure === 'angle' ? 'deg' : 'px' }
   if (zeroAt !== undefined) request.zeroAt = zeroAt
   if (measure === 'arc') request.radius = radius
-  if (body) request.subject = law === 'odd-rule' ? { unitsPerMetre: 80 } : { shape: 'rod', height: 2 }
+  if (body) request.subject = MEASURES[law].includes('distance') ? { unitsPerMetre: 80 } : { shape: 'rod', height: 2 }
   return request
 })
 
@@ -131,7 +131,7 @@ describe('every answer', () => {
   })
 
   it('is the same for a motion and its mirror image', () => {
-    fc.assert(fc.property(likely, fc.constantFrom<Law>('odd-rule', 'pendulum', 'steady', 'topple'), (keys, law) => {
+    fc.assert(fc.property(likely, fc.constantFrom<Law>('odd-rule', 'pendulum', 'steady', 'topple', 'slow-in', 'spin', 'swing-decay'), (keys, law) => {
       const request: ReadingCheck = { law, fps: 24, measure: 'angle', unit: 'deg', slop: 0.3, tolerance: 0.1, keys }
       const mirrored = { ...request, keys: keys.map(key => ({ ...key, reading: -key.reading })) }
       expect(outline(judge(mirrored))).toEqual(outline(judge(request)))
