@@ -8,7 +8,10 @@ import { makeEdgeLists } from './lists/edge'
 import { HARD, SIZED, makeLists } from './lists/make'
 import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
 import { POINT_PLAN, makePointLists } from './lists/points'
+import { makeMoreLists } from './lists/moreLaws'
+import { makePointLists } from './lists/points'
 import { restLists } from './lists/start'
+import { moreTable } from './moreScore'
 import { pointTable, scorePoints } from './pointScore'
 import { finderTable, isWhole, scoreFinder, scoreSpans, spanTable } from './spanScore'
 
@@ -46,6 +49,7 @@ export default async function run(): Promise<void> {
   console.log(`the same, claimed to start at rest ${perSecond(speedOf(lists, { start: 'rest' }))}`)
   const { ratio, apart, agree, lists: both } = againstLibrary(lists)
   console.log(`odex and ml-levenberg-marquardt    ${ratio.toFixed(0)} times as slow on ${both} clean topples and swings; sizes within 1 % on ${agree}, ${(100 * apart).toFixed(3)} % apart at the median`)
+  console.log(`\n${moreTable(makeMoreLists(1280, 7))}`)
   const divided = makeSpans(24 * SPAN_ROUND, 7)
   console.log(`\n${spanTable(scoreSpans(divided))}`)
   console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)

@@ -26,6 +26,8 @@ interface Motion {
   within: number
   /** Frames between which the list has something to show. */
   least: number
+  /** Frames after which no other motion of the law comes near, whatever a fault leaves of it; not told where that is soon. */
+  known?: number
   /** Share of the amplitude that is lost by the end. */
   lost?: number
 }
@@ -93,7 +95,7 @@ function bouncing(chance: Chance, paper: Paper, every: number): Motion | null {
   const up = chance.one([1, -1])
   return {
     readings: heights.map(metres => zero + up * scale * metres), size: scale, figure: { kind: 'restitution', value: restitution },
-    turns: true, within: 0, least: first + 4 * every,
+    turns: true, within: 0, least: first + 4 * every, known: first + hop * (1 + restitution / 2),
   }
 }
 
@@ -160,6 +162,7 @@ function attempt(chance: Chance, family: Family, law: MoreLaw): MoreList | null 
   let delay = (_i: number) => 0
   let from = -1
   if (family === 'held' || family === 'skipped') {
+    if ((at.at(-1) as number) < (motion.known ?? 0)) return null
     from = chance.whole(3, n - 4)
     const exposure = family === 'held' ? (at[from] as number) - (at[from - 1] as number) : (at[from] as number) - (at[from + 1] as number)
     if (family === 'skipped') at = at.slice(0, -1)
