@@ -88,8 +88,10 @@ export function beginDecay(series: Series, y: Float64Array): Float64Array[] {
   const energy = Math.min(0.98, half * half + push * push)
   const amplitude = Math.max(LEAST_AMPLITUDE, 2 * Math.asin(Math.sqrt(energy)))
   const swing = fullSwing(amplitude)
-  const phase = incompleteF(half, push, 1 - energy) / swing
+  // Counted from whichever side it starts on, so that a swing and its mirror image are searched for alike to the last bit.
+  const side = half < 0 || (half === 0 && push < 0) ? -1 : 1
+  const phase = incompleteF(side * half, side * push, 1 - energy) / swing
   // γ per span, over a full swing of 4K/κ spans.
   const decrement = drag > 0 ? drag / 2 * swing / kappa : 0.02
-  return PACES.map(pace => Float64Array.of(Math.log(kappa * pace), amplitude, phase, decrement))
+  return PACES.map(pace => Float64Array.of(Math.log(kappa * pace), side * amplitude, phase, decrement))
 }
