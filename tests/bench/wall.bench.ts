@@ -65,9 +65,9 @@ async function fill(house: House): Promise<{ id: string; cookie: string }> {
     const sketch = { number: 1, verdict: 'breaks', headline: 'Frame 35 lands 0.8 frame early.', drawings: 24, marks }
     const take = randomUUID()
     await house.run(
-      `INSERT INTO takes (id, client_id, shot_id, number, keys, measure, unit, slop, tolerance, fps, claim, person_id,
+      `INSERT INTO takes (id, client_id, shot_id, number, keys, unit, slop, tolerance, fps, claim, person_id,
                           created_at, answer, verdict, judge_version, sketch)
-       VALUES (?, ?, ?, 1, '[]', 'angle', 'deg', 0.3, 0.1, 24, ?, ?, ?, '{}', 'breaks', 'bench', ?)`,
+       VALUES (?, ?, ?, 1, '[]', 'deg', 0.3, 0.1, 24, ?, ?, ?, '{}', 'breaks', 'bench', ?)`,
       ...[take, randomUUID(), shot.id, JSON.stringify(claim), person.id, at, JSON.stringify(sketch)],
     )
     if (i % 4 === 0) continue

@@ -1,6 +1,6 @@
 import { equalLength, pathAcceleration, STANDARD_GRAVITY } from '~/utils/motion'
 import { freeSwing } from '~/utils/motion/swing'
-import type { BodySubject, Key, PathSubject } from '~/utils/motion/types'
+import type { BodySubject, Key, PathSubject, PointKey } from '~/utils/motion/types'
 
 /**
  * Spacing lists for the demo: the laws' own motion, an animator's pencil, and here and there a fault put in on purpose.
@@ -33,12 +33,53 @@ function pencilNoise(seed: number): () => number {
   }
 }
 
+/** A hand that puts one value after the other on paper. */
+function hand({ seed, grid, slip }: Pencil): (value: number) => number {
+  const noise = pencilNoise(seed)
+  return (value) => Number((Math.round((value + noise() * slip) / grid) * grid).toFixed(4))
+}
+
 function drawn(exposure: Exposure, readings: readonly number[], pencil: Pencil): Key[] {
-  const noise = pencilNoise(pencil.seed)
-  return readings.map((reading, i) => ({
-    frame: exposure.first + i * exposure.step,
-    reading: Number((Math.round((reading + noise() * pencil.slip) / pencil.grid) * pencil.grid).toFixed(4)),
-  }))
+  const put = hand(pencil)
+  return readings.map((reading, i) => ({ frame: exposure.first + i * exposure.step, reading: put(reading) }))
+}
+
+/** A planned list as somebody drew it. */
+export function traced(keys: readonly Key[], pencil: Pencil): Key[] {
+  const put = hand(pencil)
+  return keys.map(({ frame, reading }) => ({ frame, reading: put(reading) }))
+}
+
+/** Planned points as somebody drew them. */
+export function tracedPoints(keys: readonly PointKey[], pencil: Pencil): PointKey[] {
+  const put = hand(pencil)
+  return keys.map(({ frame, x, y }) => ({ frame, x: put(x), y: put(y) }))
+}
+
+/**
+ * Pushed off, rolling, braked, on ones: `out` frames of speeding up to `push`, `run` frames at `speed`, then slowing to a stop over `stop`
+ * frames. Units per frame; where push and speed differ, the joint between them is broken.
+ */
+export function pushedAndBraked(first: number, { out, push, run, speed, stop }: Record<'out' | 'push' | 'run' | 'speed' | 'stop', number>, pencil: Pencil): Key[] {
+  const away = (push * out) / 2
+  const at = (i: number) => {
+    if (i <= out) return (push * i * i) / (2 * out)
+    if (i <= out + run) return away + speed * (i - out)
+    const left = out + run + stop - i
+    return away + speed * run + (speed * (stop * stop - left * left)) / (2 * stop)
+  }
+  return drawn({ fps: 24, first, step: 1, count: out + run + stop + 1 }, Array.from({ length: out + run + stop + 1 }, (_, i) => at(i)), pencil)
+}
+
+/** What somebody draws who forgets that a falling thing keeps its way: from `frame` on it goes straight down. */
+export function straightDown(keys: readonly PointKey[], frame: number): PointKey[] {
+  const stays = keys.findLast((key) => key.frame <= frame)?.x ?? 0
+  return keys.map((key) => (key.frame > frame ? { ...key, x: stays } : key))
+}
+
+/** Puts one drawing off its path. */
+export function strayed(keys: readonly PointKey[], index: number, by: { x: number; y: number }): PointKey[] {
+  return keys.map((key, i) => (i === index ? { ...key, x: key.x + by.x, y: key.y + by.y } : key))
 }
 
 /** Position along a fall, slide or roll, in drawing units; `start` in units, `speed` in units per second. */

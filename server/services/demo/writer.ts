@@ -9,7 +9,7 @@ import type { EventKind } from '~/utils/contracts/event'
 import type { Claim } from '~/utils/contracts/production'
 import { requestFor } from '~/utils/contracts/check'
 import { judge } from '~/utils/motion'
-import type { DemoShot, DemoTake, DemoThread } from './shots'
+import type { DemoShot, DemoTake, DemoThread } from './story'
 
 const DAY_MS = 24 * 60 * 60 * 1000
 
