@@ -3,7 +3,8 @@ import { angle, bell, coil, degrees, drop, inPoints, onPaper, ones, parapet, pix
 import { even, fallen, misplaced, straightDown, strayed, traced, tracedPoints, turned } from './lists'
 import type { DemoSequence } from './story'
 
-const parapetFall = plannedEdge({ subject: parapet, lean: 3, drop: 6, fps: 24, exposure: 1, unitsPerMetre: 60, brink: { x: 300, y: 200 } })
+const parapetBrink = { x: 300, y: 200 }
+const parapetFall = plannedEdge({ subject: parapet, lean: 3, drop: 6, fps: 24, exposure: 1, unitsPerMetre: 60, brink: parapetBrink })
 
 export const clockTower: DemoSequence = {
   code: 'CLK',
@@ -21,7 +22,7 @@ export const clockTower: DemoSequence = {
     },
     {
       code: 'CLK-115', title: 'Parapet block goes over the brink', range: [1, 80], dueIn: 2, animator: 'nagisa', supervisor: 'supervisor',
-      brief: 'It tips on the edge, lets go, and turns in the air. Drawn as the path of its centre.', claim: inPoints('over-edge', parapet),
+      brief: 'It tips on the edge, lets go, and turns in the air. Drawn as the path of its centre.', claim: { ...inPoints('over-edge', parapet), pivot: parapetBrink },
       takes: [{ by: 'nagisa', daysAgo: 0.7, keys: straightDown(tracedPoints(parapetFall.points, pixels(145)), parapetFall.release.frame) }],
       threads: [{ take: 1, says: [['supervisor', 0.5, 'It scrapes down the wall. Where has the swing gone?']] }],
     },

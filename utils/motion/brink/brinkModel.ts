@@ -18,7 +18,10 @@ export const UP = 5
 export const OWN = 6
 export const ALL = 7
 
-/** How the body lets go. 'straight': where the law has it, but dead sideways; 'never': the whole circle. */
+/**
+ * How the body lets go. 'own': at an angle of its own; 'straight': the same, and dead sideways from there (who draws that stops it on a
+ * drawing, not at the law's angle); 'never': the whole circle.
+ */
 export type Letting = 'law' | 'own' | 'straight' | 'never'
 
 /** Places and speeds (per span) at some times; drawing units on the sheet, y up. */
@@ -31,11 +34,14 @@ const LEAST_ANGLE = 0.03
 const MOST_ANGLE = 3
 const STEP = 1e-6
 
+/** True where the leaving angle is one of the numbers. */
+export const hasOwnAngle = (letting: Letting) => letting === 'own' || letting === 'straight'
+
 export function releaseOfBrink(numbers: Float64Array, ratio: number, letting: Letting): Release {
   const start = numbers[START] as number
   const push = (numbers[TURN] as number) / Math.exp(numbers[LOG] as number)
   if (letting === 'never') return { tau: Infinity, angle: start, turn: 0 }
-  const cosine = letting === 'own' ? Math.cos(numbers[OWN] as number) : leavingCosine(ratio, edgeEnergy(start, push))
+  const cosine = hasOwnAngle(letting) ? Math.cos(numbers[OWN] as number) : leavingCosine(ratio, edgeEnergy(start, push))
   return releaseAt(start, push, cosine)
 }
 

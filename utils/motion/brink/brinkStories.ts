@@ -13,7 +13,7 @@ import type { Shift } from '../scan'
 import type { Series } from '../series'
 import type { Place } from '../types'
 import { beginnings } from './brinkBegin'
-import { LOG, OWN, REACH, RIGHT, START, TURN, UP, brinkModel, everyOther, inTurn } from './brinkModel'
+import { LOG, OWN, REACH, RIGHT, START, TURN, UP, brinkModel, everyOther, hasOwnAngle, inTurn } from './brinkModel'
 import type { BrinkModel, Letting } from './brinkModel'
 
 /** Brink, reach and pace pull at one another along a narrow valley. */
@@ -37,7 +37,7 @@ export interface Tipped { sheet: Sheet, series: Series, care: Care, brink: Place
 
 /** The numbers that are looked for. */
 export function freeNumbers({ brink, atRest }: Tipped, letting: Letting): number[] {
-  return [LOG, START, ...(atRest ? [] : [TURN]), REACH, ...(brink ? [] : [RIGHT, UP]), ...(letting === 'own' ? [OWN] : [])]
+  return [LOG, START, ...(atRest ? [] : [TURN]), REACH, ...(brink ? [] : [RIGHT, UP]), ...(hasOwnAngle(letting) ? [OWN] : [])]
 }
 
 const twice = (values: ArrayLike<number>) => inTurn(values, values)
