@@ -50,7 +50,7 @@ export const useOutboxStore = defineStore('outbox', () => {
     const [address, whole] =
       'thread' in to ? [`${threads}/${to.thread}/comments`, comment] : [threads, { clientId: to.opens, ...to.pin, comment }]
     try {
-      await $fetch(address, { method: 'POST', body: whole, retry: 0, timeout: SEND_WITHIN })
+      await $fetch<unknown>(address, { method: 'POST', body: whole, retry: 0, timeout: SEND_WITHIN })
       // Over a live line the news of it is already on its way.
       if (live.state !== 'live') void live.catchUp()
       return 'done'

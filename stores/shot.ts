@@ -109,7 +109,7 @@ export const useShotStore = defineStore('shot', () => {
     sending.value = stamp
     freshRuling.value = stamp.id
     try {
-      await $fetch(`${takePath()}/rulings`, { method: 'POST', body: { clientId, decision, note, version: shown.version } })
+      await $fetch<unknown>(`${takePath()}/rulings`, { method: 'POST', body: { clientId, decision, note, version: shown.version } })
       await refetch()
     } finally {
       if (sending.value === stamp) sending.value = null
@@ -118,7 +118,7 @@ export const useShotStore = defineStore('shot', () => {
   }
 
   const write = async (method: 'POST' | 'DELETE' | 'PATCH', address: string, body?: object) => {
-    await $fetch(address, { method, body })
+    await $fetch<unknown>(address, { method, body })
     await refetch()
   }
   const flag = (fromFrame: number, toFrame: number, reason: string, finding: FindingName | null, clientId: string) =>
