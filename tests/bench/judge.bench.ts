@@ -6,6 +6,7 @@ import { againstLibrary, speedOf } from './judgeSpeed'
 import type { Speed } from './judgeSpeed'
 import { makeEdgeLists } from './lists/edge'
 import { HARD, SIZED, makeLists } from './lists/make'
+import { makePointSpans, POINT_SPAN_ROUND } from './lists/makePointSpans'
 import { makeSpans, SPAN_ROUND } from './lists/makeSpans'
 import { makeMoreLists } from './lists/moreLaws'
 import { POINT_PLAN, makePointLists } from './lists/points'
@@ -51,6 +52,7 @@ export default async function run(): Promise<void> {
   console.log(`\n${moreTable(makeMoreLists(1280, 7))}`)
   const divided = makeSpans(24 * SPAN_ROUND, 7)
   console.log(`\n${spanTable(scoreSpans(divided))}`)
+  console.log(`\n${spanTable(scoreSpans(makePointSpans(24 * POINT_SPAN_ROUND, 7)))}`)
   console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)
   console.log(`\n${pointTable(scorePoints(makePointLists(40 * POINT_PLAN.length, 7)))}`)
   console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(950, 7)))}`)

@@ -2,7 +2,10 @@
 import { judge } from '../../utils/motion'
 import type { CheckResult } from '../../utils/motion'
 import type { MadeList } from './lists/make'
+import type { MadePointSpans } from './lists/makePointSpans'
 import type { MadeSpans } from './lists/makeSpans'
+
+type Divided = MadeSpans | MadePointSpans
 
 export interface SpanRow { family: string, lists: number, right: number }
 
@@ -12,18 +15,18 @@ export interface SpanScore {
   right: number
   /** Share of clean lists with any finding, or told undecided. */
   cleanFlagged: number
-  wrong: { list: MadeSpans, result: CheckResult }[]
+  wrong: { list: Divided, result: CheckResult }[]
 }
 
 /** Right kind at the right frames, and nothing else told. */
-export function isRightSpans({ truth }: MadeSpans, result: CheckResult): boolean {
+export function isRightSpans({ truth }: Divided, result: CheckResult): boolean {
   if (truth.kind === 'clean') return result.verdict === 'holds' && result.findings.length === 0
   const [finding, ...more] = result.findings
   return finding !== undefined && more.length === 0 && finding.kind === truth.kind && finding.frames.join() === truth.frames.join()
 }
 
 /** Every list judged with the division that it was made by. */
-export function scoreSpans(lists: readonly MadeSpans[]): SpanScore {
+export function scoreSpans(lists: readonly Divided[]): SpanScore {
   const rows = new Map<string, SpanRow>()
   const wrong: SpanScore['wrong'] = []
   let clean = 0
@@ -98,8 +101,8 @@ const percent = (part: number, whole: number) => `${(100 * part / Math.max(1, wh
 /** The score of divided lists in words. */
 export function spanTable({ rows, right, lists, cleanFlagged }: SpanScore): string {
   return [
-    'divided lists                   lists   right',
-    ...rows.map(row => `${row.family.padEnd(30)}${String(row.lists).padStart(7)}${percent(row.right, row.lists).padStart(9)}`),
+    'divided lists                                 lists   right',
+    ...rows.map(row => `${row.family.padEnd(44)}${String(row.lists).padStart(7)}${percent(row.right, row.lists).padStart(9)}`),
     '',
     `right kind and frames, overall     ${percent(right, lists)} of ${lists}`,
     `clean lists with any finding       ${percent(cleanFlagged, 1)}`,

@@ -182,13 +182,13 @@ export interface JudgedSpan {
   figures: Figure[]
 }
 
-/** Where two spans meet. Speeds in reading units per frame; null where a side could not be fitted. */
+/** Where two spans meet. Speeds in reading units per frame, of points in drawing units and unsigned; null where a side could not be fitted. */
 export interface JudgedJoint {
   frame: number
   contact: boolean
   before: number | null
   after: number | null
-  /** How far the two lines lie apart at the joint, reading units. */
+  /** How far the two lines lie apart at the joint, reading units; of points the distance on the drawing. */
   apart: number | null
   holds: boolean
 }
@@ -214,7 +214,7 @@ export interface Finding {
   /**
    * How much, in the kind's own measure. misplaced and backward: reading units; held and skipped: frames late or early;
    * wrong-law: misfit of the claimed law (1 is at the edge of notice); wrong-scale: size read over size claimed;
-   * broken-joint: the change of speed, reading units per frame; off-path: distance off the path, drawing units; wrong-release: degrees
+   * broken-joint: the change of speed, reading units per frame, of points the length of the change of velocity; off-path: distance off the path, drawing units; wrong-release: degrees
    * late (positive) or early.
    * not-at-rest: frames before the first drawing at which it reads as let go, negative where after it, 0 where it never stands still.
    */

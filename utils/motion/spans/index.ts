@@ -10,6 +10,7 @@ import { joined, spanOf } from './join'
 import { judgeJoint } from './joint'
 import { judgeAsWhole, judgePart } from './judgePart'
 import type { JudgedPart } from './judgePart'
+import { judgePointJoint } from './pointJoint'
 
 /**
  * Judges every span as a list of its own, and how they meet. With `spans: 'find'` it looks for the division first, and a single law that
@@ -62,7 +63,8 @@ function wholeUnder(request: CheckRequest, laws: readonly Law[]): JudgedPart {
 function judgeDivided(request: CheckRequest, spans: readonly Span[]): Judgement {
   const divided = divide(request, spans)
   const parts = settleContacts(request, divided.map(judgePart))
+  const judge = request.measure === 'point' ? judgePointJoint : judgeJoint
   const joints = divided.slice(0, -1).map(({ last }, i) =>
-    judgeJoint(request, parts[i] as JudgedPart, parts[i + 1] as JudgedPart, request.keys[last]?.frame ?? 0))
+    judge(request, parts[i] as JudgedPart, parts[i + 1] as JudgedPart, request.keys[last]?.frame ?? 0))
   return joined(request, parts, joints)
 }

@@ -70,7 +70,7 @@ function settledAt(joints: JointJudgement[]): Set<number> {
 
 /** All findings in order of the list, what is wrong with a joint's own drawing once. */
 function joinedFindings(request: CheckRequest, parts: JudgedPart[], joints: JointJudgement[]): Finding[] {
-  const strays = joints.flatMap(({ key }) => (key ? [key] : []))
+  const strays = joints.flatMap(({ key, finding }) => (key && !finding ? [key] : []))
   const settled = settledAt(joints)
   const told = new Set<number>()
   const found = parts.flatMap(({ judgement: { result } }) => result.findings.filter(({ kind, frames }) => {

@@ -12,7 +12,7 @@ const SPREADS_OF_SPEED = 3.3
 export interface JointJudgement {
   joint: JudgedJoint
   finding: Finding | null
-  /** Told where the joint's own drawing is what is wrong: how it sits against the lines that meet there. */
+  /** There where the joint's own drawing is what is wrong: how it sits against the lines that meet there. `finding` tells of it, if not null. */
   key: JudgedKey | null
 }
 

@@ -28,3 +28,7 @@ export function speedJumps(frame: number, before: number, after: number, unit: s
 export function spansApart(frame: number, apart: number, unit: string): string {
   return `At frame ${frame} the spans don’t meet: their lines lie ${measured(apart, unit)} apart.`
 }
+
+export function wayTurns(frame: number, degrees: number): string {
+  return `At frame ${frame} the motion turns off by ${Math.round(degrees)}° at once: nothing there says contact.`
+}
