@@ -5,7 +5,7 @@ import type { Degrees } from '../flight/planar'
 import { shiftedTimes } from '../scan'
 import type { Law, LawMisfit } from '../types'
 import { LOG, OWN, brinkPlaces, releaseOfBrink } from './brinkModel'
-import { brinkCost, brinkPencil, circling, lawStories, likeliestOf, misfitOf, otherStories, rowsOf, tooMany } from './brinkStories'
+import { brinkCost, brinkPencil, circling, lawStories, likeliestOf, misfitOf, otherStories, ownSaves, rowsOf, tooMany } from './brinkStories'
 import type { BrinkStory, Tipped } from './brinkStories'
 
 /** Beyond this, nats, a drawing counts as a lone bad one, not as evidence against a law. */
@@ -54,7 +54,11 @@ export function brinkOpinion(tipped: Tipped, misscaled: (story: BrinkStory) => b
   let sigma = brinkPencil(told, n, care)
   let law = judged(told, sigma)
   const faults = (story: BrinkStory) => story.bad.length + (story.shift ? 1 : 0) + (misscaled(story) ? 1 : 0)
-  const clean = faults(law.story) === 0 && law.misfit <= UNNOTICED
+  // A brink that isn't given, and the size, give way to a wrong angle until hardly anything is left to notice; the pencil scatters, though,
+  // and what is left then doesn't.
+  const close = faults(law.story) === 0 && law.misfit <= UNNOTICED
+  const bent = close && ownSaves(tipped, law.story, fromOf(law.story, tipped)) > DOUBT
+  const clean = close && !bent
   // Other ways of letting go are only heard where something is wrong at all.
   const ways: BrinkStory[][] = clean ? [] : (['own', 'straight'] as const).map(letting => otherStories(tipped, letting, fromOf(law.story, tipped))).filter(stories => stories.length > 0)
   sigma = Math.min(sigma, ...ways.map(stories => brinkPencil(stories, n, care)))
@@ -84,7 +88,7 @@ export function brinkOpinion(tipped: Tipped, misscaled: (story: BrinkStory) => b
   if (best && best.law !== 'topple' && best.charge <= law.cost + (airborne ? DOUBT : 0)) return answer(evenly ? 'wrong-law' : 'in-the-air', plain, evenly ? 'steady' : null)
   if (other) {
     const saves = faults(other.story) < faults(law.story)
-    const clearly = other.cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) < free && (saves || law.misfit > UNNOTICED)
+    const clearly = other.cost + (saves ? DOUBT_WITH_FAULTS : DOUBT) < free && (saves || bent || law.misfit > UNNOTICED)
     if (clearly && !(best && best.charge < other.cost)) return answer('wrong-release', other.story)
   }
   if (!acceptable) return answer('wrong-law', plain, best ? (evenly ?? best).law : null)

@@ -18,6 +18,8 @@ import type { BrinkModel, Letting } from './brinkModel'
 
 /** Brink, reach and pace pull at one another along a narrow valley. */
 const PATIENT: Effort = { steps: 60, enough: 1e-8 }
+/** Where an angle before the law's is first looked for, as a share of it. */
+const EARLIER = 0.65
 
 export interface BrinkStory {
   model: BrinkModel
@@ -154,15 +156,37 @@ const mostOut = ({ sheet: { n } }: Tipped, { model }: BrinkStory) => Math.min(n 
 
 /**
  * Another way of letting go, to be compared with: nothing happened, or some drawings are misplaced. A drawing held or skipped on top would
- * be a second fault. The first is "nothing happened". `near`: all seven numbers of a line close by.
+ * be a second fault. The first is "nothing happened". `near`: all seven numbers of the law's line.
  */
 export function otherStories(tipped: Tipped, letting: Letting, near: Float64Array): BrinkStory[] {
-  const told = plainStories(tipped, letting, [near]).slice(0, 1)
+  const told = plainStories(tipped, letting, letting === 'own' ? bothSides(near) : [near]).slice(0, 1)
   const [plain] = told
   if (!plain || plain.bad.length === 0) return told
   const { numbers, off } = doubting(tipped, plain)
   if (off.length <= mostOut(tipped, plain)) told.push(extend(tipped, tell(tipped, plain.model, off, null, numbers), mostOut(tipped, plain)))
   return told
+}
+
+/**
+ * Between an angle before the law's and one after it lies a ridge that no fit climbs: brink, reach and size give way to either, so that
+ * each is looked for from its own side. `near`: with the law's angle.
+ */
+function bothSides(near: Float64Array): Float64Array[] {
+  const early = near.slice()
+  early[OWN] = EARLIER * (near[OWN] as number)
+  return [early, near]
+}
+
+/** Nats that an angle of its own would save a line under which nothing breaks, at a first glance. */
+export function ownSaves(tipped: Tipped, law: BrinkStory, near: Float64Array): number {
+  const free = freeNumbers(tipped, 'own')
+  const { n } = tipped.sheet
+  return Math.max(...bothSides(near).map((numbers) => {
+    const model = brinkModel('own', free, numbers)
+    const own = tell(tipped, model, [], null, model.free(numbers))
+    const sigma = brinkPencil([law, own], n, tipped.care)
+    return brinkCost(law, sigma, n) - brinkCost(own, sigma, n)
+  }))
 }
 
 /** The whole circle, as it is: a topple. */
