@@ -107,11 +107,12 @@ function acceptable(series: Series, story: Story, care: Care): boolean {
 
 /**
  * True where the claimed law or a plain rival explains the list. Laws with more freedom cost more to fit and could explain much: they are
- * asked only where this is false. A swing saved by several faults may be one that dies.
+ * asked only where this is false. A swing saved by several faults may be one that dies, a topple one that left its foot.
  */
 export function explained(series: Series, { claimed, others }: Choice, care: Care): boolean {
   if (others.some(fits)) return true
   if (claimed.law === 'pendulum' && (claimed.story.shift || claimed.story.out.length > 1)) return false
+  if (claimed.law === 'topple' && blamed(claimed.story) > 1) return false
   return acceptable(series, claimed.story, care)
 }
 

@@ -24,7 +24,7 @@ import { canRest } from './standstill'
 import { alreadyMoving, beyondDoubt } from './start'
 import type { Considered } from './start'
 import { joined, toldInTheirTurn, turnsToAdd } from './turns'
-import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Law, Place, ReadingCheck } from './types'
+import type { CheckRequest, CheckResult, ClaimFrames, Finding, JudgedKey, Law, LawMisfit, Place, ReadingCheck } from './types'
 
 export interface Judgement {
   result: CheckResult
@@ -50,7 +50,15 @@ const TURNING: readonly Law[] = ['pendulum', 'swing-decay', 'bounce']
 /** Judges a list of readings; `spans` are left alone. Never throws and never answers NaN on what the contract lets through. */
 export function judgeReadings(request: ReadingCheck): Judgement {
   const turns = request.law === 'spin' ? turnsToAdd(request) : null
-  return turns ? toldInTheirTurn(judgeRow(joined(request, turns)), request, turns) : judgeRow(request)
+  if (turns) return toldInTheirTurn(judgeRow(joined(request, turns)), request, turns)
+  return judgeRow(request)
+}
+
+/** What the list reads as if its readings begin again at every full turn; null where they don't, or break all the same. */
+function asSpin(request: ReadingCheck): LawMisfit | null {
+  if (!turnsToAdd(request)) return null
+  const { verdict, readsAs } = judgeReadings({ ...request, law: 'spin' }).result
+  return verdict === 'holds' ? readsAs.find(({ law }) => law === 'spin') ?? null : null
 }
 
 function judgeRow(request: ReadingCheck): Judgement {
@@ -114,10 +122,12 @@ function answer(request: ReadingCheck, series: Series, { choice, scale, opinion 
     const line = endToEnd(series, lineFrom(choice.plain, 0), care.slop)
     const keys = judgeKeys(request, series, traceLine(series, line, series.x))
     const amount = readsAs.find(({ law }) => law === request.law)?.misfit ?? 0
-    const findings = [wrongLawFinding(request.law, opinion.reads, amount, keys)]
+    // Even spacing of an angle and a spin are one law, told apart only by a turn that begins again: asked where nothing else explains it.
+    const spin = request.law === 'steady' && opinion.reads === null ? asSpin(request) : null
+    const findings = [wrongLawFinding(request.law, spin ? spin.law : opinion.reads, amount, keys)]
     return {
       line, pace: null,
-      result: { verdict: 'breaks', reason: null, keys, findings, readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: claimFromRest(request, series) } },
+      result: { verdict: 'breaks', reason: null, keys, findings, readsAs: spin ? [spin, ...readsAs] : readsAs, size: null, claim: null, ruled: { fit: ruledList(series, line, request), claim: claimFromRest(request, series) } },
     }
   }
 

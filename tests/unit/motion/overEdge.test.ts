@@ -67,6 +67,12 @@ describe('a body over the edge', () => {
     }
   })
 
+  it.each([75, 90, 120, 200])('claimed as a topple and drawn to %d° it reads as what it is', (until) => {
+    const result = judge({ ...claim, law: 'topple', keys: rod(2, 2, until) })
+    expect(result.findings.map(({ text }) => text)).toEqual(['This is not a topple; it reads as a fall over the edge.'])
+    expect(result.readsAs[0]?.law).toBe('over-edge')
+  })
+
   it('that never lets go is a topple', () => {
     const result = judge({ ...claim, keys: rod(2, 2, 100, 179) })
     expect(result.findings.map(finding => finding.kind)).toEqual(['wrong-law'])

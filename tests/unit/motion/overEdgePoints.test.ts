@@ -58,6 +58,12 @@ describe('the centre of a body over the edge', () => {
     expect(result.findings[0]?.text).toMatch(leavesAt < 53 ? /^Lets go at 4[012]°, 1\d° too early: this body leaves the edge at 53°\.$/ : /too late/)
   })
 
+  it.each([32, 41, 45])('is told that it lets go at %d° where brink and size could give way to hide it', (leavesAt) => {
+    const result = judge({ ...claim, subject: { shape: 'rod', height: 3 }, keys: rod(3, { leavesAt }) })
+    expect(result.findings.map(({ kind }) => kind)).toEqual(['wrong-release'])
+    expect(Math.abs((result.findings[0]?.amount ?? 0) - (leavesAt - 53.15))).toBeLessThan(1.5)
+  })
+
   it('is told that it falls straight down the side', () => {
     const result = judge({ ...claim, pivot: brink, keys: rod(3, { sideways: false }) })
     expect(result.findings.map(({ kind }) => kind)).toEqual(['wrong-release'])

@@ -63,6 +63,13 @@ describe('a spin', () => {
     }
   })
 
+  it.each([30, -45, 120])('claimed as even spacing, %d° a frame beginning again at 360° reads as a spin', (perFrame) => {
+    const result = judge(turning(perFrame, 360, { law: 'steady' }))
+    expect(result.findings.map(({ text }) => text)).toEqual(['This is not even spacing; it reads as a spin.'])
+    expect(result.readsAs[0]?.law).toBe('spin')
+    expect(new Set(result.readsAs.map(({ law }) => law)).size).toBe(result.readsAs.length)
+  })
+
   it('a swing is not a spin', () => {
     const keys = Array.from({ length: 40 }, (_, i) => ({ frame: i, reading: Math.round(400 * Math.cos(i / 5)) / 10 }))
     const result = judge(turning(1, null, { keys }))

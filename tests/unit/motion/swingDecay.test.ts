@@ -42,6 +42,8 @@ describe('a dying swing', () => {
     const undying = judge(dying(40, 0, 1, 120))
     expect(undying.verdict).toBe('holds')
     expect(lost(undying)).toBeLessThan(0.2)
+    // A pendulum does as well with one number fewer.
+    expect(undying.readsAs[0]?.law).toBe('pendulum')
   })
 
   it('posted as a pendulum it reads as what it is, however many drawings one could blame instead', () => {

@@ -40,12 +40,13 @@ export function rivalsOf(law: ReadingLaw, measure: Measure, series: Series): Rea
 }
 
 /**
- * The laws with more freedom, which have their say where none of the plain ones explains a list. Both turn on the way, so a list that
- * only ever goes one way, save for the slop, is spared them.
+ * The laws with more freedom, which have their say where none of `laws`, the claimed one first, explains a list. A bounce and a dying swing
+ * turn on the way, so a list that only ever goes one way, save for the slop, is spared them; a topple may have left its foot behind.
  */
 export function freerThan(laws: readonly ReadingLaw[], measure: Measure, series: Series, slop: number): ReadingLaw[] {
-  if (!turnsBack(series.y, 2 * slop)) return []
-  return (['bounce', 'swing-decay'] as const).filter(law => MEASURES[law].includes(measure) && !laws.includes(law))
+  const freer: ReadingLaw[] = turnsBack(series.y, 2 * slop) ? ['bounce', 'swing-decay'] : []
+  if (laws[0] === 'topple') freer.push('over-edge')
+  return freer.filter(law => MEASURES[law].includes(measure) && !laws.includes(law))
 }
 
 function turnsBack(y: Float64Array, room: number): boolean {
