@@ -21,7 +21,7 @@ export const clockTower: DemoSequence = {
       ],
     },
     {
-      code: 'CLK-115', title: 'Parapet block goes over the brink', range: [1, 80], dueIn: 2, animator: 'nagisa', supervisor: 'supervisor',
+      code: 'CLK-112', title: 'Parapet block goes over the brink', range: [1, 80], dueIn: 2, animator: 'nagisa', supervisor: 'supervisor',
       brief: 'It tips on the edge, lets go, and turns in the air. Drawn as the path of its centre.', claim: { ...inPoints('over-edge', parapet), pivot: parapetBrink },
       takes: [{ by: 'nagisa', daysAgo: 0.7, keys: straightDown(tracedPoints(parapetFall.points, pixels(145)), parapetFall.release.frame) }],
       threads: [{ take: 1, says: [['supervisor', 0.5, 'It scrapes down the wall. Where has the swing gone?']] }],

@@ -18,7 +18,7 @@ const faults: Record<string, FindingKind[]> = {
   'CHN-060': ['wrong-scale'],
   'CHN-090': ['wrong-scale'],
   'CLK-110': ['wrong-scale', 'misplaced'],
-  'CLK-115': ['wrong-release'],
+  'CLK-112': ['wrong-release'],
   'CLK-130': ['wrong-law'],
   'CLK-155': ['off-path'],
   'CLK-160': ['misplaced'],
