@@ -1,7 +1,9 @@
 /** The bars for divided lists of points, on fixed sets made by the bench's own generator (tests/bench/lists/makePointSpans.ts). */
 import { describe, expect, it } from 'vitest'
 import { judge } from '../../../utils/motion'
+import type { CheckRequest } from '../../../utils/motion'
 import { makePointSpans, POINT_SPAN_ROUND } from '../../bench/lists/makePointSpans'
+import { POINT_PLAN, makePointLists } from '../../bench/lists/points'
 import { scoreSpans } from '../../bench/spanScore'
 
 describe('made lists of points in two and three spans', () => {
@@ -68,5 +70,28 @@ describe('rolling off a table', () => {
     expect(findings[0]?.frames).toEqual([21])
     expect(joints?.[0]?.holds).toBe(true)
     expect(judged[10]?.breaks).toBe(true)
+  })
+})
+
+describe('joints looked for between points', () => {
+  const straight = /slope-steady-in: clean|fall-contact-rise: clean/
+
+  it('finds them within one key where all lies on one line', () => {
+    const lists = makePointSpans(5 * POINT_SPAN_ROUND, 20266).filter(({ family }) => straight.test(family))
+    const found = lists.filter(({ request, spans: made }) => {
+      const exposure = (request.keys[1]?.frame ?? 0) - (request.keys[0]?.frame ?? 0)
+      const told = judge({ ...request, spans: 'find' }).spans ?? []
+      return told.length === made.length && told.slice(0, -1).every(({ to, contact }, i) =>
+        Math.abs(to - (made[i]?.to ?? Infinity)) <= exposure && contact === (made[i]?.contact ?? false))
+    })
+    expect(lists).toHaveLength(20)
+    expect(found.length / lists.length).toBeGreaterThanOrEqual(0.95)
+  })
+
+  it('leaves points of a single law whole', () => {
+    const whole = makePointLists(POINT_PLAN.length, 20267)
+      .filter(({ family, truth: { kind } }) => ['clean', 'misplaced', 'off-path', 'held', 'skipped'].includes(kind) && !/no-path|straight/.test(family))
+    expect(whole.length).toBeGreaterThan(25)
+    for (const { family, request } of whole) expect(judge({ ...request, spans: 'find' } as CheckRequest).spans, family).toHaveLength(1)
   })
 })

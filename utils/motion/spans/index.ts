@@ -1,6 +1,7 @@
 /** A list divided into spans, each under a law of its own. */
+import { judgePoints } from '../points'
 import type { Judgement } from '../readings'
-import type { CheckRequest, Law, Span } from '../types'
+import type { CheckRequest, Law, PointCheck, ReadingCheck, Span } from '../types'
 import { divide } from './divide'
 import type { Part } from './divide'
 import { bestAnswer } from './find/index'
@@ -14,7 +15,8 @@ import { judgePointJoint } from './pointJoint'
 
 /**
  * Judges every span as a list of its own, and how they meet. With `spans: 'find'` it looks for the division first, and a single law that
- * explains the list is judged as ever, with the list as its one span. Never throws and never answers NaN on what the contract lets
+ * explains the list is judged as ever, with the list as its one span; points are searched where they keep to one path, else the claimed law
+ * is judged. Never throws and never answers NaN on what the contract lets
  * through; a joint that is no key of the list is taken at the nearest one.
  */
 export function judgeSpans(request: CheckRequest): Judgement {
@@ -32,7 +34,19 @@ export function findSpans(request: CheckRequest): Span[] {
 }
 
 function searched(request: CheckRequest): Answer {
-  return request.measure === 'point' ? { laws: [] } : bestAnswer(request)
+  if (request.measure !== 'point') return bestAnswer(request)
+  const along = alongOnePath(request)
+  return along ? bestAnswer(along) : { laws: [] }
+}
+
+/** Laws that have no one path to search along: they go over from one to another, or both ways of the drawing on their own. */
+const OF_THE_PLANE: readonly Law[] = ['flight', 'bounce', 'over-edge']
+
+/** The list's readings along its path, where all of it lies on one but for lone drawings; null where it doesn't. */
+function alongOnePath(request: PointCheck): ReadingCheck | null {
+  if (OF_THE_PLANE.includes(request.law)) return null
+  const { along, result: { findings } } = judgePoints(request)
+  return along && !findings.some(({ kind, frames }) => kind === 'off-path' && frames.length !== 1) ? along : null
 }
 
 /** Of divisions that explain the list about as well, the first in which the fewest spans turn out to be of another law or none. */
