@@ -133,7 +133,9 @@ function placeWords(
     .map((s) => ({ x: s.x + s.nx * TICK.to - 2, y: s.y + s.ny * TICK.to - 2, width: 4, height: 4 }))
   const marks = crosses.map(({ x, y }) => ({ x: x - CROSS_ARM, y: y - CROSS_ARM, width: 2 * CROSS_ARM, height: 2 * CROSS_ARM }))
   const strayed = new Set(layout.offPath?.map(({ index }) => index))
-  const wanted: Wanted<number>[] = [...broken]
+  // On a path that bends, words for each of a run would lie across the drawings: the first of the run speaks for it.
+  const telling = layout.dots ? broken.filter(({ i }) => !keys[i - 1]?.breaks) : broken
+  const wanted: Wanted<number>[] = [...telling]
     .sort((a, b) => severity(b.key) - severity(a.key))
     .slice(0, 60)
     .map(({ key, i }) => {

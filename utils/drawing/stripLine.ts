@@ -6,8 +6,11 @@ import type { Point } from '~/utils/drawing/strokes'
 import { px } from '~/utils/drawing/strokes'
 import { lineTrack } from '~/utils/drawing/track'
 
-const MOST_LANES = 6
+/** A bounce that dies away needs this many ways; later ones would be drawn over the first. The wall's small sheets have room for fewer. */
+const MOST_LANES = { whole: 10, small: 6 }
 const ABOVE_PLAIN = 26
+/** The lozenge of a joint that breaks stands above the ticks. */
+const ABOVE_JOINT = 42
 const ABOVE_BROKEN = 74
 const BELOW = 40
 /** More, where spans meet: the words of their laws. */
@@ -23,13 +26,14 @@ export function stripLine(keys: readonly StripKey[], claim: StripClaim, width: n
     keys.map(({ reading, law }) => law ?? reading),
     slack,
   )
-  const lanes = passes.map((pass) => pass % MOST_LANES)
+  const lanes = passes.map((pass) => pass % (small ? MOST_LANES.small : MOST_LANES.whole))
   const count = Math.max(0, ...lanes) + 1
+  const plain = joints.some(({ holds }) => !holds) ? ABOVE_JOINT : ABOVE_PLAIN
   const baselines: number[] = []
   let height = 0
   for (let lane = 0; lane < count; lane++) {
     const breaks = keys.some((key, i) => key.breaks && lanes[i] === lane)
-    const above = small ? 30 : breaks ? ABOVE_BROKEN : ABOVE_PLAIN
+    const above = small ? 30 : breaks ? ABOVE_BROKEN : plain
     baselines.push(height + above)
     height += above + (small ? 22 : BELOW + (joints.length > 0 ? JOINT_WORDS : 0))
   }

@@ -37,6 +37,14 @@ describe.each([320, 720, 1200])('a strip %d px wide', (width) => {
 })
 
 describe('a strip', () => {
+  it('draws no late way of a dying bounce over its first', () => {
+    // Nine ways there and back, each shorter than the one before.
+    const turnsAt = [0, 200, 90, 200, 130, 200, 155, 200, 175, 200]
+    const readings = turnsAt.flatMap((at, i) => (i === 0 ? [at] : [(turnsAt[i - 1]! + at) / 2, at]))
+    const rows = drawStrip(list(readings.length, (i) => readings[i]!), fall, 720).spots.map(({ y }) => y)
+    expect(new Set(rows).size).toBe(9)
+    expect(rows).toEqual([...rows].sort((a, b) => a - b))
+  })
   it('has one tick per drawing on either side, and moves breaking ones to their own stroke', () => {
     const drawing = drawStrip(list(12, (i) => i * i, (i) => i === 6), fall, 720)
     expect(strokes(drawing.posted)).toBe(11)

@@ -107,6 +107,16 @@ describe('where spans meet', () => {
     expect(signs.filter((sign) => curve[sign] !== '')).toEqual(drawn)
     expect(curve.words.map(({ text }) => text).sort()).toEqual(['slow in', 'steady'])
   })
+  it('keeps the sign of a broken joint on the paper', () => {
+    const { joints } = drawStrip(list, fall, 720, false, found(false, false))
+    const top = Number(/^M\S+ (\S+?)(?=[a-zA-Z])/.exec(joints.lozenges)![1])
+    expect(top).toBeGreaterThanOrEqual(0)
+  })
+  it('lets the first of a run of breaking points speak for it', () => {
+    const points = list.map((key, i) => ({ ...key, point: { x: i * 3, y: i * i }, breaks: i === 4 || (i >= 20 && i < 30) }))
+    const { breaks } = drawStrip(points, { ...fall, measure: 'point' }, 720)
+    expect(breaks.map(({ item }) => item).sort((a, b) => a - b)).toEqual([4, 20])
+  })
   it('writes nothing where there is one law', () => {
     expect(drawStrip(list, fall, 720).joints.words).toEqual([])
     expect(drawJoints({}, (frame) => frame, 0, 100, 10).words).toEqual([])
