@@ -15,9 +15,9 @@ export function postedKeys({ answer, claim }: Pick<Take, 'answer' | 'claim'>): K
     : answer.keys.map(({ frame, reading }) => ({ frame, reading }))
 }
 
-/** Whether the judge can look for joints in a take's list under this form: readings of the form's own kind. Points it does not divide. */
+/** Whether the judge can look for joints in a take's list under this form: it has to be of the form's own kind. */
 export const suitsTake = (form: Pick<ClaimForm, 'measure'>, take: Take | null): take is Take =>
-  take !== null && form.measure !== 'point' && take.claim.measure === form.measure && take.answer.keys.length >= CHECK_LIMITS.minKeys
+  take !== null && take.claim.measure === form.measure && take.answer.keys.length >= CHECK_LIMITS.minKeys
 
 /** The best division of a list, or why there is none. */
 export type FoundJoints = { rows: SpanRow[]; firstFrame: number } | { rows: null; why: string }

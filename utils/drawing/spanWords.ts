@@ -40,7 +40,9 @@ export function jointInWords({ contact, before, after, apart, holds }: JudgedJoi
   const speeds = before !== null && after !== null ? `${speed(before)}${unitSign(unit) === '°' ? '°' : ` ${unit}`} a frame before, ${speed(after)} after` : ''
   if (contact) return `contact${speeds ? `: ${speeds}` : ''}`
   if (holds) return `carries over${before !== null ? `, ${speed(before)}${unitSign(unit) === '°' ? '°' : ` ${unit}`} a frame` : ''}`
-  const gap = speeds || (apart !== null ? `${figure(apart)}${unitSign(unit) === '°' ? '°' : ` ${unit}`} apart` : '')
+  // The same speed on both sides, and broken all the same: the lines don't meet there, or the way turns off at once.
+  const alike = before !== null && after !== null && speed(before) === speed(after)
+  const gap = (!alike && speeds) || (apart !== null && Number(figure(Math.abs(apart))) > 0 ? `${figure(Math.abs(apart))}${unitSign(unit) === '°' ? '°' : ` ${unit}`} apart` : '')
   return `does not carry over${gap ? `: ${gap}` : ''}`
 }
 

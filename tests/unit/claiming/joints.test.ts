@@ -23,6 +23,12 @@ describe('the joints of a posted list', () => {
     const fall = Array.from({ length: 16 }, (_, i) => ({ frame: 1 + 2 * i, reading: 1.5 * i * i }))
     expect(findJoints(formOf(claim), takeOf(fall, claim))).toEqual({ rows: null, why: 'One law is enough for take 3: no joint was found.' })
   })
+  it('are found between points, too', () => {
+    const drawn: Claim = { ...claim, measure: 'point' }
+    const points = carriedList.map(({ frame, reading }) => ({ frame, x: 200 + 0.6 * reading, y: 90 + 0.8 * reading }))
+    const found = findJoints(formOf(drawn), takeOf(points, drawn))
+    expect(found).toMatchObject({ firstFrame: 1001, rows: carriedSpans.map(({ to, law }) => ({ to: String(to), law, contact: false })) })
+  })
   it('wait for a form that can be read', () => {
     expect(findJoints({ ...formOf(claim), slop: '' }, takeOf(carriedList, claim))).toEqual({ rows: null, why: 'Write a number here.' })
   })
@@ -32,5 +38,5 @@ it('a take’s list is told as it was posted, and offered only to a form of its 
   const flying: Claim = { ...claim, law: 'flight', measure: 'point' }
   expect(postedKeys(takeOf(carriedList, claim))).toEqual(carriedList)
   expect(postedKeys(takeOf(flightPoints, flying))).toEqual(flightPoints)
-  expect([suitsTake(formOf(claim), takeOf(carriedList, claim)), suitsTake(formOf(claim), takeOf(flightPoints, flying)), suitsTake(formOf(flying), takeOf(flightPoints, flying)), suitsTake(formOf(claim), null)]).toEqual([true, false, false, false])
+  expect([suitsTake(formOf(claim), takeOf(carriedList, claim)), suitsTake(formOf(claim), takeOf(flightPoints, flying)), suitsTake(formOf(flying), takeOf(flightPoints, flying)), suitsTake(formOf(claim), null)]).toEqual([true, false, true, false])
 })

@@ -38,5 +38,7 @@ describe('spans', () => {
     expect(jointInWords(joint({ contact: true, after: -7.4 }), 'px')).toBe('contact: 12.1 px a frame before, −7.4 after')
     expect(jointInWords(joint({ holds: false, after: 0.52 }), 'deg')).toBe('does not carry over: 12.1° a frame before, 0.52 after')
     expect(jointInWords(joint({ holds: false, before: null, apart: 3 }), 'px')).toBe('does not carry over: 3.0 px apart')
+    expect(jointInWords(joint({ holds: false, apart: 3 }), 'px')).toBe('does not carry over: 3.0 px apart')
+    expect(jointInWords(joint({ holds: false, apart: 0 }), 'px')).toBe('does not carry over')
   })
 })
