@@ -1,7 +1,6 @@
 /** The judge's score tables and speed over freshly made lists. Bundle and run; no test runner needed. */
 import { edgeTable, scoreEdge } from './edgeScore'
 import { scoreLists } from './judgeScore'
-import type { Score } from './judgeScore'
 import { againstLibrary, speedOf } from './judgeSpeed'
 import type { Speed } from './judgeSpeed'
 import { makeEdgeLists } from './lists/edge'
@@ -12,27 +11,9 @@ import { makeMoreLists } from './lists/moreLaws'
 import { POINT_PLAN, makePointLists } from './lists/points'
 import { restLists } from './lists/start'
 import { moreTable } from './moreScore'
-import { pointTable, scorePoints } from './pointScore'
+import { scorePoints } from './pointScore'
 import { finderTable, isWhole, scoreFinder, scoreSpans, spanTable } from './spanScore'
-
-const percent = (part: number, whole = 1) => `${(100 * part / Math.max(1, whole)).toFixed(1)} %`
-
-function table(title: string, score: Score): string {
-  return [
-    `${title.padEnd(36)}lists   right   two kinds`,
-    ...score.rows.map(row => `${row.family.padEnd(34)}${String(row.lists).padStart(7)}${percent(row.right, row.lists).padStart(9)}${String(row.doubled).padStart(9)}`),
-    '',
-    `right kind and frames, overall     ${percent(score.right, score.lists)} of ${score.lists}`,
-    `clean lists with any finding       ${percent(score.cleanFlagged)}`,
-    `one fault told under two kinds     ${percent(score.doubled)}`,
-  ].join('\n')
-}
-
-function sizes({ coverage, covered, medianSizeError }: Score): string {
-  // A share counted over so many lists is itself known to two of its own spreads.
-  const doubt = 2 * Math.sqrt(coverage * (1 - coverage) / Math.max(1, covered))
-  return `true size inside the 95 % interval ${percent(coverage)} of ${covered} (± ${percent(doubt)})\nmedian size error                  ${(100 * medianSizeError).toFixed(2)} %`
-}
+import { scoreTable, sizeLines } from './tally'
 
 const perSecond = ({ atMedian, overall, byProcessor }: Speed) =>
   `${atMedian.toFixed(0)} lists of 40 keys a second at the median, ${overall.toFixed(0)} over the mixture, ${byProcessor.toFixed(0)} by processor time`
@@ -40,10 +21,10 @@ const perSecond = ({ atMedian, overall, byProcessor }: Speed) =>
 /** The clock is only read here, never in the judge. */
 export default async function run(): Promise<void> {
   const lists = makeLists(2000, 7)
-  console.log(table('', scoreLists(lists)))
-  console.log(`\n${table('hard to tell', scoreLists(makeLists(460, 7, HARD)))}`)
-  console.log(`\n${table('claimed to start from rest', scoreLists(restLists(320, 7)))}`)
-  console.log(`\n${sizes(scoreLists(makeLists(2000, 11, SIZED)))}`)
+  console.log(scoreTable('readings', scoreLists(lists)))
+  console.log(`\n${scoreTable('hard to tell', scoreLists(makeLists(460, 7, HARD)))}`)
+  console.log(`\n${scoreTable('claimed to start from rest', scoreLists(restLists(320, 7)))}`)
+  console.log(`\n${sizeLines(scoreLists(makeLists(2000, 11, SIZED)))}`)
   const speed = speedOf(lists)
   console.log(`\nspeed                              ${perSecond(speed)}; 2,000 keys in ${speed.longListMs.toFixed(0)} ms`)
   console.log(`the same, claimed to start at rest ${perSecond(speedOf(lists, { start: 'rest' }))}`)
@@ -54,6 +35,7 @@ export default async function run(): Promise<void> {
   console.log(`\n${spanTable(scoreSpans(divided))}`)
   console.log(`\n${spanTable(scoreSpans(makePointSpans(24 * POINT_SPAN_ROUND, 7)))}`)
   console.log(`\n${finderTable(scoreFinder(divided, makeLists(480, 7).filter(isWhole)))}`)
-  console.log(`\n${pointTable(scorePoints(makePointLists(40 * POINT_PLAN.length, 7)))}`)
+  const points = scorePoints(makePointLists(40 * POINT_PLAN.length, 7))
+  console.log(`\n${scoreTable('points', points)}\n${sizeLines(points)}`)
   console.log(`\n${edgeTable(scoreEdge(makeEdgeLists(950, 7)))}`)
 }

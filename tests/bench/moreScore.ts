@@ -3,8 +3,7 @@ import { judge } from '../../utils/motion'
 import type { ReadingCheck } from '../../utils/motion'
 import { scoreLists } from './judgeScore'
 import type { MoreList } from './lists/moreLaws'
-
-const percent = (share: number) => `${(100 * share).toFixed(1)} %`
+import { percent, scoreTable, sizeLines } from './tally'
 
 /** Clean lists by what they should tell: how many, and of how many the 95 % interval holds the truth. */
 function figuresOf(lists: readonly MoreList[]): Map<string, { told: number, held: number }> {
@@ -24,13 +23,7 @@ function figuresOf(lists: readonly MoreList[]): Map<string, { told: number, held
 export function moreTable(lists: readonly MoreList[]): string {
   const score = scoreLists(lists)
   return [
-    'further laws                    lists   right   two kinds',
-    ...score.rows.map(row => `${row.family.padEnd(30)}${String(row.lists).padStart(7)}${percent(row.right / row.lists).padStart(9)}${String(row.doubled).padStart(9)}`),
-    '',
-    `right kind and frames, overall     ${percent(score.right / score.lists)} of ${score.lists}`,
-    `clean lists with any finding       ${percent(score.cleanFlagged)}`,
-    `one fault told under two kinds     ${percent(score.doubled)}`,
-    `true size inside the 95 % interval ${percent(score.coverage)} of ${score.covered}`,
-    ...[...figuresOf(lists)].map(([kind, { told, held }]) => `true ${kind} inside its interval`.padEnd(35) + `${percent(held / told)} of ${told}`),
+    scoreTable('further laws', score), sizeLines(score),
+    ...[...figuresOf(lists)].map(([kind, { told, held }]) => `true ${kind} inside its interval`.padEnd(35) + `${percent(held, told)} of ${told}`),
   ].join('\n')
 }
