@@ -3,6 +3,7 @@ import { judge } from '../../utils/motion'
 import type { ReadingCheck } from '../../utils/motion'
 import type { MadeList } from './lists/made'
 import { sizeByLibrary } from './lmFit'
+import { median } from './tally'
 
 function timed(work: () => void): number {
   const from = performance.now()
@@ -17,8 +18,6 @@ function worked(work: () => void): number {
   const { user, system } = process.cpuUsage(before)
   return (user + system) / 1000
 }
-
-const median = (values: number[]) => values.sort((a, b) => a - b)[values.length >> 1] ?? NaN
 
 function longList(faulty: boolean): ReadingCheck {
   // A pendulum over many swings, from the small-swing sum: what counts here is its length.

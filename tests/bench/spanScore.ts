@@ -4,6 +4,7 @@ import type { CheckResult } from '../../utils/motion'
 import type { MadeList } from './lists/make'
 import type { MadePointSpans } from './lists/makePointSpans'
 import type { MadeSpans } from './lists/makeSpans'
+import { percent } from './tally'
 
 type Divided = MadeSpans | MadePointSpans
 
@@ -95,8 +96,6 @@ export function scoreFinder(lists: readonly MadeSpans[], wholes: readonly MadeLi
 
 /** Lists that one law explains, faults of single drawings aside. */
 export const isWhole = ({ truth: { kind } }: MadeList) => kind === 'clean' || kind === 'misplaced' || kind === 'held' || kind === 'skipped' || kind === 'wrong-scale'
-
-const percent = (part: number, whole: number) => `${(100 * part / Math.max(1, whole)).toFixed(1)} %`
 
 /** The score of divided lists in words. */
 export function spanTable({ rows, right, lists, cleanFlagged }: SpanScore): string {
